@@ -1,1 +1,9 @@
-export {};
+export * from './accounts.js';
+export * from './common.js';
+export * from './cosmology.js';
+export * from './distances.js';
+export * from './errors.js';
+export * from './facilities.js';
+export * from './people.js';
+export * from './permissions.js';
+export * from './semesters.js';
