@@ -41,8 +41,17 @@ export const Overheads = z
   })
   .meta({ id: 'Overheads' });
 
+/** Where the sky level under the source is measured; it decides how much the background noise grows. */
+export const SkySubtraction = z.discriminatedUnion('kind', [
+  z.object({ kind: z.literal('wideArea') }),
+  z.object({ kind: z.literal('annulus'), backgroundPixelRatio: z.number().gt(0).max(1e6) }),
+  z.object({ kind: z.literal('ditheredFrames') }),
+]);
+
 const modeBase = {
-  bandLabel: line(40),
+  /** Short name of the band or disperser, such as `J` or `red`. */
+  bandId: line(20),
+  label: line(60),
   wavelengthLowNm: z.number().min(90).max(1e6),
   wavelengthHighNm: z.number().min(90).max(1e6),
   /** Everything between the telescope's aperture and the counted electron, without atmosphere and aperture or slit losses. */
@@ -54,8 +63,15 @@ const modeBase = {
     bright: z.number().min(0).max(30),
   }),
   detector: Detector,
-  limits: ExposureLimits,
+  exposureLimits: ExposureLimits,
   overheads: Overheads,
+  /** Blur of telescope and instrument, added in quadrature to the atmosphere's. */
+  imageQualityFwhmArcsec: z.number().min(0).max(10).optional(),
+  skySubtraction: SkySubtraction.optional(),
+  /** Fewest exposures in a series; by default 1, or 5 where the sky comes from dithered frames. */
+  minimumExposureCount: z.int().min(1).max(1000).optional(),
+  /** Error that no exposure time removes, as a fraction of the signal. */
+  systematicErrorFraction: z.number().min(0).max(1).optional(),
 };
 
 export const ImagingMode = z.object({ kind: z.literal('imaging'), ...modeBase }).meta({ id: 'ImagingMode' });
@@ -86,10 +102,10 @@ export const ModeConfigurationInput = ModeConfiguration.superRefine((mode, conte
       message: 'The upper wavelength must lie above the lower one.',
     });
   }
-  if (mode.limits.maximumExposureSeconds < mode.limits.minimumExposureSeconds) {
+  if (mode.exposureLimits.maximumExposureSeconds < mode.exposureLimits.minimumExposureSeconds) {
     context.addIssue({
       code: 'custom',
-      path: ['limits', 'maximumExposureSeconds'],
+      path: ['exposureLimits', 'maximumExposureSeconds'],
       message: 'The longest exposure must not be shorter than the shortest.',
     });
   }
