@@ -20,5 +20,8 @@ export const changes = pgTable(
     /** Field by field: `{ redshift: { before: 6.1, after: 6.2 } }`. */
     details: jsonb('details').$type<Record<string, { before: unknown; after: unknown }>>().notNull(),
   },
-  (table) => [index('changes_scope').on(table.scope, table.scopeId, table.at), index('changes_subject').on(table.subject, table.subjectId)],
+  (table) => [
+    index('changes_scope').on(table.scope, table.scopeId, table.at),
+    index('changes_subject').on(table.subject, table.subjectId),
+  ],
 );

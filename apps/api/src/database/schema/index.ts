@@ -1,4 +1,5 @@
 export * from './accounts.js';
+export * from './assignments.js';
 export * from './awards.js';
 export * from './facilities.js';
 export * from './history.js';

@@ -1,6 +1,17 @@
 import type { CaseSectionId, CosmologyChoice, ProposalState, TeamAccess } from '@faintward/contracts';
 import { sql } from 'drizzle-orm';
-import { boolean, index, integer, jsonb, pgTable, primaryKey, text, unique, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import {
+  boolean,
+  index,
+  integer,
+  jsonb,
+  pgTable,
+  primaryKey,
+  text,
+  unique,
+  uniqueIndex,
+  uuid,
+} from 'drizzle-orm/pg-core';
 import { createdAt, instant, primaryId, updatedAt, version } from './columns.js';
 import { panels } from './panels.js';
 import { partners, people } from './people.js';
@@ -17,7 +28,10 @@ export const proposals = pgTable(
     number: integer('number').notNull(),
     title: text('title').notNull(),
     abstract: text('abstract').notNull().default(''),
-    keywords: text('keywords').array().notNull().default(sql`'{}'::text[]`),
+    keywords: text('keywords')
+      .array()
+      .notNull()
+      .default(sql`'{}'::text[]`),
     state: text('state').$type<ProposalState>().notNull().default('draft'),
     panelId: uuid('panel_id').references(() => panels.id),
     partnerId: uuid('partner_id').references(() => partners.id),

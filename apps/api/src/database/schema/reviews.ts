@@ -25,5 +25,8 @@ export const reviews = pgTable(
     updatedAt: updatedAt(),
     version: version(),
   },
-  (table) => [unique('reviews_unique').on(table.proposalId, table.personId), index('reviews_person').on(table.personId)],
+  (table) => [
+    unique('reviews_unique').on(table.proposalId, table.personId),
+    index('reviews_person').on(table.personId),
+  ],
 );
