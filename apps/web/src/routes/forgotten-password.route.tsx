@@ -1,0 +1,3 @@
+import { placeholder } from './placeholder';
+
+export const Component = placeholder('Forgotten password');

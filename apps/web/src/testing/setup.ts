@@ -1,0 +1,30 @@
+import '@testing-library/jest-dom/vitest';
+import { cleanup } from '@testing-library/react';
+import { afterEach, beforeEach, vi } from 'vitest';
+
+beforeEach(() => {
+  // No test reaches a network: each says what the server answers, and an unexpected request fails.
+  vi.stubGlobal('fetch', (input: RequestInfo | URL) =>
+    Promise.reject(new Error(`Unexpected request: ${input instanceof Request ? input.url : String(input)}`)),
+  );
+  localStorage.clear();
+});
+
+afterEach(() => {
+  cleanup();
+  vi.unstubAllGlobals();
+  vi.restoreAllMocks();
+});
+
+// jsdom draws nothing and so has no media queries.
+window.matchMedia ??= (query: string) =>
+  ({
+    matches: false,
+    media: query,
+    onchange: null,
+    addEventListener: () => undefined,
+    removeEventListener: () => undefined,
+    addListener: () => undefined,
+    removeListener: () => undefined,
+    dispatchEvent: () => false,
+  }) satisfies MediaQueryList;

@@ -1,0 +1,165 @@
+import Checkbox from '@mui/material/Checkbox';
+import FormControlLabel from '@mui/material/FormControlLabel';
+import InputAdornment from '@mui/material/InputAdornment';
+import MenuItem from '@mui/material/MenuItem';
+import MuiTextField, { type TextFieldProps as MuiTextFieldProps } from '@mui/material/TextField';
+import { useState, type ReactNode } from 'react';
+import { useController, type Control, type FieldPath, type FieldValues } from 'react-hook-form';
+import { parseNumber } from './parseNumber';
+
+interface Bound<Values extends FieldValues> {
+  /** From `useZodForm`; the second and third type parameters do not matter to a field. */
+  // eslint-disable-next-line @typescript-eslint/no-explicit-any -- react-hook-form's Control is invariant in its context and output
+  control: Control<Values, any, any>;
+  name: FieldPath<Values>;
+}
+type Rest = Omit<
+  MuiTextFieldProps,
+  'name' | 'value' | 'onChange' | 'onBlur' | 'error' | 'select' | 'type' | 'defaultValue'
+>;
+
+export interface TextFieldProps<Values extends FieldValues> extends Bound<Values>, Rest {
+  type?: 'text' | 'email' | 'password' | 'url';
+  autoComplete?: string;
+}
+
+/** A text field of a form: its error, else its hint, beneath it. */
+export function TextField<Values extends FieldValues>({
+  control,
+  name,
+  helperText,
+  slotProps,
+  type = 'text',
+  ...rest
+}: TextFieldProps<Values>) {
+  const { field, fieldState } = useController({ control, name });
+  return (
+    <MuiTextField
+      {...rest}
+      type={type}
+      name={field.name}
+      value={field.value ?? ''}
+      onChange={field.onChange}
+      onBlur={field.onBlur}
+      error={fieldState.invalid}
+      helperText={fieldState.error?.message ?? helperText}
+      slotProps={{ ...slotProps, htmlInput: { ...slotProps?.htmlInput, ref: field.ref } }}
+    />
+  );
+}
+
+export interface NumberFieldProps<Values extends FieldValues> extends Bound<Values>, Rest {
+  unit?: ReactNode;
+}
+
+/**
+ * A number with its unit. Holds a number, or null when empty; text that is no number stays in the form as it was typed,
+ * so that the schema says what is wrong and nothing is lost. Takes a true minus and powers of ten such as 2e-17.
+ */
+export function NumberField<Values extends FieldValues>({
+  control,
+  name,
+  unit,
+  helperText,
+  slotProps,
+  ...rest
+}: NumberFieldProps<Values>) {
+  const { field, fieldState } = useController({ control, name });
+  const value: unknown = field.value;
+  const [text, setText] = useState(toText(value));
+  const [seen, setSeen] = useState<unknown>(value);
+  if (!Object.is(value, seen)) {
+    // Set from outside (reset, another's change): show it; but leave "1.50" alone while 1.5 is what it means.
+    setSeen(value);
+    if (!Object.is(parseNumber(text), value)) setText(toText(value));
+  }
+  return (
+    <MuiTextField
+      {...rest}
+      name={field.name}
+      value={text}
+      onChange={(event) => {
+        const next = parseNumber(event.target.value);
+        setText(event.target.value);
+        setSeen(next);
+        field.onChange(next);
+      }}
+      onBlur={field.onBlur}
+      error={fieldState.invalid}
+      helperText={fieldState.error?.message ?? helperText}
+      slotProps={{
+        ...slotProps,
+        htmlInput: { inputMode: 'decimal', style: { textAlign: 'right' }, ...slotProps?.htmlInput, ref: field.ref },
+        input: {
+          ...(unit ? { endAdornment: <InputAdornment position="end">{unit}</InputAdornment> } : {}),
+          ...slotProps?.input,
+        },
+      }}
+    />
+  );
+}
+
+function toText(value: unknown): string {
+  return value == null ? '' : String(value).replace(/^-/, '−');
+}
+
+export interface SelectFieldProps<Values extends FieldValues> extends Bound<Values>, Rest {
+  options: readonly { value: string; label: string; disabled?: boolean }[];
+}
+
+/** A choice among a few. */
+export function SelectField<Values extends FieldValues>({
+  control,
+  name,
+  options,
+  helperText,
+  slotProps,
+  ...rest
+}: SelectFieldProps<Values>) {
+  const { field, fieldState } = useController({ control, name });
+  return (
+    <MuiTextField
+      {...rest}
+      select
+      name={field.name}
+      value={field.value ?? ''}
+      onChange={field.onChange}
+      onBlur={field.onBlur}
+      inputRef={field.ref}
+      error={fieldState.invalid}
+      helperText={fieldState.error?.message ?? helperText}
+      slotProps={slotProps}
+    >
+      {options.map((option) => (
+        <MenuItem key={option.value} value={option.value} disabled={option.disabled ?? false}>
+          {option.label}
+        </MenuItem>
+      ))}
+    </MuiTextField>
+  );
+}
+
+/** A yes or no. */
+export function CheckboxField<Values extends FieldValues>({
+  control,
+  name,
+  label,
+  disabled = false,
+}: Bound<Values> & { label: ReactNode; disabled?: boolean }) {
+  const { field } = useController({ control, name });
+  return (
+    <FormControlLabel
+      label={label}
+      disabled={disabled}
+      control={
+        <Checkbox
+          name={field.name}
+          checked={Boolean(field.value)}
+          onChange={(_event, checked) => field.onChange(checked)}
+          onBlur={field.onBlur}
+          slotProps={{ input: { ref: field.ref } }}
+        />
+      }
+    />
+  );
+}
