@@ -1,0 +1,112 @@
+import { Injectable } from '@nestjs/common';
+import { and, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/pg-core';
+import { conflicts } from '../../database/schema/assignments.js';
+import { panelMembers } from '../../database/schema/panels.js';
+import { people } from '../../database/schema/people.js';
+import { proposalMembers, proposals } from '../../database/schema/proposals.js';
+import { DatabaseService } from '../../database/transaction.js';
+
+const teamPeople = alias(people, 'team_people');
+
+@Injectable()
+export class ConflictsQueries {
+  constructor(private readonly database: DatabaseService) {}
+
+  /**
+   * Stores the conflicts that the rules find between members of a panel and its proposals: being on the team, or belonging
+   * to the institution of anybody on it. A conflict that is stored already, withdrawn or not, stays as it is.
+   *
+   * @param condition which proposals
+   * @returns the new ones
+   */
+  async insertFound(
+    condition: SQL,
+  ): Promise<{ proposalId: string; personId: string; kind: 'team' | 'institution' | 'declared' }[]> {
+    const db = this.database.current();
+    const onTeam = await db
+      .selectDistinct({ proposalId: proposals.id, personId: panelMembers.personId })
+      .from(proposals)
+      .innerJoin(panelMembers, eq(panelMembers.panelId, proposals.panelId))
+      .innerJoin(
+        proposalMembers,
+        and(eq(proposalMembers.proposalId, proposals.id), eq(proposalMembers.personId, panelMembers.personId)),
+      )
+      .where(condition);
+    const sameInstitution = await db
+      .selectDistinct({ proposalId: proposals.id, personId: panelMembers.personId })
+      .from(proposals)
+      .innerJoin(panelMembers, eq(panelMembers.panelId, proposals.panelId))
+      .innerJoin(people, eq(people.id, panelMembers.personId))
+      .innerJoin(proposalMembers, eq(proposalMembers.proposalId, proposals.id))
+      .innerJoin(
+        teamPeople,
+        and(
+          eq(teamPeople.id, proposalMembers.personId),
+          eq(teamPeople.institutionId, people.institutionId),
+          sql`${teamPeople.id} <> ${people.id}`,
+        ),
+      )
+      .where(and(condition, isNotNull(people.institutionId)));
+    const found = [
+      ...onTeam.map((row) => ({ ...row, kind: 'team' as const, reason: 'On the team of the proposal.' })),
+      ...sameInstitution.map((row) => ({
+        ...row,
+        kind: 'institution' as const,
+        reason: 'Same institution as somebody on the team.',
+      })),
+    ];
+    if (found.length === 0) return [];
+    return db
+      .insert(conflicts)
+      .values(found)
+      .onConflictDoNothing()
+      .returning({ proposalId: conflicts.proposalId, personId: conflicts.personId, kind: conflicts.kind });
+  }
+
+  async declare(proposalId: string, personId: string, reason: string): Promise<void> {
+    await this.database
+      .current()
+      .insert(conflicts)
+      .values({ proposalId, personId, kind: 'declared', reason })
+      .onConflictDoUpdate({
+        target: [conflicts.proposalId, conflicts.personId, conflicts.kind],
+        set: { reason, withdrawnAt: null },
+      });
+  }
+
+  async panelOfProposal(proposalId: string): Promise<string | null> {
+    const [row] = await this.database
+      .current()
+      .select({ panelId: proposals.panelId })
+      .from(proposals)
+      .where(eq(proposals.id, proposalId));
+    return row?.panelId ?? null;
+  }
+
+  /** Pairs of person and proposal of a panel that must be kept apart. */
+  async listOfPanel(panelId: string): Promise<{ proposalId: string; personId: string }[]> {
+    return this.database
+      .current()
+      .select({ proposalId: proposals.id, personId: panelMembers.personId })
+      .from(proposals)
+      .innerJoin(panelMembers, eq(panelMembers.panelId, proposals.panelId))
+      .where(and(eq(proposals.panelId, panelId), isNull(proposals.deletedAt), isConflicted(panelMembers.personId)));
+  }
+}
+
+/**
+ * Condition on `proposals`: this person has a conflict with the proposal. Being on the team counts even where nobody has
+ * stored it yet, and cannot be withdrawn. Every query that shows a committee anything of a proposal carries its negation.
+ */
+export function isConflicted(personId: SQL | string | typeof panelMembers.personId): SQL {
+  return sql`(exists (select 1 from ${conflicts} where ${conflicts.proposalId} = ${proposals.id}
+      and ${conflicts.personId} = ${personId} and ${conflicts.withdrawnAt} is null)
+    or exists (select 1 from ${proposalMembers} where ${proposalMembers.proposalId} = ${proposals.id}
+      and ${proposalMembers.personId} = ${personId}))`;
+}
+
+/** Condition on `proposals`: this person has no conflict with the proposal. */
+export function isFreeOfConflict(personId: SQL | string | typeof panelMembers.personId): SQL {
+  return sql`not ${isConflicted(personId)}`;
+}
