@@ -221,7 +221,7 @@ interface Candidate extends ColumnGuess {
 /**
  * Which column means what, from the header and a sample of the cells.
  *
- * The header decides; cells can confirm it, contradict it (a column "z" full of 22s is a magnitude, not a redshift; "dec" full of months is nothing),
+ * The header decides; cells can confirm it, lower the confidence, settle an ambiguous header (a column "z" full of 22s is a magnitude, not a redshift),
  * or, in a list without a header, suggest the name and the two coordinates. The result is a proposal for a person to confirm: nothing is converted.
  *
  * @param columns header texts, one per column
@@ -274,9 +274,10 @@ function guessesFromHeader(column: string, columnIndex: number, cells: readonly 
     const rank = headerWords[role].indexOf(word);
     if (rank === -1) continue;
     const fit = cellsFit(role, cells);
-    if (fit === 'contradicts') continue;
-    const clear = word.length > 1 || role !== 'redshift';
-    const confidence = clear ? (fit === 'agrees' ? 1 : 0.85) : fit === 'agrees' ? 0.9 : 0.6;
+    // One letter may be a photometric band as well; a word is believed, and its odd cells are shown as errors later.
+    const isAmbiguous = word === 'z';
+    if (isAmbiguous && fit === 'contradicts') continue;
+    const confidence = confidenceOf(fit, isAmbiguous);
     found.push({ columnIndex, role, rank, confidence, ...(unit === undefined ? {} : { unit }) });
   }
   // A bare photometric band letter as header, or "z" that holds magnitudes.
@@ -284,6 +285,17 @@ function guessesFromHeader(column: string, columnIndex: number, cells: readonly 
     found.push({ columnIndex, role: 'magnitude', rank: 90, confidence: 0.6, ...(unit === undefined ? {} : { unit }) });
   }
   return found;
+}
+
+function confidenceOf(fit: Fit, isAmbiguous: boolean): number {
+  switch (fit) {
+    case 'agrees':
+      return isAmbiguous ? 0.9 : 1;
+    case 'silent':
+      return isAmbiguous ? 0.6 : 0.85;
+    case 'contradicts':
+      return 0.55;
+  }
 }
 
 /** One column per role and one role per column, the most confident first; among equals the commoner word, then the earlier column. */

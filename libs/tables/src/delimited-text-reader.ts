@@ -81,6 +81,8 @@ export function readDelimitedText(text: string, options: ReadDelimitedTextOption
   const delimiter = options.delimiter ?? detectDelimiter(body);
   const issues: RowIssue[] = [];
   const records = readRecords(body, delimiter, comments.length, limits, issues);
+  if (records.length === 0)
+    throw new TableRefused('empty', 'There is no table in this text: all of its cells are empty.');
   const commentHeader = headerFromComment(comments, delimiter, records);
   const hasHeader = commentHeader !== undefined || firstRecordIsHeader(records, options.header ?? 'auto');
   const header = commentHeader ?? (hasHeader ? records.shift() : undefined);
@@ -92,9 +94,7 @@ export function readDelimitedText(text: string, options: ReadDelimitedTextOption
     );
   }
 
-  const columnCount = header
-    ? columnCountOf(header, records)
-    : Math.max(...records.map((record) => record.cells.length));
+  const columnCount = header ? columnCountOf(header, records) : widest(records);
   const columns = nameColumns(header, columnCount, issues);
   const rows = records.map((record) => fitToColumns(record, columnCount, issues));
   issues.sort((a, b) => a.row - b.row || (a.column ?? 0) - (b.column ?? 0));
@@ -106,6 +106,9 @@ interface Limits {
   readonly columns: number;
   readonly cellLength: number;
 }
+
+const lineFeed = 0x0a;
+const carriageReturn = 0x0d;
 
 function refuseBinary(text: string): void {
   const nul = text.indexOf('\0');
@@ -124,14 +127,14 @@ function refuseBinary(text: string): void {
 
 function splitLeadingComments(text: string): { comments: string[]; body: string } {
   const comments: string[] = [];
-  let start = 0;
-  while (text[start] === '#') {
-    let end = text.indexOf('\n', start);
-    if (end === -1) end = text.length;
-    comments.push(text.slice(start, end).replace(/\r$/, ''));
-    start = end + 1;
+  let body = text;
+  while (body.startsWith('#')) {
+    const end = body.search(/[\r\n]/);
+    comments.push(end === -1 ? body : body.slice(0, end));
+    if (end === -1) return { comments, body: '' };
+    body = body.slice(body.startsWith('\r\n', end) ? end + 2 : end + 1);
   }
-  return { comments, body: text.slice(start) };
+  return { comments, body };
 }
 
 function readRecords(
@@ -146,7 +149,7 @@ function readRecords(
   let row = precedingRows;
   const take = (rawCells: readonly string[]): void => {
     row += 1;
-    const cells = rawCells.map((cell) => restoreDefused(cell.trim()));
+    const cells = rawCells.map((cell) => cell.trim());
     while (cells.at(-1) === '') cells.pop();
     if (cells.length === 0) return;
     if (cells.length > limits.columns) {
@@ -172,7 +175,7 @@ function readRecords(
       issues.push({ row, code: 'comment-row', message: `Row ${row} begins with # and is taken as a comment.` });
       return;
     }
-    records.push({ row, cells, writtenCellCount: rawCells.length });
+    records.push({ row, cells: cells.map(restoreDefused), writtenCellCount: rawCells.length });
     // One more than allowed, since the first may turn out to be the header.
     if (records.length > limits.rows + 1) {
       throw new TableRefused(
@@ -213,27 +216,24 @@ function maxRowCharacters(limits: Limits): number {
 function refuseLongLines(body: string, limits: Limits, precedingRows: number): void {
   const longest = maxRowCharacters(limits);
   let start = 0;
-  let line = precedingRows;
-  while (start < body.length) {
-    line += 1;
-    const end = endOfLine(body, start);
-    if (end - start > longest) {
+  let line = precedingRows + 1;
+  for (let index = 0; index < body.length; index += 1) {
+    const character = body.charCodeAt(index);
+    if (character === lineFeed || character === carriageReturn) {
+      if (character === lineFeed && body.charCodeAt(index - 1) !== carriageReturn) line += 1;
+      if (character === carriageReturn) line += 1;
+      start = index + 1;
+    } else if (index - start >= longest) {
       throw new TableRefused(
         'row-too-long',
-        `Line ${line} has ${end - start} characters; at most ${longest} are read in a row.`,
-        { row: line, limit: longest },
+        `Line ${line} has more than ${longest} characters, the most that is read in a row.`,
+        {
+          row: line,
+          limit: longest,
+        },
       );
     }
-    start = end + 1;
   }
-}
-
-function endOfLine(text: string, start: number): number {
-  const feed = text.indexOf('\n', start);
-  const end = feed === -1 ? text.length : feed;
-  // Old text files end their lines with a carriage return alone.
-  const carriageReturn = text.slice(start, end).indexOf('\r');
-  return carriageReturn === -1 ? end : start + carriageReturn;
 }
 
 function refusalFrom(error: CsvError, rowsRead: number, limits: Limits): TableRefused {
@@ -263,9 +263,9 @@ function refusalFrom(error: CsvError, rowsRead: number, limits: Limits): TableRe
   );
 }
 
-/** The apostrophe that `writeDelimitedText` put before a cell that a spreadsheet would have computed. */
+/** Without the apostrophe that `writeDelimitedText` put before a cell that would have been computed or taken for a comment. */
 function restoreDefused(cell: string): string {
-  return /^'+[=+\-@\t\r＝＋－＠]/.test(cell) ? cell.slice(1) : cell;
+  return /^'+[=+\-@#\t\r＝＋－＠]/.test(cell) ? cell.slice(1) : cell;
 }
 
 function headerFromComment(
@@ -302,7 +302,11 @@ function columnCountOf(header: SourceRecord, records: readonly SourceRecord[]): 
   const named = header.cells.length;
   const wider = records.filter((record) => record.cells.length > named);
   if (records.length === 0 || wider.length < 0.8 * records.length) return named;
-  return Math.max(...wider.map((record) => record.cells.length));
+  return widest(wider);
+}
+
+function widest(records: readonly SourceRecord[]): number {
+  return records.reduce((most, record) => Math.max(most, record.cells.length), 0);
 }
 
 function nameColumns(header: SourceRecord | undefined, columnCount: number, issues: RowIssue[]): string[] {

@@ -11,7 +11,7 @@ export interface WriteDelimitedTextOptions {
 
 // What a spreadsheet program may take as the start of a formula; the last four are the full-width forms.
 const formulaStart = /^\s*[=+\-@\t\r＝＋－＠]/;
-const defusedStart = /^'+[=+\-@\t\r＝＋－＠]/;
+const defusedStart = /^'+[=+\-@#\t\r＝＋－＠]/;
 
 // A sign with a digit or point behind it and nothing in it that could compute or call: a number, a declination, or a remark that begins with a number.
 const signedNumber = /^[+-](?:\d|\.\d)(?:[^=+\-@|!()*/^&[\]{}<>;,\\]|(?<=\d\.?[eE])[+-](?=\d))*$/;
@@ -33,7 +33,7 @@ export function writeDelimitedText(
 ): string {
   const { delimiter = ',', lineEnd = '\r\n', byteOrderMark = false } = options;
   const line = (values: readonly CellValue[]): string =>
-    values.map((value) => writeCell(value, delimiter)).join(delimiter);
+    values.map((value, columnIndex) => writeCell(value, columnIndex, delimiter)).join(delimiter);
   const lines = [line(columns)];
   rows.forEach((row, index) => {
     if (row.length !== columns.length)
@@ -50,14 +50,15 @@ export function defuseFormula(text: string): string {
   return `'${text}`;
 }
 
-function writeCell(value: CellValue, delimiter: string): string {
+function writeCell(value: CellValue, columnIndex: number, delimiter: string): string {
   if (value === null || value === undefined) return '';
   if (typeof value === 'boolean') return value ? 'true' : 'false';
   if (typeof value === 'number') {
     if (!Number.isFinite(value)) throw new RangeError(`A table cell cannot hold ${value}; leave it empty instead.`);
     return String(value);
   }
-  const text = defuseFormula(value);
+  // A row that begins with # would be taken for a comment, by us and by other readers of tables.
+  const text = columnIndex === 0 && value.startsWith('#') ? `'${value}` : defuseFormula(value);
   const needsQuotes = text.includes(delimiter) || /["\r\n]/.test(text) || text !== text.trim();
   return needsQuotes ? `"${text.replaceAll('"', '""')}"` : text;
 }

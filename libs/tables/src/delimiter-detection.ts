@@ -5,6 +5,7 @@ export type Delimiter = ',' | ';' | '\t' | '|' | 'spaces';
 const candidates: readonly Exclude<Delimiter, 'spaces'>[] = ['\t', ';', '|', ','];
 
 const sampleLineCount = 200;
+const sampleCharacterCount = 100_000;
 const evenEnough = 0.8;
 
 /**
@@ -36,16 +37,11 @@ export function splitAtSpaces(line: string): string[] {
 }
 
 function firstLines(text: string, count: number): string[] {
-  const lines: string[] = [];
-  let start = 0;
-  while (lines.length < count && start < text.length) {
-    let end = text.indexOf('\n', start);
-    if (end === -1) end = text.length;
-    const line = text.slice(start, end).replace(/\r$/, '');
-    if (line.trim() !== '') lines.push(line);
-    start = end + 1;
-  }
-  return lines;
+  const beginning = text.slice(0, sampleCharacterCount);
+  const lines = beginning.split(/\r\n|\n|\r/);
+  // The last line may have been cut in the middle.
+  if (beginning.length < text.length && lines.length > 1) lines.pop();
+  return lines.filter((line) => line.trim() !== '').slice(0, count);
 }
 
 function countOutsideQuotes(line: string, delimiter: string): number {
