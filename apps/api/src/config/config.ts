@@ -45,6 +45,8 @@ export class Config {
   readonly databasePoolSize!: number;
   /** Signs access tokens. Several processes behind one address must share it. */
   readonly sessionSecret!: string;
+  /** True when the secret comes from the data folder rather than from SESSION_SECRET. */
+  readonly isSessionSecretKept!: boolean;
   /** Address people type, without a trailing slash; links in mail begin with it. */
   readonly publicUrl!: string;
   readonly smtpUrl!: string | undefined;
@@ -74,7 +76,9 @@ export class InvalidConfiguration extends Error {
  * @throws {InvalidConfiguration} naming every variable that is wrong, with what it should be
  */
 export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config {
-  const given = Object.fromEntries(Object.entries(environment).filter(([, value]) => value !== undefined && value !== ''));
+  const given = Object.fromEntries(
+    Object.entries(environment).filter(([, value]) => value !== undefined && value !== ''),
+  );
   const parsed = Environment.safeParse(given);
   if (!parsed.success) {
     const lines = parsed.error.issues.map((issue) => {
@@ -87,10 +91,9 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
   }
   const env = parsed.data;
   const dataDir = env.DATA_DIR === MEMORY_DATA_DIR ? MEMORY_DATA_DIR : path.resolve(env.DATA_DIR);
-  const publicUrl = (env.PUBLIC_URL ?? `http://${env.HOST.includes(':') ? `[${env.HOST}]` : env.HOST}:${env.PORT}`).replace(
-    /\/+$/,
-    '',
-  );
+  const publicUrl = (
+    env.PUBLIC_URL ?? `http://${env.HOST.includes(':') ? `[${env.HOST}]` : env.HOST}:${env.PORT}`
+  ).replace(/\/+$/, '');
   return new Config({
     host: env.HOST,
     port: env.PORT,
@@ -98,6 +101,7 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     databaseUrl: env.DATABASE_URL,
     databasePoolSize: env.DATABASE_POOL_SIZE,
     sessionSecret: env.SESSION_SECRET ?? keptSecret(dataDir),
+    isSessionSecretKept: env.SESSION_SECRET === undefined,
     publicUrl,
     smtpUrl: env.SMTP_URL,
     mailFrom: env.MAIL_FROM,

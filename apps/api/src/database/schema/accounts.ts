@@ -1,8 +1,6 @@
-import { sql } from 'drizzle-orm';
-import { index, integer, jsonb, pgTable, primaryKey, text, timestamp, uuid } from 'drizzle-orm/pg-core';
+import { index, integer, jsonb, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
+import { createdAt, instant, primaryId, updatedAt } from './columns.js';
 import { people } from './people.js';
-
-const instant = (name: string) => timestamp(name, { withTimezone: true, mode: 'date' });
 
 /**
  * One sign-in on one device. Access tokens name it, so that signing out, a changed password or a stolen token ends
@@ -11,13 +9,13 @@ const instant = (name: string) => timestamp(name, { withTimezone: true, mode: 'd
 export const sessions = pgTable(
   'sessions',
   {
-    id: uuid('id').primaryKey().defaultRandom(),
+    id: primaryId(),
     personId: uuid('person_id')
       .notNull()
       .references(() => people.id, { onDelete: 'cascade' }),
-    createdAt: instant('created_at').notNull().defaultNow(),
+    createdAt: createdAt(),
     endedAt: instant('ended_at'),
-    endedBecause: text('ended_because', { enum: ['signed-out', 'token-reused', 'password-changed', 'roles-changed'] }),
+    endedBecause: text('ended_because', { enum: ['signed-out', 'token-reused', 'password-changed'] }),
   },
   (table) => [index('sessions_person_index').on(table.personId)],
 );
@@ -45,7 +43,7 @@ export const passwordResetTokens = pgTable(
     personId: uuid('person_id')
       .notNull()
       .references(() => people.id, { onDelete: 'cascade' }),
-    createdAt: instant('created_at').notNull().defaultNow(),
+    createdAt: createdAt(),
     expiresAt: instant('expires_at').notNull(),
     usedAt: instant('used_at'),
   },
@@ -64,7 +62,7 @@ export const idempotencyKeys = pgTable(
     requestHash: text('request_hash').notNull(),
     /** Null only inside the transaction that is doing the work. */
     response: jsonb('response'),
-    createdAt: instant('created_at').notNull().defaultNow(),
+    createdAt: createdAt(),
   },
   (table) => [
     primaryKey({ columns: [table.personId, table.route, table.key] }),
@@ -76,7 +74,7 @@ export const idempotencyKeys = pgTable(
 export const outgoingMail = pgTable(
   'outgoing_mail',
   {
-    id: uuid('id').primaryKey().defaultRandom(),
+    id: primaryId(),
     toAddress: text('to_address').notNull(),
     subject: text('subject').notNull(),
     textBody: text('text_body').notNull(),
@@ -86,7 +84,7 @@ export const outgoingMail = pgTable(
       .default('waiting'),
     attemptCount: integer('attempt_count').notNull().default(0),
     lastError: text('last_error'),
-    createdAt: instant('created_at').notNull().defaultNow(),
+    createdAt: createdAt(),
     sentAt: instant('sent_at'),
   },
   (table) => [index('outgoing_mail_created_index').on(table.createdAt)],
@@ -96,7 +94,7 @@ export const outgoingMail = pgTable(
 export const mailboxMessages = pgTable(
   'mailbox_messages',
   {
-    id: uuid('id').primaryKey().defaultRandom(),
+    id: primaryId(),
     toAddress: text('to_address').notNull(),
     subject: text('subject').notNull(),
     textBody: text('text_body').notNull(),
@@ -110,7 +108,5 @@ export const mailboxMessages = pgTable(
 export const installationFacts = pgTable('installation_facts', {
   name: text('name').primaryKey(),
   value: jsonb('value').notNull(),
-  updatedAt: instant('updated_at')
-    .notNull()
-    .default(sql`now()`),
+  updatedAt: updatedAt(),
 });

@@ -35,7 +35,11 @@ export const proposals = pgTable(
     state: text('state').$type<ProposalState>().notNull().default('draft'),
     panelId: uuid('panel_id').references(() => panels.id),
     partnerId: uuid('partner_id').references(() => partners.id),
-    cosmology: jsonb('cosmology').$type<CosmologyChoice>().notNull().default('planck18'),
+    cosmology: jsonb('cosmology')
+      .$type<CosmologyChoice>()
+      .notNull()
+      // Written out: the migration generator would leave the JSON quotes off a plain string.
+      .default(sql`'"planck18"'::jsonb`),
     createdAt: createdAt(),
     updatedAt: updatedAt(),
     /** Set while a deleted draft waits out its days of grace. */

@@ -1,0 +1,23 @@
+import { type DynamicModule, Module } from '@nestjs/common';
+import { Config } from './config/config.js';
+import { ConfigModule } from './config/config.module.js';
+import type { DatabaseHandle } from './database/connection.js';
+import { DatabaseModule } from './database/connection.module.js';
+import { AccountsModule } from './modules/accounts/accounts.module.js';
+import { AdministrationModule } from './modules/administration/administration.module.js';
+import { HealthModule } from './modules/health/health.module.js';
+import { PeopleModule } from './modules/people/people.module.js';
+import { PlatformModule } from './platform/platform.module.js';
+
+/** One line per subject, in alphabetical order. */
+const SUBJECTS = [AccountsModule, AdministrationModule, HealthModule, PeopleModule];
+
+@Module({})
+export class AppModule {
+  static register(config: Config, database: DatabaseHandle): DynamicModule {
+    return {
+      module: AppModule,
+      imports: [ConfigModule.register(config), DatabaseModule.register(database), PlatformModule, ...SUBJECTS],
+    };
+  }
+}

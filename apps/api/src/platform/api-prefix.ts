@@ -1,0 +1,2 @@
+/** Before every route of the api. */
+export const API_PREFIX = 'api/v1';
