@@ -7,7 +7,7 @@ import {
   SPEED_OF_LIGHT,
   STEFAN_BOLTZMANN,
 } from './constants.js';
-import { NoBigBangError } from './errors.js';
+import { InvalidCosmologyError, NoBigBangError } from './errors.js';
 import type { CompleteParameters } from './parameters.js';
 
 /** Exponent and mass coefficient of the neutrino fit, Komatsu et al. 2011, ApJS 192, 18, eq. 26. */
@@ -73,6 +73,11 @@ export interface Expansion {
   readonly omegaPhotons: number;
   /** Neutrinos today, massive ones included. */
   readonly omegaNeutrinos: number;
+  /**
+   * Smallest E² over the sum of the sizes of its terms, along the whole past: about 1 in ordinary models, small where the terms
+   * nearly cancel, and then E² has lost that many of its digits.
+   */
+  readonly leastPurity: number;
   /** E² = (H/H0)². */
   squaredRate(s: number): number;
   /** E = H/H0. */
@@ -87,6 +92,7 @@ export interface Expansion {
  * E(z)² = Ωm s³ + Ωk s² + (Ωγ + Ων) s⁴ + Ω_DE f(s), s = 1 + z.
  *
  * @throws {NoBigBangError} if E² is not positive at some s ≥ 1
+ * @throws {InvalidCosmologyError} if E² comes so close to zero that rounding decides about distances
  * @see Hogg 1999, astro-ph/9905116, eq. 14 (without radiation); Komatsu et al. 2011, eq. 26 (neutrinos)
  */
 export function createExpansion(parameters: CompleteParameters): Expansion {
@@ -108,7 +114,13 @@ export function createExpansion(parameters: CompleteParameters): Expansion {
     const darkEnergy = omegaDarkEnergy === 0 ? 0 : omegaDarkEnergy * growth(s);
     return s * s * (omegaCurvature + s * (omegaMatter + radiation)) + darkEnergy;
   };
+  const sizeOfTerms = (s: number): number =>
+    squaredRate(s) +
+    2 * Math.max(0, -omegaCurvature) * s * s +
+    2 * Math.max(0, omegaDarkEnergy === 0 ? 0 : -omegaDarkEnergy * growth(s));
+  const leastPurity = findLeastPurity(squaredRate, sizeOfTerms);
   const expansion: Expansion = {
+    leastPurity,
     omegaMatter,
     omegaDarkEnergy,
     omegaCurvature,
@@ -119,35 +131,48 @@ export function createExpansion(parameters: CompleteParameters): Expansion {
     neutrinoToPhotonRatio: ratio,
     darkEnergyGrowth: growth,
   };
-  refuseWithoutBigBang(squaredRate);
   return Object.freeze(expansion);
 }
 
 /** How far back, in ln(1 + z), the sign of E² is examined; the early universe is a pure power law long before. */
 const EXAMINED_LOG = 40;
 
-/** Looks for E² ≤ 0: on a grid much finer than anything in the Friedmann equation, then inside each dip of the grid. */
-function refuseWithoutBigBang(squaredRate: (s: number) => number): void {
-  // Divided by s² a curvature term is flat, and dips stand out.
-  const height = (x: number): number => squaredRate(Math.exp(x)) * Math.exp(-2 * x);
+/** Below this E² has no more than nine good digits left; distances would be worth less. */
+const PURITY_LIMIT = 1e-7;
+
+/** Looks for the deepest dip of E²: on a grid much finer than anything in the Friedmann equation, then inside each dip of the grid. */
+function findLeastPurity(squaredRate: (s: number) => number, sizeOfTerms: (s: number) => number): number {
+  const purity = (x: number): number => {
+    const s = Math.exp(x);
+    const value = squaredRate(s) / sizeOfTerms(s);
+    if (!(value > 0)) throw new NoBigBangError(Math.expm1(x));
+    return value;
+  };
   const step = 0.02;
-  let before = height(0);
+  let before = purity(0);
   let here = before;
+  let least = before;
   for (let x = 0; x <= EXAMINED_LOG; x += step) {
-    if (!(here > 0)) throw new NoBigBangError(Math.expm1(x));
-    const after = height(x + step);
+    const after = purity(x + step);
     if (here <= before && here <= after && here < 0.1) {
       let low = Math.max(0, x - step);
       let high = x + step;
       for (let i = 0; i < 60; i++) {
         const left = low + (high - low) / 3;
         const right = high - (high - low) / 3;
-        if (height(left) < height(right)) high = right;
+        if (purity(left) < purity(right)) high = right;
         else low = left;
       }
-      if (!(height(low) > 0)) throw new NoBigBangError(Math.expm1(low));
+      here = purity(low);
+      if (here < PURITY_LIMIT) {
+        throw new InvalidCosmologyError(
+          `this universe all but stands still at redshift ${Math.expm1(low).toPrecision(4)}; its distances cannot be computed`,
+        );
+      }
     }
+    least = Math.min(least, here);
     before = here;
     here = after;
   }
+  return least;
 }

@@ -1,8 +1,13 @@
 import { integrateAdaptively } from '@faintward/numerics';
 import type { Expansion } from './expansion.js';
 
-/** Wanted by the error estimate, which is pessimistic by several digits: true errors are at the level of rounding. */
-const TOLERANCE = { relativeTolerance: 1e-12 };
+/**
+ * Wanted by the error estimate, which is pessimistic by several digits: true errors are at the level of rounding. Where the
+ * terms of E² nearly cancel, what is left of its digits is all that can be asked.
+ */
+function tolerance(expansion: Expansion): { relativeTolerance: number } {
+  return { relativeTolerance: Math.max(1e-12, 1e-15 / expansion.leastPurity) };
+}
 
 /*
  * Integrals are taken in x = ln(1 + z): the integrands are then analytic in a strip of width π/3 or more about the real axis
@@ -18,17 +23,19 @@ export function comovingBetween(expansion: Expansion, x1: number, x2: number): n
     },
     x1,
     x2,
-    TOLERANCE,
+    tolerance(expansion),
   );
 }
 
 /** ∫ dz/((1+z)E) between two values of x = ln(1 + z), in units of the Hubble time. Hogg 1999, eq. 30. */
 export function timeBetween(expansion: Expansion, x1: number, x2: number): number {
-  return integrateAdaptively((x) => 1 / expansion.rate(Math.exp(x)), x1, x2, TOLERANCE);
+  return integrateAdaptively((x) => 1 / expansion.rate(Math.exp(x)), x1, x2, tolerance(expansion));
 }
 
-/** Where exp(x) comes near overflow. */
-const LAST_LOG = 700;
+/** Beyond this the fourth power of 1 + z would overflow. */
+const LAST_LOG = 170;
+/** A rate that still grows slower than this with ln(1 + z) will not make the age finite. */
+const SLOWEST_GROWTH = 1e-9;
 
 /**
  * Time from the big bang to x = ln(1 + z), in units of the Hubble time; Infinity if there was no beginning.
@@ -38,23 +45,22 @@ const LAST_LOG = 700;
  */
 export function timeSinceBigBang(expansion: Expansion, start: number): number {
   let total = 0;
-  let slopeBefore = Number.NaN;
-  let changeBefore = Number.NaN;
+  let slope = Number.NaN;
+  let change = Number.NaN;
   let rate = expansion.rate(Math.exp(start));
-  for (let x = start; x < LAST_LOG; x++) {
+  for (let x = start; x + 1 < LAST_LOG; x++) {
+    const slopeBefore = slope;
+    const changeBefore = change;
     total += timeBetween(expansion, x, x + 1);
     const rateAfter = expansion.rate(Math.exp(x + 1));
-    const slope = Math.log(rateAfter / rate);
-    const change = Math.abs(slope - slopeBefore);
-    const remainder = 1 / (slope * rateAfter);
-    if (slope > 0 && remainder < 1e-6 * total) {
-      const doubt = (Math.max(change, changeBefore) / slope) * remainder;
-      if (doubt < 1e-14 * total) return total + remainder;
-    }
-    if (rateAfter === Infinity) return total;
-    slopeBefore = slope;
-    changeBefore = change;
+    slope = Math.log(rateAfter / rate);
+    change = Math.abs(slope - slopeBefore);
     rate = rateAfter;
+    const remainder = 1 / (slope * rate);
+    // Two changes in a row, and a remainder that is small anyhow, so that one chance plateau of p does not end the sum.
+    const doubt = (Math.max(change, changeBefore) / slope) * remainder;
+    if (slope > 0 && remainder < 1e-6 * total && doubt < 1e-14 * total) return total + remainder;
   }
-  return Infinity;
+  // Still growing so slowly: by now one pure power, whose remainder is exact.
+  return slope > SLOWEST_GROWTH ? total + 1 / (slope * rate) : Infinity;
 }
