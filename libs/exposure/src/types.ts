@@ -273,6 +273,7 @@ export type StepId =
   | 'slit'
   | 'extraction'
   | 'solid-angle'
+  | 'goal-share'
   | 'collecting';
 
 /** A quantity that a step used, with its unit ('' for a pure number). */
@@ -354,7 +355,7 @@ export interface ExposureBound {
 export type WarningCode =
   | 'lymanAlphaInBand'
   | 'bandPartlyAbsorbed'
-  | 'sourceBelowSkyOnePercent'
+  | 'sourceFarBelowSky'
   | 'readNoiseLimited'
   | 'fewExposures'
   | 'nearSaturation'

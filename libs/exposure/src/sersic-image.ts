@@ -1,0 +1,196 @@
+/** What seeing makes of a Sérsic profile: how much of it an aperture holds, and how bright its central pixel is. */
+import {
+  findRoot,
+  gaussLegendreRule,
+  inverseRegularizedGammaP,
+  logGamma,
+  regularizedGammaP,
+} from '@faintward/numerics';
+import { OPTIMUM_RADIUS_OVER_FWHM } from './constants.js';
+import { GAUSSIAN_SIGMA_OVER_FWHM, gaussianEncircledFraction, gaussianPeakPixelFraction } from './point-spread.js';
+
+/** Below this R_e/FWHM (over the index, above n = 1) the image is taken for a Gaussian of the same half-light radius. */
+const GAUSSIAN_LIMIT = 0.2;
+/** From this R_e/FWHM on the shape of the profile alone decides the best aperture. */
+const RESOLVED_LIMIT = 2;
+
+/** Half-light radius after seeing: √(R_e² + (FWHM/2)²); within 4 % of the convolution for n = 1, 14 % for n = 4. */
+export function halfLightRadiusAfterSeeing(halfLightRadius: number, fwhm: number): number {
+  return Math.hypot(halfLightRadius, fwhm / 2);
+}
+
+/**
+ * Circular aperture that is near the best for a background-limited observation of a Sérsic profile in Gaussian seeing.
+ *
+ * 0.673 FWHM for a point source, growing with the half-light radius, towards the best radius of the unblurred profile
+ * (1.07 R_e for n = 1); never below that of a point source. S/N is flat around the best radius, so a few per cent do not
+ * matter.
+ *
+ * @param circularisedRadiusArcsec  R_e √q
+ */
+export function bestApertureRadiusArcsec(index: number, circularisedRadiusArcsec: number, fwhmArcsec: number): number {
+  const blend = smoothStep(
+    Math.log(circularisedRadiusArcsec / fwhmArcsec / GAUSSIAN_LIMIT) / Math.log(RESOLVED_LIMIT / GAUSSIAN_LIMIT),
+  );
+  // A Gaussian is the Sérsic profile of n = 0.5, so the index may slide between the two limits.
+  const blurredIndex = 0.5 + (index - 0.5) * blend;
+  const halfLight = halfLightRadiusAfterSeeing(circularisedRadiusArcsec, fwhmArcsec);
+  return Math.max(OPTIMUM_RADIUS_OVER_FWHM * fwhmArcsec, bestRadiusOverHalfLight(blurredIndex) * halfLight);
+}
+
+/**
+ * Fraction of a Sérsic profile inside a centred circle after convolution with a Gaussian.
+ *
+ * Resolved profiles: the light is cut into shells of equal light, and the part of each, displaced and blurred, that falls
+ * into the circle is added: within 0.2 % for 0.3 ≤ n ≤ 6, 1 % at n = 8. Nearly unresolved ones (R_e < FWHM/5, sooner for n > 1): a
+ * Gaussian with the half-light radius √(R_e² + (FWHM/2)²), which holds up to 3 % too much of the light at n = 1 and 6 %
+ * at n = 4; between that and twice that size the two are blended.
+ */
+export function enclosedFractionAfterSeeing(
+  index: number,
+  circularisedRadiusArcsec: number,
+  fwhmArcsec: number,
+  radiusArcsec: number,
+): number {
+  const blend = convolutionShare(index, circularisedRadiusArcsec / fwhmArcsec);
+  const gaussian = (): number =>
+    gaussianEncircledFraction(radiusArcsec / (2 * halfLightRadiusAfterSeeing(circularisedRadiusArcsec, fwhmArcsec)));
+  const sigma = fwhmArcsec * GAUSSIAN_SIGMA_OVER_FWHM;
+  const convolved = (): number => convolvedFraction(index, circularisedRadiusArcsec / sigma, radiusArcsec / sigma, 16);
+  return mix(blend, gaussian, convolved);
+}
+
+/** Fraction of the light in the pixel on the centre: a circle of the pixel's area where the profile is resolved. */
+export function peakPixelFractionAfterSeeing(
+  index: number,
+  circularisedRadiusArcsec: number,
+  fwhmArcsec: number,
+  pixelArcsec: number,
+): number {
+  const blend = convolutionShare(index, circularisedRadiusArcsec / fwhmArcsec);
+  const gaussian = (): number =>
+    gaussianPeakPixelFraction(pixelArcsec / (2 * halfLightRadiusAfterSeeing(circularisedRadiusArcsec, fwhmArcsec)));
+  const sigma = fwhmArcsec * GAUSSIAN_SIGMA_OVER_FWHM;
+  const convolved = (): number =>
+    convolvedFraction(index, circularisedRadiusArcsec / sigma, pixelArcsec / Math.sqrt(Math.PI) / sigma, 6);
+  return mix(blend, gaussian, convolved);
+}
+
+function convolutionShare(index: number, radiusOverFwhm: number): number {
+  const start = GAUSSIAN_LIMIT / Math.max(1, index);
+  return smoothStep(radiusOverFwhm / start - 1);
+}
+
+function mix(share: number, atZero: () => number, atOne: () => number): number {
+  if (share === 0) return atZero();
+  if (share === 1) return atOne();
+  return (1 - share) * atZero() + share * atOne();
+}
+
+/** 0 below 0, 1 above 1, 3t² − 2t³ between. */
+function smoothStep(t: number): number {
+  if (t <= 0) return 0;
+  if (t >= 1) return 1;
+  return t * t * (3 - 2 * t);
+}
+
+const SHELL_COUNT = 32;
+const shellsByIndex = new Map<number, Float64Array>();
+const MOST_CACHED_INDICES = 200;
+
+/** Radii over R_e at the Gauss–Legendre nodes of enclosed light, ascending. Kept per index: programmes use few of them. */
+function shellRadii(index: number): Float64Array {
+  const known = shellsByIndex.get(index);
+  if (known !== undefined) return known;
+  const b = inverseRegularizedGammaP(2 * index, 0.5);
+  const { nodes } = gaussLegendreRule(SHELL_COUNT);
+  const radii = nodes.map((node) => (inverseRegularizedGammaP(2 * index, (1 + node) / 2) / b) ** index);
+  if (shellsByIndex.size >= MOST_CACHED_INDICES) shellsByIndex.clear();
+  shellsByIndex.set(index, radii);
+  return radii;
+}
+
+function convolvedFraction(
+  index: number,
+  radiusOverSigma: number,
+  apertureOverSigma: number,
+  nodeCount: number,
+): number {
+  const radii = shellRadii(index);
+  const { weights } = gaussLegendreRule(SHELL_COUNT);
+  let sum = 0;
+  for (let i = 0; i < radii.length; i++) {
+    const share = displacedGaussianFraction((radii[i] ?? 0) * radiusOverSigma, apertureOverSigma, nodeCount);
+    // Shells come in order of radius: once one misses the aperture, all further ones do.
+    if (share === 0) break;
+    sum += (weights[i] ?? 0) * share;
+  }
+  return sum / 2;
+}
+
+/** Gaussians are cut off here; e^(−8²/2) is 1e-14. */
+const CUT_SIGMA = 8;
+
+/**
+ * Fraction of a two-dimensional Gaussian of σ = 1 inside a circle of radius a whose centre is b away:
+ * ∫₀ᵃ ρ e^(−(ρ−b)²/2) [e^(−ρb) I₀(ρb)] dρ (one minus Marcum's Q function).
+ */
+function displacedGaussianFraction(b: number, a: number, nodeCount: number): number {
+  const low = Math.max(0, b - CUT_SIGMA);
+  const high = Math.min(a, b + CUT_SIGMA);
+  if (high <= low) return 0;
+  const { nodes, weights } = gaussLegendreRule(nodeCount);
+  const middle = (low + high) / 2;
+  const half = (high - low) / 2;
+  let sum = 0;
+  for (let i = 0; i < nodes.length; i++) {
+    const rho = middle + half * (nodes[i] ?? 0);
+    const distance = rho - b;
+    sum += (weights[i] ?? 0) * rho * Math.exp(-0.5 * distance * distance) * scaledBesselI0(rho * b);
+  }
+  return Math.min(1, sum * half);
+}
+
+/** e^(−x) I₀(x) for x ≥ 0, within 2e-7. @see Abramowitz & Stegun 1964, 9.8.1 and 9.8.2 */
+function scaledBesselI0(x: number): number {
+  if (x < 3.75) {
+    const t = (x / 3.75) ** 2;
+    const series =
+      1 + t * (3.5156229 + t * (3.0899424 + t * (1.2067492 + t * (0.2659732 + t * (0.0360768 + t * 0.0045813)))));
+    return series * Math.exp(-x);
+  }
+  const t = 3.75 / x;
+  const tail = -0.02057706 + t * (0.02635537 + t * (-0.01647633 + t * 0.00392377));
+  return (
+    (0.39894228 + t * (0.01328592 + t * (0.00225319 + t * (-0.00157565 + t * (0.00916281 + t * tail))))) / Math.sqrt(x)
+  );
+}
+
+const TABLE_LOWEST_INDEX = 0.3;
+const TABLE_HIGHEST_INDEX = 8;
+const TABLE_INTERVALS = 64;
+let bestRadiusTable: Float64Array | undefined;
+
+/** Radius over R_e at which an unblurred Sérsic profile has its largest enclosed fraction over radius. */
+function bestRadiusOverHalfLight(index: number): number {
+  if (index === 0.5) return 2 * OPTIMUM_RADIUS_OVER_FWHM;
+  bestRadiusTable ??= Float64Array.from({ length: TABLE_INTERVALS + 1 }, (_, i) =>
+    solveBestRadius(TABLE_LOWEST_INDEX * (TABLE_HIGHEST_INDEX / TABLE_LOWEST_INDEX) ** (i / TABLE_INTERVALS)),
+  );
+  const position =
+    (TABLE_INTERVALS * Math.log(index / TABLE_LOWEST_INDEX)) / Math.log(TABLE_HIGHEST_INDEX / TABLE_LOWEST_INDEX);
+  const below = Math.min(TABLE_INTERVALS - 1, Math.max(0, Math.floor(position)));
+  const low = bestRadiusTable[below] ?? NaN;
+  const high = bestRadiusTable[below + 1] ?? NaN;
+  return low + (high - low) * (position - below);
+}
+
+function solveBestRadius(index: number): number {
+  const b = inverseRegularizedGammaP(2 * index, 0.5);
+  const logNorm = Math.log(index) + logGamma(2 * index);
+  const excess = (logRadius: number): number => {
+    const u = b * Math.exp(logRadius / index);
+    return Math.exp(2 * index * Math.log(u) - u - logNorm) - regularizedGammaP(2 * index, u);
+  };
+  return Math.exp(findRoot(excess, Math.log(1e-5), Math.log(5), { absoluteTolerance: 1e-9 }));
+}

@@ -1,0 +1,223 @@
+import { OutOfDomainError, SERSIC_INDEX_RANGE } from '@faintward/photometry';
+import { DITHER_MINIMUM_COUNT } from './constants.js';
+import type { EstimateInput, Extent, Goal, InstrumentMode, Target, TargetLight } from './types.js';
+
+/** Refuses a number outside [lowest, highest]; NaN and infinities always. */
+function inRange(field: string, value: number, lowest: number, highest: number, unit = ''): void {
+  if (typeof value !== 'number' || !(value >= lowest && value <= highest)) {
+    throw new OutOfDomainError(field, value, `between ${lowest} and ${highest}${unit === '' ? '' : ` ${unit}`}`);
+  }
+}
+
+function ordered(lowField: string, low: number, highField: string, high: number): void {
+  if (!(high > low)) throw new OutOfDomainError(highField, high, `above ${lowField} = ${low}`);
+}
+
+function unknownChoice(field: string, value: never, allowed: string): never {
+  throw new OutOfDomainError(field, value, allowed);
+}
+
+function whole(field: string, value: number, lowest: number, highest: number): void {
+  if (!Number.isInteger(value)) throw new OutOfDomainError(field, value, 'a whole number');
+  inRange(field, value, lowest, highest);
+}
+
+/** The faintest and brightest magnitudes that are taken seriously; keeps every later power of ten finite. */
+const MAGNITUDES = [-50, 60] as const;
+const SECONDS = [1e-6, 1e7] as const;
+
+/**
+ * Refuses an input in which some number could not be computed with, naming the field.
+ *
+ * Bounds are wide: they exclude nonsense, not unusual requests. What is sensible is said by warnings.
+ *
+ * @throws {OutOfDomainError}
+ */
+export function validateInput(input: EstimateInput): void {
+  validateTarget(input.target);
+  const { site, telescope, conditions, goal, mode, limits } = input;
+  inRange('site.zenithSeeingArcsec', site.zenithSeeingArcsec, 0.05, 10, 'arcsec');
+  if (site.outerScaleM !== undefined) inRange('site.outerScaleM', site.outerScaleM, 1, 1e4, 'm');
+  inRange('telescope.diameterM', telescope.diameterM, 0.01, 200, 'm');
+  inRange('telescope.obstructionDiameterM', telescope.obstructionDiameterM, 0, 200, 'm');
+  ordered('telescope.obstructionDiameterM', telescope.obstructionDiameterM, 'telescope.diameterM', telescope.diameterM);
+  if (conditions.seeingArcsec !== undefined)
+    inRange('conditions.seeingArcsec', conditions.seeingArcsec, 0.05, 10, 'arcsec');
+  inRange('conditions.airmass', conditions.airmass, 1, 10);
+  validateMode(mode);
+  validateGoal(goal, input);
+  if (limits?.maximumExposureCount !== undefined) {
+    whole('limits.maximumExposureCount', limits.maximumExposureCount, 1, 1e9);
+  }
+  if (limits?.maximumTotalSeconds !== undefined) {
+    inRange('limits.maximumTotalSeconds', limits.maximumTotalSeconds, 1, 1e10, 's');
+  }
+  if (input.apertureRadiusArcsec !== undefined) {
+    inRange('apertureRadiusArcsec', input.apertureRadiusArcsec, 1e-3, 1e4, 'arcsec');
+  }
+  if (input.wavelengthNm !== undefined) inRange('wavelengthNm', input.wavelengthNm, 100, 1e5, 'nm');
+}
+
+function validateTarget(target: Target): void {
+  const { light, extent } = target;
+  inRange('target.redshift', target.redshift, 0, 1100);
+  if (target.magnification !== undefined) inRange('target.magnification', target.magnification, 1e-6, 1e6);
+  validateLight(light);
+  validateExtent(extent);
+  const isIntrinsic = light.kind === 'absoluteMagnitude' || light.kind === 'lineLuminosity';
+  if (extent.kind === 'uniform' && isIntrinsic) {
+    throw new OutOfDomainError('target.light.kind', light.kind, 'an observed surface brightness for a uniform extent');
+  }
+  const needsDistance = isIntrinsic || (extent.kind === 'sersic' && extent.halfLightRadiusKpc !== undefined);
+  if (needsDistance && target.redshift === 0) {
+    throw new OutOfDomainError(
+      'target.redshift',
+      target.redshift,
+      'above 0 where a luminosity or a size in kpc is given',
+    );
+  }
+}
+
+function validateLight(light: TargetLight): void {
+  const at = 'target.light';
+  switch (light.kind) {
+    case 'apparentMagnitude':
+      inRange(`${at}.magnitudeAb`, light.magnitudeAb, ...MAGNITUDES);
+      if (light.wavelengthNm !== undefined) inRange(`${at}.wavelengthNm`, light.wavelengthNm, 1, 1e7, 'nm');
+      if (light.slopeBeta !== undefined) inRange(`${at}.slopeBeta`, light.slopeBeta, -10, 10);
+      return;
+    case 'absoluteMagnitude':
+      inRange(`${at}.absoluteMagnitudeAb`, light.absoluteMagnitudeAb, ...MAGNITUDES);
+      inRange(`${at}.restWavelengthNm`, light.restWavelengthNm, 1, 1e7, 'nm');
+      if (light.slopeBeta !== undefined) inRange(`${at}.slopeBeta`, light.slopeBeta, -10, 10);
+      return;
+    case 'lineFlux':
+      inRange(`${at}.lineFluxErgSCm2`, light.lineFluxErgSCm2, 1e-30, 1, 'erg/s/cm²');
+      break;
+    case 'lineLuminosity':
+      inRange(`${at}.lineLuminosityErgS`, light.lineLuminosityErgS, 1e20, 1e60, 'erg/s');
+      break;
+    default:
+      unknownChoice(`${at}.kind`, light, 'apparentMagnitude, absoluteMagnitude, lineFlux or lineLuminosity');
+  }
+  inRange(`${at}.restWavelengthNm`, light.restWavelengthNm, 1, 1e7, 'nm');
+  inRange(`${at}.intrinsicWidthKmS`, light.intrinsicWidthKmS, 0, 1e5, 'km/s');
+  if (light.continuumMagnitudeAb !== undefined) {
+    inRange(`${at}.continuumMagnitudeAb`, light.continuumMagnitudeAb, ...MAGNITUDES);
+  }
+}
+
+function validateExtent(extent: Extent): void {
+  const at = 'target.extent';
+  switch (extent.kind) {
+    case 'point':
+      return;
+    case 'uniform':
+      if (extent.areaArcsec2 !== undefined) inRange(`${at}.areaArcsec2`, extent.areaArcsec2, 1e-4, 1e8, 'arcsec²');
+      return;
+    case 'sersic': {
+      const { halfLightRadiusArcsec, halfLightRadiusKpc, index, axisRatio } = extent;
+      if ((halfLightRadiusArcsec === undefined) === (halfLightRadiusKpc === undefined)) {
+        throw new OutOfDomainError(
+          `${at}.halfLightRadiusArcsec`,
+          halfLightRadiusArcsec,
+          'given, or else halfLightRadiusKpc, not both',
+        );
+      }
+      if (halfLightRadiusArcsec !== undefined) {
+        inRange(`${at}.halfLightRadiusArcsec`, halfLightRadiusArcsec, 1e-5, 3600, 'arcsec');
+      }
+      if (halfLightRadiusKpc !== undefined) inRange(`${at}.halfLightRadiusKpc`, halfLightRadiusKpc, 1e-4, 1e3, 'kpc');
+      inRange(`${at}.index`, index, SERSIC_INDEX_RANGE.lowest, SERSIC_INDEX_RANGE.highest);
+      if (axisRatio !== undefined) inRange(`${at}.axisRatio`, axisRatio, 0.01, 1);
+      return;
+    }
+    default:
+      unknownChoice(`${at}.kind`, extent, 'point, sersic or uniform');
+  }
+}
+
+function validateMode(mode: InstrumentMode): void {
+  inRange('mode.wavelengthLowNm', mode.wavelengthLowNm, 100, 1e5, 'nm');
+  inRange('mode.wavelengthHighNm', mode.wavelengthHighNm, 100, 1e5, 'nm');
+  ordered('mode.wavelengthLowNm', mode.wavelengthLowNm, 'mode.wavelengthHighNm', mode.wavelengthHighNm);
+  inRange('mode.throughput', mode.throughput, 1e-6, 1);
+  inRange('mode.extinctionMagPerAirmass', mode.extinctionMagPerAirmass, 0, 10, 'mag');
+  for (const moonClass of ['dark', 'grey', 'bright'] as const) {
+    inRange(`mode.skyAbMagPerArcsec2.${moonClass}`, mode.skyAbMagPerArcsec2[moonClass], 0, 40, 'mag/arcsec²');
+  }
+  const { detector, exposureLimits, overheads } = mode;
+  inRange('mode.detector.pixelScaleArcsec', detector.pixelScaleArcsec, 1e-3, 100, 'arcsec');
+  inRange('mode.detector.darkElectronsPerSecond', detector.darkElectronsPerSecond, 0, 1e6, 'e⁻/s');
+  inRange('mode.detector.readNoiseElectrons', detector.readNoiseElectrons, 0, 1e5, 'e⁻');
+  inRange('mode.detector.fullWellElectrons', detector.fullWellElectrons, 1, 1e9, 'e⁻');
+  if (detector.gainElectronsPerAdu !== undefined) {
+    inRange('mode.detector.gainElectronsPerAdu', detector.gainElectronsPerAdu, 1e-4, 1e5, 'e⁻/ADU');
+  }
+  inRange('mode.exposureLimits.minimumExposureSeconds', exposureLimits.minimumExposureSeconds, ...SECONDS, 's');
+  inRange(
+    'mode.exposureLimits.maximumExposureSeconds',
+    exposureLimits.maximumExposureSeconds,
+    exposureLimits.minimumExposureSeconds,
+    SECONDS[1],
+    's',
+  );
+  for (const part of ['acquisitionSeconds', 'setupSeconds', 'readoutSeconds', 'ditherSeconds'] as const) {
+    inRange(`mode.overheads.${part}`, overheads[part], 0, 1e6, 's');
+  }
+  inRange('mode.overheads.maximumBlockSeconds', overheads.maximumBlockSeconds, 1, 1e7, 's');
+  if (mode.imageQualityFwhmArcsec !== undefined) {
+    inRange('mode.imageQualityFwhmArcsec', mode.imageQualityFwhmArcsec, 0, 30, 'arcsec');
+  }
+  if (mode.minimumExposureCount !== undefined) whole('mode.minimumExposureCount', mode.minimumExposureCount, 1, 1000);
+  if (mode.systematicErrorFraction !== undefined) {
+    inRange('mode.systematicErrorFraction', mode.systematicErrorFraction, 0, 1);
+  }
+  if (mode.skySubtraction?.kind === 'annulus') {
+    inRange('mode.skySubtraction.backgroundPixelRatio', mode.skySubtraction.backgroundPixelRatio, 0.01, 1e9);
+  }
+  if (mode.kind === 'slitSpectroscopy') {
+    inRange('mode.resolvingPower', mode.resolvingPower, 5, 1e6);
+    inRange('mode.slitWidthArcsec', mode.slitWidthArcsec, 0.01, 1000, 'arcsec');
+    inRange('mode.pixelsPerResolutionElement', mode.pixelsPerResolutionElement, 0.5, 100);
+    inRange('mode.extractionLengthFwhm', mode.extractionLengthFwhm, 0.1, 100);
+  }
+}
+
+function validateGoal(goal: Goal, input: EstimateInput): void {
+  const { mode, target } = input;
+  const { minimumExposureSeconds, maximumExposureSeconds } = mode.exposureLimits;
+  if (goal.exposureSeconds !== undefined) {
+    inRange('goal.exposureSeconds', goal.exposureSeconds, minimumExposureSeconds, maximumExposureSeconds, 's');
+  }
+  switch (goal.kind) {
+    case 'signalToNoise':
+      inRange('goal.value', goal.value, 0.01, 1e5);
+      break;
+    case 'lineSignificance':
+      inRange('goal.sigma', goal.sigma, 0.01, 1e5);
+      if (target.light.kind !== 'lineFlux' && target.light.kind !== 'lineLuminosity') {
+        throw new OutOfDomainError(
+          'goal.kind',
+          goal.kind,
+          'signalToNoise or exposureTime, unless the light is that of a line',
+        );
+      }
+      return;
+    case 'exposureTime':
+      whole('goal.exposureCount', goal.exposureCount, 1, 1e6);
+      if (mode.skySubtraction?.kind === 'ditheredFrames') {
+        inRange('goal.exposureCount', goal.exposureCount, DITHER_MINIMUM_COUNT.value, 1e6);
+      }
+      break;
+    default:
+      unknownChoice('goal.kind', goal, 'signalToNoise, lineSignificance or exposureTime');
+  }
+  const per = goal.per ?? 'aperture';
+  if (per === 'resolutionElement' && mode.kind === 'imaging') {
+    throw new OutOfDomainError('goal.per', per, 'aperture, arcsec2 or pixel for imaging');
+  }
+  if (per === 'arcsec2' && target.extent.kind === 'point') {
+    throw new OutOfDomainError('goal.per', per, 'aperture, pixel or resolutionElement for a point source');
+  }
+}
