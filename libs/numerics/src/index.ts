@@ -5,3 +5,7 @@ export { gaussLegendre, gaussLegendreRule, integrateAdaptively } from './quadrat
 export type { AdaptiveOptions, QuadratureRule } from './quadrature.js';
 export { findRoot, findRootWithDerivative } from './roots.js';
 export type { RootOptions } from './roots.js';
+export { intervalOf, linearInterpolant, monotoneCubicInterpolant } from './interpolation.js';
+export type { Interpolant } from './interpolation.js';
+export { chebyshevFit, chebyshevIntegral, chebyshevValue } from './chebyshev.js';
+export type { ChebyshevSeries } from './chebyshev.js';
