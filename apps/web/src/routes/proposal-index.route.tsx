@@ -1,3 +1,7 @@
-import { placeholder } from './placeholder';
+import { Navigate, useParams } from 'react-router-dom';
+import { paths } from '../app/paths';
 
-export const Component = placeholder('Proposal');
+/** A proposal opens at its first section. */
+export function Component() {
+  return <Navigate to={paths.proposalSection.to(useParams()['proposalId'] ?? '', 'targets')} replace />;
+}
