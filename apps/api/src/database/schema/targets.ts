@@ -22,6 +22,8 @@ export const targets = pgTable(
     notes: text('notes').notNull().default(''),
     /** What the engine made of it, with the versions it used; rewritten with every change of an input. */
     computed: jsonb('computed').$type<TargetComputed>().notNull(),
+    /** Name of the nearest other target of the list within 2″. Kept apart from `computed`, because other rows decide it. */
+    nearestDuplicateName: text('nearest_duplicate_name'),
     createdAt: createdAt(),
     updatedAt: updatedAt(),
     version: version(),

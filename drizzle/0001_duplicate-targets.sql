@@ -1,0 +1,1 @@
+ALTER TABLE "targets" ADD COLUMN "nearest_duplicate_name" text;
