@@ -19,7 +19,7 @@ import {
 } from './exposure-series.js';
 import { LightBudget } from './light-budget.js';
 import { TESTED_OUTER_SCALE_RATIO, deliveredSeeing } from './seeing.js';
-import { addSourceSteps, countedRange } from './source-light.js';
+import { addSourceSteps, countedRange, definedDistance } from './source-light.js';
 import type {
   Estimate,
   EstimateInput,
@@ -168,7 +168,8 @@ function imageOf({ target, cosmology }: EstimateInput): Image {
     case 'sersic': {
       const radiusArcsec =
         extent.halfLightRadiusArcsec ??
-        ((extent.halfLightRadiusKpc ?? NaN) / cosmology.kpcPerArcsec(target.redshift)) *
+        ((extent.halfLightRadiusKpc ?? NaN) /
+          definedDistance(cosmology.kpcPerArcsec(target.redshift), target.redshift)) *
           Math.sqrt(target.magnification ?? 1);
       return {
         kind: 'sersic',

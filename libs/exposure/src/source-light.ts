@@ -4,6 +4,7 @@ import {
   CM_PER_MPC,
   LYMAN_ALPHA_NM,
   LYMAN_LIMIT_NM,
+  OutOfDomainError,
   lensingMag,
   photonRateOfLinePerM2,
   powerLawColourMag,
@@ -161,8 +162,16 @@ export function addSourceSteps(
   return reason;
 }
 
+/** The input check keeps redshift 0 away from distances; a model may still have none of its own accord. */
+export function definedDistance(value: number | undefined, redshift: number): number {
+  if (value === undefined || !Number.isFinite(value)) {
+    throw new OutOfDomainError('target.redshift', redshift, 'a redshift at which the cosmology has a distance');
+  }
+  return value;
+}
+
 function addDistanceModulus(budget: LightBudget, redshift: number, cosmology: DistanceModel): void {
-  budget.add('distance-modulus', cosmology.distanceModulusMag(redshift), [
+  budget.add('distance-modulus', definedDistance(cosmology.distanceModulusMag(redshift), redshift), [
     stepInput('redshift', redshift),
     stepInput('luminosityDistanceMpc', cosmology.luminosityDistanceMpc(redshift), 'Mpc'),
   ]);

@@ -9,10 +9,10 @@
 export interface DistanceModel {
   /** Luminosity distance in Mpc. */
   luminosityDistanceMpc(redshift: number): number;
-  /** 5 log10(D_L / 10 pc) in magnitudes. */
-  distanceModulusMag(redshift: number): number;
-  /** Proper transverse scale in kpc per arcsecond. */
-  kpcPerArcsec(redshift: number): number;
+  /** 5 log10(D_L / 10 pc) in magnitudes; undefined at redshift 0. */
+  distanceModulusMag(redshift: number): number | undefined;
+  /** Proper transverse scale in kpc per arcsecond; undefined at redshift 0. */
+  kpcPerArcsec(redshift: number): number | undefined;
 }
 
 // ---------------------------------------------------------------------------------------------- where and with what
