@@ -10,7 +10,6 @@ import { counted } from '../../../lib/format';
 import { ConfirmDialog } from '../../../ui/ConfirmDialog';
 import { useNotices } from '../../../ui/Notices';
 import { Panel } from '../../../ui/Panel';
-import { ProblemDisplay } from '../../../ui/ProblemDisplay';
 import { TimeDisplay } from '../../../ui/TimeDisplay';
 import { useSubmitProposal, useWithdrawProposal } from '../api/proposals';
 import { describeHours } from './words';
