@@ -7,14 +7,17 @@ export default defineConfig({
     reporters: ['default', './tests/closing-line.ts'],
     allowOnly: false,
     projects: [
-      { extends: true, test: { name: 'libs', include: ['libs/*/src/**/*.test.ts', 'tests/architecture/**/*.test.ts'] } },
+      {
+        extends: true,
+        test: { name: 'libs', include: ['libs/*/src/**/*.test.ts', 'tests/architecture/**/*.test.ts'] },
+      },
       {
         extends: true,
         // oxc takes decorator options from the tsconfig that includes a file; the tests' one does not set them.
         oxc: { decorator: { legacy: true, emitDecoratorMetadata: true } },
         test: {
           name: 'api',
-          include: ['apps/api/src/**/*.test.ts', 'tests/api/**/*.test.ts'],
+          include: ['apps/api/src/**/*.test.ts', 'tests/api/**/*.test.ts', 'tests/faults/**/*.test.ts'],
           pool: 'threads',
           isolate: false,
           maxWorkers: 1,

@@ -121,13 +121,11 @@ export class JobsService implements OnApplicationBootstrap, BeforeApplicationShu
   }
 
   private async handleLogged(queue: JobQueue<object>, data: object): Promise<void> {
-    try {
-      await queue.handle(data);
-    } catch (error) {
-      this.logger.warn(`${queue.name} failed and will be tried again: ${safeMessage(error)}`);
-      // What is thrown is stored with the job, so it must not hold a query's parameters either.
-      throw new Error(safeMessage(error));
-    }
+    const failure = await queue.handle(data).then(() => undefined, safeMessage);
+    if (failure === undefined) return;
+    this.logger.warn(`${queue.name} failed and will be tried again: ${failure}`);
+    // What is thrown is stored with the job: a new error, because the first may hold a query's parameters.
+    throw new Error(failure);
   }
 }
 

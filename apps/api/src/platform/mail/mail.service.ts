@@ -1,4 +1,4 @@
-import { Injectable, Logger } from '@nestjs/common';
+import { Injectable } from '@nestjs/common';
 import { createTransport, type Transporter } from 'nodemailer';
 import { Config } from '../../config/config.js';
 import { DatabaseService } from '../../database/transaction.js';
@@ -24,7 +24,6 @@ const ATTEMPT_LIMIT = 6;
  */
 @Injectable()
 export class MailService {
-  private readonly logger = new Logger('Mail');
   private transporter: Transporter | undefined;
 
   constructor(
@@ -52,9 +51,8 @@ export class MailService {
     const mail = await this.queries.findOutgoing(mailId);
     if (mail === undefined || mail.state === 'sent') return;
     try {
-      await (
-        await this.openTransporter()
-      ).sendMail({
+      const transporter = await this.openTransporter();
+      await transporter.sendMail({
         from: this.config.mailFrom,
         to: mail.toAddress,
         subject: mail.subject,
@@ -65,18 +63,18 @@ export class MailService {
     } catch (error) {
       const reason = error instanceof Error ? error.message : String(error);
       await this.queries.recordFailure(mailId, reason.slice(0, 500), ATTEMPT_LIMIT);
-      this.logger.warn(`Mail ${mailId} could not be handed over: ${reason}`);
-      throw new Error(`mail server: ${reason}`);
+      throw error;
     }
     await this.queries.recordSent(mailId);
   }
 
   private async openTransporter(): Promise<Transporter> {
-    this.transporter ??= createTransport(this.config.smtpUrl ?? (await this.localServer.url()), {
+    this.transporter ??= createTransport({
+      url: this.config.smtpUrl ?? (await this.localServer.url()),
       // Both guard against a mail server that accepts a connection and then says nothing.
       connectionTimeout: 10_000,
       socketTimeout: 30_000,
-    } as object);
+    });
     return this.transporter;
   }
 }

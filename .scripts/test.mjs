@@ -1,0 +1,122 @@
+// Runs every gate, goes on after a failed one, prints a table of all, and ends with the line "N passed, N failed".
+// A gate without tests of its own (format, lint, types) counts as one. Names of gates as arguments run only those.
+import { spawn } from 'node:child_process';
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
+import process from 'node:process';
+import { fileURLToPath } from 'node:url';
+import { startPostgres } from './postgres-cluster.mjs';
+
+process.chdir(path.resolve(path.dirname(fileURLToPath(import.meta.url)), '..'));
+
+const tool = (name) => path.join('node_modules', '.bin', name);
+const countsFolder = mkdtempSync(path.join(os.tmpdir(), 'faintward-counts-'));
+
+const gates = [
+  { name: 'format', command: [tool('prettier'), '--check', '--log-level', 'warn', '.'] },
+  { name: 'lint', command: [tool('eslint'), '.'] },
+  { name: 'types', command: ['node', '.scripts/typecheck.mjs'] },
+  { name: 'libraries', command: [tool('vitest'), 'run', '--project', 'libs'], counts: true },
+  { name: 'web', command: [tool('vitest'), 'run', '--project', 'web'], counts: true },
+  { name: 'api', title: 'api, embedded database', command: [tool('vitest'), 'run', '--project', 'api'], counts: true },
+  {
+    name: 'api-server',
+    title: 'api, PostgreSQL server',
+    command: [tool('vitest'), 'run', '--project', 'api'],
+    counts: true,
+    isOnServer: true,
+  },
+  {
+    name: 'journeys',
+    title: 'journeys in Chromium',
+    command: [tool('playwright'), 'test', '--config', 'tests/e2e/playwright.config.ts'],
+    counts: true,
+  },
+];
+
+const wanted = process.argv.slice(2);
+const unknown = wanted.filter((name) => !gates.some((gate) => gate.name === name));
+if (unknown.length > 0) {
+  console.error(`There is no gate ${unknown.join(', ')}. Gates: ${gates.map(({ name }) => name).join(', ')}.`);
+  process.exit(1);
+}
+
+const results = [];
+for (const gate of gates) {
+  if (wanted.length > 0 && !wanted.includes(gate.name)) continue;
+  const title = gate.title ?? gate.name;
+  console.log(`\n== ${title}`);
+  const startedAt = Date.now();
+  const outcome = gate.isOnServer ? await runOnServer(gate) : await run(gate);
+  results.push({ title, seconds: (Date.now() - startedAt) / 1000, ...outcome });
+}
+rmSync(countsFolder, { recursive: true, force: true });
+
+const width = Math.max(...results.map(({ title }) => title.length));
+console.log('\n');
+for (const { title, passed, failed, skipped, seconds, note } of results) {
+  const parts = [
+    failed === 0 ? (note === undefined ? 'ok    ' : '-     ') : 'FAILED',
+    title.padEnd(width),
+    `${String(passed).padStart(6)} passed`,
+    `${String(failed).padStart(4)} failed`,
+    `${seconds.toFixed(0).padStart(5)} s`,
+    ...(skipped > 0 ? [`${skipped} skipped`] : []),
+    ...(note === undefined ? [] : [note]),
+  ];
+  console.log(parts.join('  '));
+}
+const total = (key) => results.reduce((sum, result) => sum + result[key], 0);
+console.log(`\n${total('passed')} passed, ${total('failed')} failed`);
+process.exit(total('failed') === 0 ? 0 : 1);
+
+async function runOnServer(gate) {
+  let cluster;
+  try {
+    cluster = process.env.FAINTWARD_TEST_DATABASE_URL
+      ? { url: process.env.FAINTWARD_TEST_DATABASE_URL, stop() {} }
+      : await startPostgres();
+  } catch (error) {
+    console.error(error instanceof Error ? error.message : error);
+    return { passed: 0, failed: 1, skipped: 0 };
+  }
+  if (cluster === undefined) {
+    return {
+      passed: 0,
+      failed: 0,
+      skipped: 0,
+      note: 'not run: PostgreSQL (initdb, pg_ctl, postgres) is not installed',
+    };
+  }
+  try {
+    return await run(gate, { FAINTWARD_TEST_DATABASE_URL: cluster.url });
+  } finally {
+    cluster.stop();
+  }
+}
+
+async function run(gate, environment = {}) {
+  const countsFile = path.join(countsFolder, `${gate.name}.json`);
+  const [program, ...parameters] = gate.command;
+  const code = await new Promise((resolve) => {
+    const child = spawn(program === 'node' ? process.execPath : program, parameters, {
+      stdio: 'inherit',
+      shell: process.platform === 'win32',
+      env: { ...process.env, ...environment, FAINTWARD_COUNTS: countsFile },
+    });
+    child.on('error', (error) => {
+      console.error(error.message);
+      resolve(1);
+    });
+    child.on('exit', (status) => resolve(status ?? 1));
+  });
+  if (!gate.counts) return { passed: code === 0 ? 1 : 0, failed: code === 0 ? 0 : 1, skipped: 0 };
+  const counted = existsSync(countsFile)
+    ? JSON.parse(readFileSync(countsFile, 'utf8'))
+    : { passed: 0, failed: 0, skipped: 0 };
+  // A skipped test is a promise nobody checks, and a runner that ends badly without a failed test has failed as a whole.
+  const failed = counted.failed + counted.skipped;
+  const nothingRan = counted.passed + failed === 0;
+  return { ...counted, failed: failed > 0 ? failed : code !== 0 || nothingRan ? 1 : 0 };
+}
