@@ -54,7 +54,7 @@ export function luminosityDistancesMpc(
     }
     const s = 1 + z;
     const position = (z / (s + Math.sqrt(s))) * cellsPerUnit;
-    const cell = Math.trunc(position) | 0;
+    const cell = position | 0;
     const comoving = polynomial(coefficients, cell << 3, position - cell);
     if (curvature === 0) {
       result[i] = scale * comoving * s;
@@ -67,14 +67,12 @@ export function luminosityDistancesMpc(
   return result;
 }
 
-/** Eight coefficients from `at` on, ascending powers of t. */
+/** Eight coefficients from `at` on, ascending powers of t; in pairs and fours, so that the processor can do them side by side. */
 function polynomial(c: Float64Array, at: number, t: number): number {
-  return (
-    c[at]! +
-    t *
-      (c[at + 1]! +
-        t * (c[at + 2]! + t * (c[at + 3]! + t * (c[at + 4]! + t * (c[at + 5]! + t * (c[at + 6]! + t * c[at + 7]!))))))
-  );
+  const t2 = t * t;
+  const low = c[at]! + t * c[at + 1]! + t2 * (c[at + 2]! + t * c[at + 3]!);
+  const high = c[at + 4]! + t * c[at + 5]! + t2 * (c[at + 6]! + t * c[at + 7]!);
+  return low + t2 * t2 * high;
 }
 
 /** One row of {@link distanceRows}. */
