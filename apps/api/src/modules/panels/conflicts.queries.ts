@@ -1,3 +1,4 @@
+import type { ConflictKind } from '@faintward/contracts/reviews';
 import { Injectable } from '@nestjs/common';
 import { and, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
@@ -6,6 +7,7 @@ import { panelMembers } from '../../database/schema/panels.js';
 import { people } from '../../database/schema/people.js';
 import { proposalMembers, proposals } from '../../database/schema/proposals.js';
 import { DatabaseService } from '../../database/transaction.js';
+import { isConflicted } from './conflict-conditions.js';
 
 const teamPeople = alias(people, 'team_people');
 
@@ -20,9 +22,7 @@ export class ConflictsQueries {
    * @param condition which proposals
    * @returns the new ones
    */
-  async insertFound(
-    condition: SQL,
-  ): Promise<{ proposalId: string; personId: string; kind: 'team' | 'institution' | 'declared' }[]> {
+  async insertFound(condition: SQL): Promise<{ conflictId: string; kind: ConflictKind }[]> {
     const db = this.database.current();
     const onTeam = await db
       .selectDistinct({ proposalId: proposals.id, personId: panelMembers.personId })
@@ -61,18 +61,21 @@ export class ConflictsQueries {
       .insert(conflicts)
       .values(found)
       .onConflictDoNothing()
-      .returning({ proposalId: conflicts.proposalId, personId: conflicts.personId, kind: conflicts.kind });
+      .returning({ conflictId: conflicts.id, kind: conflicts.kind });
   }
 
-  async declare(proposalId: string, personId: string, reason: string): Promise<void> {
-    await this.database
+  async declare(proposalId: string, personId: string, reason: string): Promise<string> {
+    const [row] = await this.database
       .current()
       .insert(conflicts)
       .values({ proposalId, personId, kind: 'declared', reason })
       .onConflictDoUpdate({
         target: [conflicts.proposalId, conflicts.personId, conflicts.kind],
         set: { reason, withdrawnAt: null },
-      });
+      })
+      .returning({ conflictId: conflicts.id });
+    if (row === undefined) throw new Error('A conflict was not stored.');
+    return row.conflictId;
   }
 
   async panelOfProposal(proposalId: string): Promise<string | null> {
@@ -91,22 +94,8 @@ export class ConflictsQueries {
       .select({ proposalId: proposals.id, personId: panelMembers.personId })
       .from(proposals)
       .innerJoin(panelMembers, eq(panelMembers.panelId, proposals.panelId))
-      .where(and(eq(proposals.panelId, panelId), isNull(proposals.deletedAt), isConflicted(panelMembers.personId)));
+      .where(
+        and(eq(proposals.panelId, panelId), isNull(proposals.deletedAt), isConflicted(sql`${panelMembers.personId}`)),
+      );
   }
-}
-
-/**
- * Condition on `proposals`: this person has a conflict with the proposal. Being on the team counts even where nobody has
- * stored it yet, and cannot be withdrawn. Every query that shows a committee anything of a proposal carries its negation.
- */
-export function isConflicted(personId: SQL | string | typeof panelMembers.personId): SQL {
-  return sql`(exists (select 1 from ${conflicts} where ${conflicts.proposalId} = ${proposals.id}
-      and ${conflicts.personId} = ${personId} and ${conflicts.withdrawnAt} is null)
-    or exists (select 1 from ${proposalMembers} where ${proposalMembers.proposalId} = ${proposals.id}
-      and ${proposalMembers.personId} = ${personId}))`;
-}
-
-/** Condition on `proposals`: this person has no conflict with the proposal. */
-export function isFreeOfConflict(personId: SQL | string | typeof panelMembers.personId): SQL {
-  return sql`not ${isConflicted(personId)}`;
 }

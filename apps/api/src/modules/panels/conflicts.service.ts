@@ -40,30 +40,27 @@ export class ConflictsService {
   /** A person says that they are not free to judge. The caller has made sure that they may see the proposal. */
   async declare(personId: string, panelId: string, proposalId: string, reason: string): Promise<void> {
     await this.database.transaction(async () => {
-      await this.queries.declare(proposalId, personId, reason);
+      const conflictId = await this.queries.declare(proposalId, personId, reason);
       await this.history.record({
         personId,
         scope: 'panel',
         scopeId: panelId,
         subject: 'conflict',
-        subjectId: `${proposalId}:${personId}`,
+        subjectId: conflictId,
         action: 'declared',
         details: { reason: { before: null, after: reason } },
       });
     });
   }
 
-  private async recordFound(
-    panelId: string,
-    found: readonly { proposalId: string; personId: string; kind: string }[],
-  ): Promise<void> {
+  private async recordFound(panelId: string, found: readonly { conflictId: string; kind: string }[]): Promise<void> {
     await this.history.record(
-      ...found.map(({ proposalId, personId, kind }) => ({
+      ...found.map(({ conflictId, kind }) => ({
         personId: undefined,
         scope: 'panel',
         scopeId: panelId,
         subject: 'conflict',
-        subjectId: `${proposalId}:${personId}`,
+        subjectId: conflictId,
         action: 'found',
         details: { kind: { before: null, after: kind } },
       })),
