@@ -5,12 +5,29 @@ import type { DatabaseHandle } from './database/connection.js';
 import { DatabaseModule } from './database/connection.module.js';
 import { AccountsModule } from './modules/accounts/accounts.module.js';
 import { AdministrationModule } from './modules/administration/administration.module.js';
+import { AwardsModule } from './modules/awards/awards.module.js';
+import { FacilitiesModule } from './modules/facilities/facilities.module.js';
 import { HealthModule } from './modules/health/health.module.js';
+import { PanelsModule } from './modules/panels/panels.module.js';
 import { PeopleModule } from './modules/people/people.module.js';
+import { RankingModule } from './modules/ranking/ranking.module.js';
+import { ReviewsModule } from './modules/reviews/reviews.module.js';
+import { SemestersModule } from './modules/semesters/semesters.module.js';
 import { PlatformModule } from './platform/platform.module.js';
 
 /** One line per subject, in alphabetical order. */
-const SUBJECTS = [AccountsModule, AdministrationModule, HealthModule, PeopleModule];
+const SUBJECTS = [
+  AccountsModule,
+  AdministrationModule,
+  AwardsModule,
+  FacilitiesModule,
+  HealthModule,
+  PanelsModule,
+  PeopleModule,
+  RankingModule,
+  ReviewsModule,
+  SemestersModule,
+];
 
 @Module({})
 export class AppModule {
