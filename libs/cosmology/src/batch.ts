@@ -1,6 +1,6 @@
 import { transverseFactor, volumeFactor } from './curvature.js';
 import { distanceModulusFromMpc, MAX_REDSHIFT, type Cosmology } from './cosmology.js';
-import { createDistanceTable, TABLE_REDSHIFT_LIMIT, type DistanceTable } from './distance-table.js';
+import { createDistanceTable, STRIDE, type DistanceTable } from './distance-table.js';
 import { OutOfDomainError } from './errors.js';
 
 /** Tables by model: made at the first batch, gone with the model. `null`: the model is not fit for one. */
@@ -9,7 +9,7 @@ const tables = new WeakMap<Cosmology, DistanceTable | null>();
 function tableOf(cosmology: Cosmology): DistanceTable | null {
   let table = tables.get(cosmology);
   if (table === undefined) {
-    table = createDistanceTable(cosmology.expansion) ?? null;
+    table = createDistanceTable(cosmology.expansion, MAX_REDSHIFT) ?? null;
     tables.set(cosmology, table);
   }
   return table;
@@ -22,8 +22,8 @@ function refuse(redshift: number, index: number): never {
 /**
  * Luminosity distances in Mpc of many redshifts.
  *
- * Equals `cosmology.luminosityDistanceMpc` element by element within 2e-12 relative for 0 ≤ z ≤ 1200 (piecewise polynomials,
- * made once per model) and exactly beyond. About 10 ns per value where the model is flat.
+ * Equals `cosmology.luminosityDistanceMpc` element by element within 2e-12 relative (piecewise polynomials, made once per model).
+ * About 10 ns per value up to z = 30 where the model is flat.
  *
  * @param redshifts  any order, repetitions allowed
  * @param result  where to write; a new array if left out
@@ -42,14 +42,15 @@ export function luminosityDistancesMpc(
   const table = tableOf(cosmology);
   const scale = cosmology.hubbleDistanceMpc;
   const curvature = cosmology.omegaCurvature;
-  const limit = table ? TABLE_REDSHIFT_LIMIT : -1;
-  const coefficients = table?.comoving ?? new Float64Array(0);
-  const cellsPerUnit = table?.cellsPerUnit ?? 0;
+  // Nearly every value falls into the near zone: its table stays in the processor's fastest cache, and its v starts at 0.
+  const limit = table ? table.near.lastRedshift : -1;
+  const coefficients = table?.near.comoving ?? new Float64Array(0);
+  const cellsPerUnit = table?.near.cellsPerUnit ?? 0;
   for (let i = 0; i < redshifts.length; i++) {
     const z = redshifts[i]!;
     if (!(z >= 0 && z <= limit)) {
       if (!(z >= 0 && z <= MAX_REDSHIFT)) refuse(z, i);
-      result[i] = cosmology.luminosityDistanceMpc(z);
+      result[i] = table ? tableRow(cosmology, table, z).luminosityDistanceMpc : cosmology.luminosityDistanceMpc(z);
       continue;
     }
     const s = 1 + z;
@@ -97,7 +98,7 @@ export interface DistanceRow {
 /**
  * Distances, scale, volume, times and densities of many redshifts.
  *
- * Each field equals the method of the same name within 1e-11 relative (modulus 1e-11 mag) for 0 ≤ z ≤ 1200 and exactly beyond.
+ * Each field equals the method of the same name within 1e-11 relative (modulus 1e-11 mag). About 2 µs per row.
  *
  * @returns one row per redshift, same order
  * @throws {OutOfDomainError} naming the first element outside 0 ≤ z ≤ MAX_REDSHIFT
@@ -109,7 +110,7 @@ export function distanceRows(cosmology: Cosmology, redshifts: ArrayLike<number>)
   for (let i = 0; i < redshifts.length; i++) {
     const z = redshifts[i]!;
     if (!(typeof z === 'number' && z >= 0 && z <= MAX_REDSHIFT)) refuse(z, i);
-    rows.push(table && z <= TABLE_REDSHIFT_LIMIT ? tableRow(cosmology, table, z) : directRow(cosmology, z));
+    rows.push(table ? tableRow(cosmology, table, z) : directRow(cosmology, z));
   }
   return rows;
 }
@@ -137,11 +138,13 @@ const KPC_PER_ARCSEC_AND_MPC = (1e3 * Math.PI) / 648000;
 
 function tableRow(cosmology: Cosmology, table: DistanceTable, redshift: number): DistanceRow {
   const s = 1 + redshift;
-  const position = (redshift / (s + Math.sqrt(s))) * table.cellsPerUnit;
-  const cell = Math.trunc(position);
-  const at = cell * table.stride;
+  const zone = redshift <= table.near.lastRedshift ? table.near : table.far;
+  const position = (redshift / (s + Math.sqrt(s)) - zone.start) * zone.cellsPerUnit;
+  // The first redshift of the far zone may come out a rounding error before its start.
+  const cell = Math.max(0, Math.trunc(position));
+  const at = cell * STRIDE;
   const inCell = position - cell;
-  const comoving = polynomial(table.comoving, at, inCell);
+  const comoving = polynomial(zone.comoving, at, inCell);
   const q = cosmology.omegaCurvature * comoving * comoving;
   if (q <= -9.8) return directRow(cosmology, redshift);
   const comovingDistanceMpc = cosmology.hubbleDistanceMpc * comoving;
@@ -156,8 +159,8 @@ function tableRow(cosmology: Cosmology, table: DistanceTable, redshift: number):
     distanceModulusMag: transverse === 0 ? undefined : distanceModulusFromMpc(transverse * s),
     kpcPerArcsec: transverse === 0 ? undefined : (transverse / s) * KPC_PER_ARCSEC_AND_MPC,
     comovingVolumeMpc3: 4 * Math.PI * comovingDistanceMpc ** 3 * volumeFactor(q),
-    lookbackTimeGyr: cosmology.hubbleTimeGyr * polynomial(table.lookback, at, inCell),
-    ageGyr: table.age ? cosmology.hubbleTimeGyr * polynomial(table.age, at, inCell) : undefined,
+    lookbackTimeGyr: cosmology.hubbleTimeGyr * polynomial(zone.lookback, at, inCell),
+    ageGyr: zone.age ? cosmology.hubbleTimeGyr * polynomial(zone.age, at, inCell) : undefined,
     hubbleKmSMpc: cosmology.parameters.hubbleConstantKmSMpc * Math.sqrt(squaredRate),
     criticalDensityGCm3: cosmology.criticalDensityTodayGCm3 * squaredRate,
   };

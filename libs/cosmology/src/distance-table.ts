@@ -1,5 +1,5 @@
 import type { Expansion } from './expansion.js';
-import { comovingBetween, timeSinceBigBang } from './line-of-sight.js';
+import { comovingBetween, timeBetween, timeSinceBigBang } from './line-of-sight.js';
 
 /*
  * A fast path for many redshifts of one model: piecewise polynomials in
@@ -14,17 +14,19 @@ import { comovingBetween, timeSinceBigBang } from './line-of-sight.js';
 
 /** Coefficients per cell: the derivative is interpolated in NODES points, so its integral has NODES + 1 coefficients. */
 const NODES = 7;
-const STRIDE = NODES + 1;
+export const STRIDE = NODES + 1;
 const FIRST_CELL_COUNT = 256;
-const LAST_CELL_COUNT = 8192;
+const LAST_CELL_COUNT = 32768;
 /** Accepted estimate of the relative error inside a cell. */
 const TAIL_LIMIT = 1e-12;
-/** Tables end a little beyond the epoch of recombination; farther out the caller integrates. */
-export const TABLE_REDSHIFT_LIMIT = 1200;
+/** Where the cells of the near zone end: beyond, sources are rare, and radiation asks for narrower cells. */
+const NEAR_ZONE_REDSHIFT = 30;
 
-/** Polynomials of one quantity, STRIDE coefficients per cell, ascending powers of the position in the cell from 0 to 1. */
-export interface DistanceTable {
-  readonly stride: number;
+/** Cells of one width. Coefficients: STRIDE per cell, ascending powers of the position in the cell from 0 to 1. */
+export interface TableZone {
+  readonly lastRedshift: number;
+  /** v at the left end of the first cell; exactly 0 in the near zone. */
+  readonly start: number;
   /** Cells per unit of v. */
   readonly cellsPerUnit: number;
   /** Comoving distance in Hubble distances. */
@@ -33,6 +35,12 @@ export interface DistanceTable {
   readonly lookback: Float64Array;
   /** Age in Hubble times; undefined where it is infinite. */
   readonly age: Float64Array | undefined;
+}
+
+/** Polynomials for every redshift up to the end of the far zone. */
+export interface DistanceTable {
+  readonly near: TableZone;
+  readonly far: TableZone;
 }
 
 /** From values at Chebyshev nodes of [0, 1] to coefficients of ascending powers: one fixed matrix, made once. */
@@ -76,21 +84,55 @@ function tableCoordinate(redshift: number): number {
 /**
  * Builds the tables with as many cells as the model needs.
  *
- * The accepted tables have, in every cell, last Chebyshev coefficients below {@link TAIL_LIMIT} of the value there, and their
- * comoving distance at the far end agrees with adaptive quadrature to 1e-12.
+ * Accepted cells have last Chebyshev coefficients below {@link TAIL_LIMIT} of the value there, and each zone's comoving distance
+ * agrees with adaptive quadrature to as much. (In a universe that nearly stood still, where the terms of E² cancel, the limit is
+ * what rounding leaves.)
  *
- * @returns undefined if even the finest tables are not good enough (a universe that nearly stood still), so that the caller
- *   must integrate directly
+ * @returns undefined if even the narrowest cells are not good enough, so that the caller must integrate directly
  */
-export function createDistanceTable(expansion: Expansion): DistanceTable | undefined {
-  // A hair more than the limit, so that rounding never points past the last cell.
-  const end = tableCoordinate(TABLE_REDSHIFT_LIMIT) * (1 + 1e-12);
-  const lastX = -2 * Math.log1p(-end);
-  const wholeDistance = comovingBetween(expansion, 0, lastX);
-  const ageAtEnd = timeSinceBigBang(expansion, lastX);
+export function createDistanceTable(expansion: Expansion, lastRedshift: number): DistanceTable | undefined {
+  const limit = Math.max(TAIL_LIMIT, 1e-15 / expansion.leastPurity);
+  const boundary = tableCoordinate(NEAR_ZONE_REDSHIFT);
+  // A hair more than the last redshift, so that rounding never points past the last cell.
+  const end = tableCoordinate(lastRedshift) * (1 + 1e-13);
+  const ageAtEnd = timeSinceBigBang(expansion, logFromCoordinate(end));
+  const ageAtBoundary = timeSinceBigBang(expansion, logFromCoordinate(boundary));
+  const near = createZone(
+    expansion,
+    NEAR_ZONE_REDSHIFT,
+    { start: 0, end: boundary * (1 + 1e-13) },
+    limit,
+    ageAtBoundary,
+  );
+  const far = createZone(expansion, lastRedshift, { start: boundary, end }, limit, ageAtEnd);
+  return near && far && { near, far };
+}
+
+/** x = ln(1 + z) at a table coordinate. */
+function logFromCoordinate(v: number): number {
+  return -2 * Math.log1p(-v);
+}
+
+interface Stretch {
+  readonly start: number;
+  readonly end: number;
+}
+
+function createZone(
+  expansion: Expansion,
+  lastRedshift: number,
+  stretch: Stretch,
+  limit: number,
+  ageAtEnd: number,
+): TableZone | undefined {
+  const startX = logFromCoordinate(stretch.start);
+  const endX = logFromCoordinate(stretch.end);
+  const before = comovingBetween(expansion, 0, startX);
+  const lookbackBefore = timeBetween(expansion, 0, startX);
+  const whole = before + comovingBetween(expansion, startX, endX);
   for (let cells = FIRST_CELL_COUNT; cells <= LAST_CELL_COUNT; cells *= 2) {
-    const table = tryCells(expansion, cells, end, wholeDistance, ageAtEnd);
-    if (table) return table;
+    const made = tryCells(expansion, cells, stretch, limit, before, lookbackBefore, ageAtEnd);
+    if (made && Math.abs(cellEnd(made.comoving, cells - 1) / whole - 1) < limit) return { ...made, lastRedshift };
   }
   return undefined;
 }
@@ -98,22 +140,24 @@ export function createDistanceTable(expansion: Expansion): DistanceTable | undef
 function tryCells(
   expansion: Expansion,
   cells: number,
-  end: number,
-  wholeDistance: number,
+  { start, end }: Stretch,
+  limit: number,
+  comovingBefore: number,
+  lookbackBefore: number,
   ageAtEnd: number,
-): DistanceTable | undefined {
-  const width = end / cells;
+): Omit<TableZone, 'lastRedshift'> | undefined {
+  const width = (end - start) / cells;
   const comoving = new Float64Array(cells * STRIDE);
   const lookback = new Float64Array(cells * STRIDE);
   const distanceSlopes = new Float64Array(NODES);
   const timeSlopes = new Float64Array(NODES);
-  const tails = new Float64Array(cells);
-  let distance = 0;
-  let time = 0;
+  const timeTails = new Float64Array(cells);
+  let distance = comovingBefore;
+  let time = lookbackBefore;
   for (let cell = 0; cell < cells; cell++) {
     for (let j = 0; j < NODES; j++) {
       // d(D_C)/dv = 2 s^{3/2}/E and d(t_L)/dv = 2 s^{1/2}/E, since dz = 2 s^{3/2} dv.
-      const u = 1 - width * (cell + interpolation.nodes[j]!);
+      const u = 1 - (start + width * (cell + interpolation.nodes[j]!));
       const s = 1 / (u * u);
       const slope = (2 * width) / (u * expansion.rate(s));
       timeSlopes[j] = slope;
@@ -122,16 +166,14 @@ function tryCells(
     comoving[cell * STRIDE] = distance;
     lookback[cell * STRIDE] = time;
     const distanceTail = fillCell(comoving, cell, distanceSlopes);
-    const timeTail = fillCell(lookback, cell, timeSlopes);
+    timeTails[cell] = fillCell(lookback, cell, timeSlopes);
     distance = cellEnd(comoving, cell);
     time = cellEnd(lookback, cell);
-    if (!(distanceTail < TAIL_LIMIT * distance && timeTail < TAIL_LIMIT * time)) return undefined;
-    tails[cell] = timeTail;
+    if (!(distanceTail < limit * distance && timeTails[cell]! < limit * time)) return undefined;
   }
-  if (!(Math.abs(distance / wholeDistance - 1) < 1e-12)) return undefined;
   const age = ageAtEnd === Infinity ? undefined : ageFromLookback(lookback, cells, ageAtEnd);
-  if (age && tails.some((tail, cell) => !(tail < TAIL_LIMIT * cellEnd(age, cell)))) return undefined;
-  return { stride: STRIDE, cellsPerUnit: 1 / width, comoving, lookback, age };
+  if (age && timeTails.some((tail, cell) => !(tail < limit * cellEnd(age, cell)))) return undefined;
+  return { start, cellsPerUnit: 1 / width, comoving, lookback, age };
 }
 
 /** Writes the integral of the interpolated slopes behind the constant already there; returns the size of the last terms. */
