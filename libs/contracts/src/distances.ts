@@ -30,7 +30,8 @@ export const DistanceRow = z
     /** Comoving volume of the whole sky out to this redshift. */
     comovingVolumeMpc3: z.number(),
     lookbackTimeGyr: z.number(),
-    ageGyr: z.number(),
+    /** Null in a universe without a beginning. */
+    ageGyr: z.number().nullable(),
     hubbleKmSMpc: z.number(),
     criticalDensityGCm3: z.number(),
     /** 10 log10(1+z): a line's or the bolometric surface brightness, in energy. */

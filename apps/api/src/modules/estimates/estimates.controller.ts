@@ -1,0 +1,44 @@
+import { CosmologyPresetList } from '@faintward/contracts/cosmology';
+import { DistancesRequest, DistancesResponse } from '@faintward/contracts/distances';
+import { Estimate, EstimateRequest } from '@faintward/contracts/estimates';
+import { Body, Controller, Get, HttpCode, Post } from '@nestjs/common';
+import { ApiOkResponse, ApiTags } from '@nestjs/swagger';
+import type { z } from 'zod';
+import { Public } from '../../platform/access.js';
+import { Answers } from '../../platform/answers.js';
+import { BodyLimit } from '../../platform/http.js';
+import { RateLimit } from '../../platform/rate-limits.js';
+import { EstimatesService } from './estimates.service.js';
+
+@ApiTags('calculators')
+@Controller()
+export class EstimatesController {
+  constructor(private readonly estimates: EstimatesService) {}
+
+  @Get('cosmologies')
+  @Public()
+  @Answers(CosmologyPresetList)
+  listCosmologies(): z.infer<typeof CosmologyPresetList> {
+    return this.estimates.listCosmologies();
+  }
+
+  // Named for the documentation, but not sieved: of a hundred thousand rows that would take longer than computing them, and
+  // they hold nothing but the numbers of the request.
+  @Post('distances')
+  @Public()
+  @RateLimit('calculator')
+  @BodyLimit(4)
+  @HttpCode(200)
+  @ApiOkResponse({ standardSchema: DistancesResponse })
+  computeDistances(@Body({ schema: DistancesRequest }) request: DistancesRequest): DistancesResponse {
+    return this.estimates.computeDistances(request);
+  }
+
+  @Post('estimates')
+  @Public()
+  @RateLimit('calculator')
+  @Answers(Estimate, { status: 200 })
+  estimate(@Body({ schema: EstimateRequest }) request: EstimateRequest): Promise<Estimate> {
+    return this.estimates.estimate(request);
+  }
+}
