@@ -17,7 +17,7 @@ export const paths = {
   },
   signUp: fixed('/sign-up'),
   forgottenPassword: fixed('/forgotten-password'),
-  resetPassword: { pattern: '/reset-password/:token', to: (token: string) => `/reset-password/${token}` },
+  resetPassword: { pattern: '/password-reset/:token', to: (token: string) => `/password-reset/${token}` },
   profile: fixed('/profile'),
   mailbox: fixed('/mailbox'),
   distances: fixed('/calculators/distances'),

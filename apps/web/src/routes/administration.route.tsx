@@ -1,3 +1,6 @@
-import { placeholder } from './placeholder';
+import { Navigate } from 'react-router-dom';
+import { paths } from '../app/paths';
 
-export const Component = placeholder('Administration');
+export function Component() {
+  return <Navigate to={paths.administrationPeople.to()} replace />;
+}

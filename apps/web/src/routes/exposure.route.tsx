@@ -1,3 +1,122 @@
-import { placeholder } from './placeholder';
+import Box from '@mui/material/Box';
+import Button from '@mui/material/Button';
+import { useQuery } from '@tanstack/react-query';
+import { useEffect, useMemo, useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+import { estimateQueries } from '../features/exposure/api/estimate';
+import { SketchForm } from '../features/exposure/components/SketchForm';
+import {
+  fieldOf,
+  offeredModes,
+  readSketch,
+  toRequest,
+  writeSketch,
+  type SketchField,
+} from '../features/exposure/sketch';
+import { ApiError } from '../lib/api';
+import { facilityQueries } from '../lib/queries/facilities';
+import { useDebounced } from '../lib/useDebounced';
+import { EmptyState } from '../ui/EmptyState';
+import { EstimateView } from '../ui/estimate/EstimateView';
+import { Note } from '../ui/Note';
+import { useNotices } from '../ui/Notices';
+import { Loaded } from '../ui/PageStates';
+import { PageFrame } from '../ui/PageFrame';
+import { Panel } from '../ui/Panel';
 
-export const Component = placeholder('Exposure sketchpad');
+export function Component() {
+  const [address, setAddress] = useSearchParams();
+  const [typed, setTyped] = useState(() => readSketch(address));
+  const announce = useNotices();
+  const telescopes = useQuery(facilityQueries.telescopes());
+  const modes = useMemo(() => offeredModes(telescopes.data?.rows ?? []), [telescopes.data]);
+  // Without a choice the first mode that is offered stands, so that the page answers at once.
+  const mode = modes.some((one) => one.id === typed.mode) ? typed.mode : (modes[0]?.id ?? '');
+  const isUnknownMode = typed.mode !== '' && modes.length > 0 && mode !== typed.mode;
+  const sketch = useMemo(() => ({ ...typed, mode }), [typed, mode]);
+  const settled = useDebounced(sketch, 400);
+  const { request, errors } = useMemo(() => toRequest(settled), [settled]);
+
+  useEffect(() => {
+    setAddress(writeSketch(settled), { replace: true });
+  }, [settled, setAddress]);
+
+  const estimate = useQuery({ ...estimateQueries.one(request), enabled: request !== undefined && modes.length > 0 });
+  const serverErrors: Partial<Record<SketchField, string>> = {};
+  if (request && estimate.error instanceof ApiError) {
+    for (const { path, message } of estimate.error.fieldErrors) {
+      const field = fieldOf(path, settled);
+      if (field) serverErrors[field] ??= message;
+    }
+  }
+  const shownErrors = { ...serverErrors, ...errors };
+
+  return (
+    <PageFrame
+      title="Exposure sketchpad"
+      eyebrow="Calculator · needs no account · the address of this page holds what you typed"
+      actions={
+        <Button
+          onClick={() =>
+            void navigator.clipboard.writeText(window.location.href).then(
+              () => announce('Link copied.'),
+              () => announce('The browser did not allow copying: copy the address of this page.'),
+            )
+          }
+        >
+          Copy the link
+        </Button>
+      }
+    >
+      <Loaded query={telescopes} what="The instruments">
+        {(list) => (
+          <Box
+            sx={{
+              display: 'grid',
+              gap: 3,
+              gridTemplateColumns: { xs: 'minmax(0, 1fr)', md: 'minmax(0, 5fr) minmax(0, 8fr)' },
+              alignItems: 'start',
+            }}
+          >
+            <Panel>
+              {isUnknownMode && (
+                <Box sx={{ mb: 2 }}>
+                  <Note tone="warning">
+                    The mode in this link is not offered any more; another one stands in its place.
+                  </Note>
+                </Box>
+              )}
+              <SketchForm
+                sketch={sketch}
+                errors={shownErrors}
+                telescopes={list.rows}
+                onChange={(field, value) => setTyped((old) => ({ ...old, [field]: value }))}
+              />
+            </Panel>
+            {modes.length === 0 ? (
+              <Panel>
+                <EmptyState title="No instrument is offered">The staff have not put any mode in force yet.</EmptyState>
+              </Panel>
+            ) : (
+              <Box sx={{ minWidth: 0 }}>
+                {Object.keys(errors).length > 0 && (
+                  <Box sx={{ mb: 2 }}>
+                    <Note tone="warning">
+                      Something in the form is not complete yet
+                      {estimate.data ? ': this is the answer to what stood there before' : ''}.
+                    </Note>
+                  </Box>
+                )}
+                {(request !== undefined || estimate.data) && (
+                  <Loaded query={estimate} what="The estimate">
+                    {(data) => <EstimateView estimate={data} />}
+                  </Loaded>
+                )}
+              </Box>
+            )}
+          </Box>
+        )}
+      </Loaded>
+    </PageFrame>
+  );
+}

@@ -1,3 +1,49 @@
-import { placeholder } from './placeholder';
+import Stack from '@mui/material/Stack';
+import Typography from '@mui/material/Typography';
+import { useQuery } from '@tanstack/react-query';
+import { useParams } from 'react-router-dom';
+import { paths } from '../app/paths';
+import { semesterQueries } from '../features/semesters/api/semesters';
+import { SemesterFacts, stageWords } from '../features/semesters/components/SemesterFacts';
+import { Loaded } from '../ui/PageStates';
+import { PageFrame } from '../ui/PageFrame';
+import { Panel } from '../ui/Panel';
 
-export const Component = placeholder('Semester');
+export function Component() {
+  const { semesterId = '' } = useParams();
+  const query = useQuery(semesterQueries.detail(semesterId));
+  return (
+    <PageFrame
+      title={query.data?.name ?? 'Semester'}
+      eyebrow={query.data ? stageWords[query.data.stage] : undefined}
+      breadcrumbs={[{ label: 'Semesters', to: paths.semesters.to() }]}
+    >
+      <Loaded query={query} what="The semester">
+        {(semester) => (
+          <Stack sx={{ gap: 3 }}>
+            <Panel>
+              <SemesterFacts semester={semester} />
+            </Panel>
+            <Panel title="Call">
+              <Typography variant="reading" component="p" sx={{ whiteSpace: 'pre-line', maxWidth: 700 }}>
+                {semester.callText}
+              </Typography>
+            </Panel>
+            <Panel title="Criteria and their scale">
+              {semester.criteria.map((criterion) => (
+                <section key={criterion.criterionId} style={{ marginBottom: 16 }}>
+                  <Typography variant="h4" component="h3">
+                    {criterion.title}
+                  </Typography>
+                  <Typography variant="body2">0: {criterion.anchors.low}</Typography>
+                  <Typography variant="body2">5: {criterion.anchors.middle}</Typography>
+                  <Typography variant="body2">10: {criterion.anchors.high}</Typography>
+                </section>
+              ))}
+            </Panel>
+          </Stack>
+        )}
+      </Loaded>
+    </PageFrame>
+  );
+}

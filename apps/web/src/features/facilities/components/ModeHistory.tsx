@@ -1,0 +1,36 @@
+import type { ModeConfigurationVersion } from '@faintward/contracts/facilities';
+import Box from '@mui/material/Box';
+import { TimeDisplay } from '../../../ui/TimeDisplay';
+import { configurationLines } from './ModeSheet';
+
+/** Versions of a mode's configuration, newest first, each with what it changed. */
+export function ModeHistory({ versions }: { versions: readonly ModeConfigurationVersion[] }) {
+  const sorted = versions.toSorted((a, b) => b.version - a.version);
+  return (
+    <Box component="ol" sx={{ listStyle: 'none', p: 0, m: 0 }}>
+      {sorted.map((version, index) => {
+        const before = sorted[index + 1];
+        const earlier = new Map(before ? configurationLines(before.configuration) : []);
+        const changes = before
+          ? configurationLines(version.configuration).filter(([label, value]) => earlier.get(label) !== value)
+          : [];
+        return (
+          <Box
+            component="li"
+            key={version.version}
+            sx={{ borderTop: 1, borderColor: 'divider', py: 1, fontSize: '0.875rem' }}
+          >
+            <strong>Configuration {version.version}</strong>, <TimeDisplay instant={version.createdAt} short />
+            {version.createdByName ? `, ${version.createdByName}` : ''}
+            {version.note && <Box sx={{ color: 'text.secondary' }}>{version.note}</Box>}
+            {changes.map(([label, value]) => (
+              <Box key={label}>
+                {label}: {earlier.get(label) ?? 'not stated'} → {value}
+              </Box>
+            ))}
+          </Box>
+        );
+      })}
+    </Box>
+  );
+}
