@@ -7,6 +7,7 @@ import {
   MAXIMUM_EXPOSURE_COUNT,
   SEMESTER_NIGHT_SECONDS,
 } from './constants.js';
+import { targetDistance, type TargetDistance } from './distances.js';
 import {
   exposureBounds,
   noiseBudgetOf,
@@ -19,7 +20,7 @@ import {
 } from './exposure-series.js';
 import { LightBudget } from './light-budget.js';
 import { TESTED_OUTER_SCALE_RATIO, deliveredSeeing } from './seeing.js';
-import { addSourceSteps, countedRange, definedDistance } from './source-light.js';
+import { addSourceSteps, countedRange } from './source-light.js';
 import type {
   Estimate,
   EstimateInput,
@@ -87,11 +88,13 @@ export function estimate(input: EstimateInput): Estimate {
     warnings.push({ code: 'highAirmass', message: 'Above airmass 2 extinction and seeing become uncertain.' });
   }
 
-  const noLight = addSourceSteps(budget, target, input.cosmology, mode, range, warnings);
+  let distance: TargetDistance | undefined;
+  const distanceOf = (): TargetDistance => (distance ??= targetDistance(input.cosmology, target.redshift));
+  const noLight = addSourceSteps(budget, target, distanceOf, mode, range, warnings);
   if (noLight !== undefined) return infeasible(noLight, null);
   const apparentMagnitudeAb = budget.totalMag;
 
-  const image = imageOf(input);
+  const image = imageOf(input, distanceOf);
   const per = perOf(goal);
   const collection = collect(budget, input, range, image, fwhmArcsec, per, warnings);
   const { rates, aperture } = collection;
@@ -158,7 +161,7 @@ function perOf(goal: Goal): SignalToNoisePer {
  * The source on the sky. An angle is taken as observed; a size in kpc is that of the source, and lensing stretches it by
  * √μ, because its solid angle grows by μ.
  */
-function imageOf({ target, cosmology }: EstimateInput): Image {
+function imageOf({ target }: EstimateInput, distanceOf: () => TargetDistance): Image {
   const { extent } = target;
   switch (extent.kind) {
     case 'point':
@@ -168,9 +171,7 @@ function imageOf({ target, cosmology }: EstimateInput): Image {
     case 'sersic': {
       const radiusArcsec =
         extent.halfLightRadiusArcsec ??
-        ((extent.halfLightRadiusKpc ?? NaN) /
-          definedDistance(cosmology.kpcPerArcsec(target.redshift), target.redshift)) *
-          Math.sqrt(target.magnification ?? 1);
+        ((extent.halfLightRadiusKpc ?? NaN) / distanceOf().kpcPerArcsec) * Math.sqrt(target.magnification ?? 1);
       return {
         kind: 'sersic',
         index: extent.index,

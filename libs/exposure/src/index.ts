@@ -41,6 +41,7 @@ export {
   moffatSlitFraction,
   optimumRadiusOverFwhm,
 } from './point-spread.js';
+export { tabulatedDistances } from './distances.js';
 export { deliveredSeeing } from './seeing.js';
 export type { DeliveredSeeing } from './seeing.js';
 export { bestApertureRadiusArcsec, enclosedFractionAfterSeeing } from './sersic-image.js';

@@ -56,7 +56,7 @@ export function enclosedFractionAfterSeeing(
   const gaussian = (): number =>
     gaussianEncircledFraction(radiusArcsec / (2 * halfLightRadiusAfterSeeing(circularisedRadiusArcsec, fwhmArcsec)));
   const sigma = fwhmArcsec * GAUSSIAN_SIGMA_OVER_FWHM;
-  const convolved = (): number => convolvedFraction(index, circularisedRadiusArcsec / sigma, radiusArcsec / sigma, 16);
+  const convolved = (): number => convolvedFraction(index, circularisedRadiusArcsec / sigma, radiusArcsec / sigma, 12);
   return mix(blend, gaussian, convolved);
 }
 
@@ -94,7 +94,7 @@ function smoothStep(t: number): number {
   return t * t * (3 - 2 * t);
 }
 
-const SHELL_COUNT = 32;
+const SHELL_COUNT = 24;
 const shellsByIndex = new Map<number, Float64Array>();
 const MOST_CACHED_INDICES = 200;
 
@@ -128,8 +128,8 @@ function convolvedFraction(
   return sum / 2;
 }
 
-/** Gaussians are cut off here; e^(−8²/2) is 1e-14. */
-const CUT_SIGMA = 8;
+/** Gaussians are cut off here; e^(−6²/2) is 2e-8. */
+const CUT_SIGMA = 6;
 
 /**
  * Fraction of a two-dimensional Gaussian of σ = 1 inside a circle of radius a whose centre is b away:

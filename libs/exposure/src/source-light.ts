@@ -4,7 +4,6 @@ import {
   CM_PER_MPC,
   LYMAN_ALPHA_NM,
   LYMAN_LIMIT_NM,
-  OutOfDomainError,
   lensingMag,
   photonRateOfLinePerM2,
   powerLawColourMag,
@@ -12,7 +11,8 @@ import {
 } from '@faintward/photometry';
 import { OPAQUE_FOREST_REDSHIFT } from './constants.js';
 import { stepInput, type LightBudget } from './light-budget.js';
-import type { DistanceModel, EstimateWarning, InfeasibleReason, InstrumentMode, Target } from './types.js';
+import type { TargetDistance } from './distances.js';
+import type { EstimateWarning, InfeasibleReason, InstrumentMode, Target } from './types.js';
 
 /** What is counted together: the band when imaging, one resolution element when taking a spectrum. */
 export interface CountedRange {
@@ -80,12 +80,13 @@ export function countedRange(
 /**
  * Adds the steps from the given light to the light above the atmosphere.
  *
+ * @param distanceOf  asked only where a luminosity is given
  * @returns a reason when no light is left, else undefined
  */
 export function addSourceSteps(
   budget: LightBudget,
   target: Target,
-  cosmology: DistanceModel,
+  distanceOf: () => TargetDistance,
   mode: InstrumentMode,
   range: CountedRange,
   warnings: EstimateWarning[],
@@ -127,7 +128,7 @@ export function addSourceSteps(
         stepInput('absoluteMagnitudeAb', absoluteMagnitudeAb, 'mag'),
         stepInput('restWavelengthNm', restWavelengthNm, 'nm'),
       ]);
-      addDistanceModulus(budget, redshift, cosmology);
+      addDistanceModulus(budget, redshift, distanceOf());
       budget.add('redshift-bandwidth', redshiftBandwidthMag(redshift), [stepInput('redshift', redshift)]);
       const givenAtNm = restWavelengthNm * (1 + redshift);
       addSlope(budget, powerLawColourMag(slopeBeta, givenAtNm, range.lowNm, range.highNm), slopeBeta, givenAtNm);
@@ -150,7 +151,7 @@ export function addSourceSteps(
         stepInput('wavelengthNm', range.wavelengthNm, 'nm'),
         stepInput('logWidth', range.logWidth),
       ]);
-      addDistanceModulus(budget, redshift, cosmology);
+      addDistanceModulus(budget, redshift, distanceOf());
       reason = checkHydrogenOfLine(light.restWavelengthNm, redshift, warnings);
       break;
     }
@@ -162,18 +163,10 @@ export function addSourceSteps(
   return reason;
 }
 
-/** The input check keeps redshift 0 away from distances; a model may still have none of its own accord. */
-export function definedDistance(value: number | undefined, redshift: number): number {
-  if (value === undefined || !Number.isFinite(value)) {
-    throw new OutOfDomainError('target.redshift', redshift, 'a redshift at which the cosmology has a distance');
-  }
-  return value;
-}
-
-function addDistanceModulus(budget: LightBudget, redshift: number, cosmology: DistanceModel): void {
-  budget.add('distance-modulus', definedDistance(cosmology.distanceModulusMag(redshift), redshift), [
+function addDistanceModulus(budget: LightBudget, redshift: number, distance: TargetDistance): void {
+  budget.add('distance-modulus', distance.distanceModulusMag, [
     stepInput('redshift', redshift),
-    stepInput('luminosityDistanceMpc', cosmology.luminosityDistanceMpc(redshift), 'Mpc'),
+    stepInput('luminosityDistanceMpc', distance.luminosityDistanceMpc, 'Mpc'),
   ]);
 }
 

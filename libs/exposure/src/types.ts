@@ -5,14 +5,13 @@
  * Magnitudes are AB. Angles on the sky are arcseconds. Fields marked optional state their default.
  */
 
-/** What the estimate needs to know about distances. Every model of `@faintward/cosmology` fulfils it. */
+/**
+ * What the estimate needs to know about distances. Every model of `@faintward/cosmology` fulfils it; for long lists
+ * `tabulatedDistances` is quicker. Sizes follow from D_A = D_L / (1 + z)², whatever the curvature.
+ */
 export interface DistanceModel {
   /** Luminosity distance in Mpc. */
   luminosityDistanceMpc(redshift: number): number;
-  /** 5 log10(D_L / 10 pc) in magnitudes; undefined at redshift 0. */
-  distanceModulusMag(redshift: number): number | undefined;
-  /** Proper transverse scale in kpc per arcsecond; undefined at redshift 0. */
-  kpcPerArcsec(redshift: number): number | undefined;
 }
 
 // ---------------------------------------------------------------------------------------------- where and with what
