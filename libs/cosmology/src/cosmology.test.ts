@@ -1,8 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { distanceRows } from './batch.js';
 import { createCosmology, MAX_REDSHIFT, type Cosmology } from './cosmology.js';
 import { AntipodeError, InvalidCosmologyError, NoBigBangError, NoSolutionError, OutOfDomainError } from './errors.js';
-import type { CosmologyParameters } from './parameters.js';
+import { PARAMETER_RANGES, type CosmologyParameters } from './parameters.js';
 
 const relative = (value: number, expected: number): number => Math.abs(value / expected - 1);
 
@@ -385,6 +386,54 @@ describe('parameters', () => {
         },
       ),
       { numRuns: 50 },
+    );
+  });
+
+  it('anywhere in their ranges lead to finite numbers or to a refusal with a name, never to anything else', () => {
+    const within = (name: Exclude<keyof typeof PARAMETER_RANGES, 'neutrinoMassesEv'>) =>
+      fc.double({ min: PARAMETER_RANGES[name].minimum, max: PARAMETER_RANGES[name].maximum, noNaN: true });
+    const anything = fc.record({
+      hubbleConstantKmSMpc: within('hubbleConstantKmSMpc'),
+      omegaMatter: within('omegaMatter'),
+      omegaDarkEnergy: fc.option(within('omegaDarkEnergy'), { nil: undefined }),
+      w0: within('w0'),
+      wa: within('wa'),
+      cmbTemperatureK: within('cmbTemperatureK'),
+      effectiveNeutrinoCount: within('effectiveNeutrinoCount'),
+      neutrinoMassesEv: fc.array(fc.double({ min: 0, max: 100, noNaN: true }), { maxLength: 4 }),
+    });
+    const z = fc.double({ min: 0, max: MAX_REDSHIFT, noNaN: true, minExcluded: true });
+    const refused = [OutOfDomainError, AntipodeError, NoSolutionError];
+    fc.assert(
+      fc.property(anything, z, (parameters, redshift) => {
+        let model: Cosmology;
+        try {
+          model = createCosmology(parameters);
+        } catch (error) {
+          expect(error).toBeInstanceOf(InvalidCosmologyError);
+          return;
+        }
+        const calls: (() => number | readonly number[] | undefined)[] = [
+          () => model.comovingDistanceMpc(redshift),
+          () => model.luminosityDistanceMpc(redshift),
+          () => model.comovingVolumeMpc3(redshift),
+          () => model.lookbackTimeGyr(redshift),
+          () => (model.ageGyr(redshift) === Infinity ? 0 : model.ageGyr(redshift)),
+          () => model.angularDiameterDistanceMaximum()?.distanceMpc,
+          () => model.redshiftAtLuminosityDistanceMpc(1000),
+          () => model.redshiftAtAgeGyr(1),
+          () => model.redshiftsAtKpcPerArcsec(1),
+          () => distanceRows(model, [redshift])[0]!.luminosityDistanceMpc,
+        ];
+        for (const call of calls) {
+          try {
+            for (const value of [call() ?? 0].flat()) expect(Number.isFinite(value)).toBe(true);
+          } catch (error) {
+            if (!refused.some((kind) => error instanceof kind)) throw error;
+          }
+        }
+      }),
+      { numRuns: 150 },
     );
   });
 
