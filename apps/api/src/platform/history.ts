@@ -1,6 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import { changes } from '../database/schema/history.js';
 import { DatabaseService } from '../database/transaction.js';
+import { canonicalJson } from './idempotency.js';
 
 export interface Change {
   /** Undefined when the application itself acted. */
@@ -29,7 +30,10 @@ export class HistoryService {
   }
 }
 
-/** The fields of `after` that differ from `before`, in the form that a change stores. */
+/**
+ * The fields of `after` that differ from `before`, in the form that a change stores. The order of keys is no difference: a
+ * jsonb column gives them back in its own.
+ */
 export function differences<Row extends object>(
   before: Row,
   after: Partial<Row>,
@@ -37,7 +41,7 @@ export function differences<Row extends object>(
   const result: Record<string, { before: unknown; after: unknown }> = {};
   for (const [name, value] of Object.entries(after)) {
     const old: unknown = before[name as keyof Row];
-    if (value !== undefined && JSON.stringify(old) !== JSON.stringify(value))
+    if (value !== undefined && canonicalJson(old) !== canonicalJson(value))
       result[name] = { before: old ?? null, after: value };
   }
   return result;

@@ -5,22 +5,26 @@ import type { Request } from 'express';
 import { idempotencyKeys } from '../database/schema/accounts.js';
 import { DatabaseService } from '../database/transaction.js';
 import { DomainError } from './domain-error.js';
+import { documentsHeader } from './header-parameter.js';
 
 /** How long a key is remembered. */
 const KEPT_HOURS = 48;
 
 /** Parameter decorator: the `Idempotency-Key` header, or undefined when there is none. */
-export const IdempotencyKey = createParamDecorator((_: unknown, context: ExecutionContext): string | undefined => {
-  const key = context.switchToHttp().getRequest<Request>().header('idempotency-key')?.trim();
-  if (key === undefined || key === '') return undefined;
-  if (!/^[\x21-\x7e]{8,200}$/.test(key)) {
-    throw new DomainError(
-      'malformed-request',
-      'Idempotency-Key must be 8 to 200 visible ASCII characters without spaces.',
-    );
-  }
-  return key;
-});
+export const IdempotencyKey = createParamDecorator(
+  (_: unknown, context: ExecutionContext): string | undefined => {
+    const key = context.switchToHttp().getRequest<Request>().header('idempotency-key')?.trim();
+    if (key === undefined || key === '') return undefined;
+    if (!/^[\x21-\x7e]{8,200}$/.test(key)) {
+      throw new DomainError(
+        'malformed-request',
+        'Idempotency-Key must be 8 to 200 visible ASCII characters without spaces.',
+      );
+    }
+    return key;
+  },
+  [documentsHeader('Idempotency-Key', 'A repeated request with the same key gets the first answer again.', false)],
+);
 
 export interface IdempotentRequest {
   personId: string;
@@ -90,7 +94,7 @@ export class IdempotencyService {
 }
 
 /** JSON with sorted keys, so that the same request written in another order is the same request. */
-function canonicalJson(value: unknown): string {
+export function canonicalJson(value: unknown): string {
   return (
     JSON.stringify(value, (_key, part: unknown) =>
       part !== null && typeof part === 'object' && !Array.isArray(part)
