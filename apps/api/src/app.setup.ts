@@ -85,11 +85,14 @@ function serveWeb(app: NestExpressApplication, webFolder: string): void {
   app.use('/assets', express.static(path.join(webFolder, 'assets'), { index: false, immutable: true, maxAge: '365d' }));
   app.use(express.static(webFolder, { index: false, maxAge: '1h', etag: true }));
   app.use((request: Request, response: Response, next: NextFunction) => {
-    if (request.path === '/api' || request.path.startsWith('/api/')) return next();
-    if (request.method !== 'GET' && request.method !== 'HEAD') return next();
-    if (path.extname(request.path) !== '' || request.accepts(['html', 'json']) !== 'html') {
-      return next(new DomainError('not-found', 'There is nothing at this address.'));
-    }
+    if (request.path.startsWith(`/${API_PREFIX}/`)) return next();
+    const isPage =
+      (request.method === 'GET' || request.method === 'HEAD') &&
+      request.path !== '/api' &&
+      !request.path.startsWith('/api/') &&
+      path.extname(request.path) === '' &&
+      request.accepts(['html', 'json']) === 'html';
+    if (!isPage) return next(new DomainError('not-found', 'There is nothing at this address.'));
     if (!existsSync(page)) {
       return next(new DomainError('unavailable', 'The web pages are not built yet: run "npm run build".'));
     }

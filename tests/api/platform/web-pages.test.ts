@@ -33,7 +33,7 @@ describe('the web pages', () => {
   it('never stand in for a missing file or a missing part of the api', async () => {
     for (const address of ['/assets/main-old999.js', '/favicon.png', '/api/v1/nothing', '/api']) {
       const response = await app.http().get(address).set('Accept', 'text/html').expect(404);
-      expect(response.headers['content-type']).toContain('application/problem+json');
+      expect([address, response.headers['content-type']]).toEqual([address, 'application/problem+json; charset=utf-8']);
     }
     await app.http().post('/proposals').set('Accept', 'text/html').expect(404);
   });

@@ -1,6 +1,7 @@
 import { createParamDecorator, type ExecutionContext } from '@nestjs/common';
 import type { Request } from 'express';
 import { DomainError } from './domain-error.js';
+import { documentsHeader } from './header-parameter.js';
 
 /**
  * The version in an `If-Match` header such as `"7"`.
@@ -25,6 +26,8 @@ export function etagOf(version: number): string {
 }
 
 /** Parameter decorator: the version that the client says it is changing. */
-export const IfMatch = createParamDecorator((_: unknown, context: ExecutionContext): number =>
-  parseIfMatch(context.switchToHttp().getRequest<Request>().header('if-match')),
+export const IfMatch = createParamDecorator(
+  (_: unknown, context: ExecutionContext): number =>
+    parseIfMatch(context.switchToHttp().getRequest<Request>().header('if-match')),
+  [documentsHeader('If-Match', 'The version being changed, as the ETag of its last answer gave it: `"7"`.', true)],
 );

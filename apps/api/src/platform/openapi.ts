@@ -1,5 +1,6 @@
 import type { INestApplication } from '@nestjs/common';
 import { DocumentBuilder, type OpenAPIObject, SwaggerModule } from '@nestjs/swagger';
+import { Problem } from '@faintward/contracts/errors';
 import { z } from 'zod';
 import { ACCESS_COOKIE } from './jwt.strategy.js';
 import { API_PREFIX } from './api-prefix.js';
@@ -91,7 +92,35 @@ export function buildOpenApi(app: INestApplication, version: string): OpenAPIObj
     .setVersion(version)
     .addCookieAuth(ACCESS_COOKIE, { type: 'apiKey', in: 'cookie', name: ACCESS_COOKIE }, 'session')
     .build();
-  return SwaggerModule.createDocument(app, settings, { standardSchemaConverter: schemaConverter() });
+  const convert = schemaConverter();
+  const document = SwaggerModule.createDocument(app, settings, { standardSchemaConverter: convert });
+  completeAnswers(document);
+  Object.assign((document.components ??= {}), {
+    schemas: { ...document.components.schemas, ...convert(Problem, { schemaType: 'output' })?.components },
+  });
+  return document;
+}
+
+/**
+ * An answer declared without a status has the framework's: 201 after POST, 200 otherwise. And every operation can refuse,
+ * always in the same form.
+ */
+function completeAnswers(document: OpenAPIObject): void {
+  for (const methods of Object.values(document.paths)) {
+    for (const [method, operation] of Object.entries(
+      methods as Record<string, { responses: Record<string, unknown> }>,
+    )) {
+      const { default: declared, ...responses } = operation.responses;
+      operation.responses = {
+        ...responses,
+        ...(declared === undefined ? {} : { [method === 'post' ? '201' : '200']: declared }),
+        default: {
+          description: 'Refused: the problem says why.',
+          content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } },
+        },
+      };
+    }
+  }
 }
 
 /** Serves the document at `/api/v1/openapi.json` and a readable page at `/api/v1/docs`, both made at the first request. */
