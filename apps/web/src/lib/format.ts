@@ -71,5 +71,6 @@ export function formatDuration(seconds: number | null | undefined): string {
   const minutes = Math.round(seconds / 60);
   if (minutes < 60) return `${minutes} min`;
   const hours = Math.floor(minutes / 60);
-  return minutes % 60 === 0 ? `${formatNumber(hours)} h` : `${formatNumber(hours)} h ${minutes % 60} min`;
+  const whole = (value: number) => formatNumber(value, { decimals: 0 });
+  return minutes % 60 === 0 ? `${whole(hours)} h` : `${whole(hours)} h ${minutes % 60} min`;
 }

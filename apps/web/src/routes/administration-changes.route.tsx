@@ -38,7 +38,6 @@ export function Component() {
         error={query.error}
         isFetching={query.isFetching}
         onRetry={() => void query.refetch()}
-        searchLabel="Search the trail"
         empty={<EmptyState title="Nothing has been changed yet" />}
       />
     </PageFrame>

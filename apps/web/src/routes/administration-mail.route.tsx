@@ -45,7 +45,6 @@ export function Component() {
         error={query.error}
         isFetching={query.isFetching}
         onRetry={() => void query.refetch()}
-        searchLabel="Search address and subject"
         empty={<EmptyState title="No mail has been written yet" />}
       />
     </PageFrame>

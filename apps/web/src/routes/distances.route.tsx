@@ -21,7 +21,7 @@ import { DistancesTable } from '../features/distances/components/DistancesTable'
 import { distanceQuantities } from '../features/distances/quantities';
 import { ApiError } from '../lib/api';
 import { downloadText, toCsv } from '../lib/csv';
-import { counted, formatNumber } from '../lib/format';
+import { counted } from '../lib/format';
 import { useDebounced } from '../lib/useDebounced';
 import { Note } from '../ui/Note';
 import { useNotices } from '../ui/Notices';
@@ -129,7 +129,7 @@ export function Component() {
                 ))}
                 {row && (
                   <Panel
-                    title={`At z = ${formatNumber(row.redshift, { significant: 6 })}`}
+                    title={`At z = ${String(row.redshift).replace('-', '−')}`}
                     note={
                       data.rows.length > 1
                         ? `${counted(data.rows.length, 'redshift')}; choose a row of the table below to see it here`

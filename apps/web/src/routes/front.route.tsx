@@ -18,7 +18,7 @@ export function Component() {
   const me = useQuery(sessionQueries.me()).data;
   return (
     <Box sx={{ maxWidth: 1360, mx: 'auto', px: { xs: 2, md: 5 }, pt: { xs: 4, md: 7 }, pb: 6 }}>
-      <Typography variant="body2" color="text.secondary">
+      <Typography variant="body2" color="textSecondary">
         {calls.data?.observatoryName ?? '\u00a0'}
       </Typography>
       <Typography variant="h1" sx={{ fontSize: { xs: '2rem', md: '2.75rem' }, maxWidth: 900, textWrap: 'balance' }}>
@@ -78,7 +78,7 @@ export function Component() {
           aria-labelledby="calculators"
           sx={{ borderTop: 2, borderColor: 'text.primary', pt: 2 }}
         >
-          <Typography variant="body2" color="text.secondary">
+          <Typography variant="body2" color="textSecondary">
             No account needed
           </Typography>
           <Typography variant="h2" id="calculators" sx={{ fontSize: '1.625rem' }}>
@@ -128,7 +128,7 @@ function Entry({ title, text, to }: { title: string; text: string; to: string })
       >
         {title} <span aria-hidden="true">→</span>
       </Typography>
-      <Typography color="text.secondary" component="span" sx={{ display: 'block' }}>
+      <Typography color="textSecondary" component="span" sx={{ display: 'block' }}>
         {text}
       </Typography>
     </Box>

@@ -31,7 +31,7 @@ export function Component() {
               {list.rows.map((telescope) => (
                 <Box component="section" key={telescope.telescopeId} aria-label={telescope.name}>
                   <Typography variant="h2">{telescope.name}</Typography>
-                  <Typography color="text.secondary" sx={{ mb: 2 }}>
+                  <Typography color="textSecondary" sx={{ mb: 2 }}>
                     {formatNumber(telescope.diameterM, { decimals: 1 })} m, obstruction{' '}
                     {formatNumber(telescope.obstructionDiameterM, { decimals: 1 })} m · {telescope.site.name},{' '}
                     {formatNumber(telescope.site.elevationM, { decimals: 0 })} m · seeing, median{' '}

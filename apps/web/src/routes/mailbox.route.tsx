@@ -35,12 +35,7 @@ export function Component() {
                 >
                   <Box component="summary" sx={{ p: 2, cursor: 'pointer' }}>
                     <strong>{message.subject}</strong>
-                    <Typography
-                      variant="body2"
-                      color="text.secondary"
-                      component="span"
-                      sx={{ display: 'block', pl: 2 }}
-                    >
+                    <Typography variant="body2" color="textSecondary" component="span" sx={{ display: 'block', pl: 2 }}>
                       to {message.to}, <TimeDisplay instant={message.receivedAt} short />
                     </Typography>
                   </Box>

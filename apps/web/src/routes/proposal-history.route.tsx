@@ -67,7 +67,7 @@ function Entry({ entry }: { entry: ProposalChange }) {
       <Box sx={{ minWidth: 0, overflowWrap: 'anywhere' }}>
         {entry.subjectName || entry.subject} {entry.action}
         {entry.changes.slice(0, 8).map((one) => (
-          <Typography key={one.field} variant="body2" color="text.secondary">
+          <Typography key={one.field} variant="body2" color="textSecondary">
             {one.field}: {describe(one.before)} → {describe(one.after)}
           </Typography>
         ))}

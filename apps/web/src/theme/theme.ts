@@ -141,7 +141,6 @@ export const theme = createTheme({
   components: {
     MuiCssBaseline: {
       styleOverrides: {
-        html: { scrollbarGutter: 'stable' },
         body: { fontVariantNumeric: 'tabular-nums lining-nums', fontFeatureSettings: 'normal' },
         ...perScheme((tokens) => ({
           '--fw-veil': tokens.veil,

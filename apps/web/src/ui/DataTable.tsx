@@ -15,6 +15,7 @@ import {
 import { useEffect, useMemo, useState, type ReactNode } from 'react';
 import type { TableParams } from '../lib/useTableParams';
 import { EmptyState } from './EmptyState';
+import { MathSymbol } from './MathSymbol';
 import { Note } from './Note';
 import { ProblemDisplay } from './ProblemDisplay';
 
@@ -116,7 +117,6 @@ export function DataTable<Row extends GridValidRowModel>({
           rows={rows ?? []}
           getRowId={getRowId}
           loading={isPending || isFetching}
-          density="compact"
           rowHeight={38}
           columnHeaderHeight={48}
           disableRowSelectionOnClick
@@ -206,8 +206,8 @@ function toGridColumn<Row extends GridValidRowModel>(column: TableColumn<Row>): 
     renderHeader:
       rest.renderHeader ??
       (() => (
-        <Box component="span" sx={{ lineHeight: 1.25, display: 'block', whiteSpace: 'nowrap' }}>
-          {rest.headerName ?? rest.field}
+        <Box component="span" sx={{ lineHeight: 1.25, display: 'block', whiteSpace: 'nowrap', textAlign: align }}>
+          <MathSymbol text={rest.headerName ?? rest.field} />
           {unit && (
             <Box component="small" sx={{ display: 'block', fontWeight: 400, fontSize: '0.75rem' }}>
               {unit}

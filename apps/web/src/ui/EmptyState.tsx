@@ -24,7 +24,7 @@ export function EmptyState({ title, children, action }: { title: string; childre
         {title}
       </Typography>
       {children && (
-        <Typography color="text.secondary" component="div" sx={{ mt: 0.75 }}>
+        <Typography color="textSecondary" component="div" sx={{ mt: 0.75 }}>
           {children}
         </Typography>
       )}

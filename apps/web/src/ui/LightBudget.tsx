@@ -66,7 +66,7 @@ export function LightBudget({
       <Box component="figcaption" sx={{ display: 'flex', alignItems: 'baseline', gap: 1 }}>
         <Box sx={{ flex: 1, fontSize: '0.8125rem', color: 'text.secondary' }}>
           {title}
-          Each step in magnitudes with the running total; losses in copper, gains in green.
+          Each step in magnitudes with the running total; losses run right, gains left.
         </Box>
         <Button
           size="small"

@@ -31,7 +31,7 @@ export function PageFrame({ title, eyebrow, actions, breadcrumbs, width = 'page'
       {breadcrumbs && breadcrumbs.length > 0 && (
         <Breadcrumbs aria-label="Where this page is" sx={{ fontSize: '0.8125rem', mb: 1 }}>
           {breadcrumbs.map((crumb) => (
-            <Link key={crumb.to} component={RouterLink} to={crumb.to} color="text.secondary">
+            <Link key={crumb.to} component={RouterLink} to={crumb.to} color="textSecondary">
               {crumb.label}
             </Link>
           ))}
@@ -44,7 +44,7 @@ export function PageFrame({ title, eyebrow, actions, breadcrumbs, width = 'page'
       >
         <Box sx={{ flex: 1, minWidth: 0 }}>
           {eyebrow && (
-            <Typography variant="body2" color="text.secondary" component="div">
+            <Typography variant="body2" color="textSecondary" component="div">
               {eyebrow}
             </Typography>
           )}

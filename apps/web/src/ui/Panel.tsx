@@ -37,7 +37,7 @@ export function Panel({ title, note, actions, children, flush = false, sx }: Pan
               </Typography>
             )}
             {note && (
-              <Typography variant="body2" color="text.secondary" component="div" sx={{ mt: 0.25 }}>
+              <Typography variant="body2" color="textSecondary" component="div" sx={{ mt: 0.25 }}>
                 {note}
               </Typography>
             )}

@@ -51,7 +51,7 @@ export function ProblemDisplay({ error, what, onRetry, hideFieldErrors = false }
         </ul>
       )}
       {problem?.errorId && (
-        <Typography variant="body2" color="text.secondary" component="div">
+        <Typography variant="body2" color="textSecondary" component="div">
           Reference for the staff: <code>{problem.errorId}</code>
         </Typography>
       )}

@@ -101,7 +101,7 @@ export function Explained({ explanation, children }: { explanation: Explanation;
           </Box>
         )}
         {explanation.source && (
-          <Typography variant="body2" color="text.secondary" sx={{ mt: 1 }}>
+          <Typography variant="body2" color="textSecondary" sx={{ mt: 1 }}>
             Source: {explanation.source}
           </Typography>
         )}

@@ -31,13 +31,13 @@ export function EstimateView({ estimate }: { estimate: Estimate }) {
           <Answer estimate={estimate} />
         ) : (
           <>
-            <Typography variant="body2" color="text.secondary">
+            <Typography variant="body2" color="textSecondary">
               Not feasible
             </Typography>
             <Typography variant="h2" component="p" sx={{ my: 0.5 }}>
               {estimate.reason.message}
             </Typography>
-            <Typography variant="body2" color="text.secondary">
+            <Typography variant="body2" color="textSecondary">
               There is no exposure time that reaches this goal. The ledger below shows how far the light comes.
             </Typography>
           </>
@@ -116,7 +116,7 @@ export function EstimateView({ estimate }: { estimate: Estimate }) {
           </Panel>
         </Box>
       )}
-      <Typography variant="body2" color="text.secondary">
+      <Typography variant="body2" color="textSecondary">
         A planning figure, to be confirmed by the observatory’s instrument team. {estimate.cosmologyId}, engine{' '}
         {estimate.engineVersion}, inputs <code>{estimate.inputHash.slice(0, 12)}</code>.
       </Typography>
@@ -143,7 +143,7 @@ function Answer({ estimate }: { estimate: FeasibleEstimate }) {
 function Big({ label, value }: { label: string; value: string }) {
   return (
     <Box>
-      <Typography variant="body2" color="text.secondary">
+      <Typography variant="body2" color="textSecondary">
         {label}
       </Typography>
       <Typography sx={{ fontSize: '1.625rem', fontWeight: 600, lineHeight: 1.25, whiteSpace: 'nowrap' }}>
@@ -166,7 +166,7 @@ function Datum({
 }) {
   return (
     <div>
-      <Typography variant="body2" color="text.secondary" component="dt">
+      <Typography variant="body2" color="textSecondary" component="dt">
         {label}
       </Typography>
       <dd>
@@ -207,6 +207,11 @@ function Ledger({ rows, total }: { rows: readonly (readonly [string, number])[];
   );
 }
 
+function shareText(share: number): string {
+  if (share > 0 && share < 0.0005) return '< 0.1';
+  return formatNumber(100 * share, { decimals: share > 0 && share < 0.01 ? 1 : 0 });
+}
+
 /** Shares of the noise variance, as one bar with its numbers written beside. */
 function NoiseShares({ estimate }: { estimate: FeasibleEstimate }) {
   const shares = [
@@ -226,7 +231,7 @@ function NoiseShares({ estimate }: { estimate: FeasibleEstimate }) {
         {shares.map(([label, share, fill]) => (
           <span key={label} style={{ display: 'inline-flex', gap: 6, alignItems: 'center' }}>
             <span aria-hidden="true" style={{ width: 8, height: 8, background: fill }} />
-            {label} {formatNumber(100 * share, { decimals: share > 0 && share < 0.01 ? 1 : 0 })} %
+            {label} {shareText(share)} %
           </span>
         ))}
         <span style={{ color: colour.inkSoft }}>of the noise variance</span>

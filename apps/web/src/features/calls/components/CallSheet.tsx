@@ -20,7 +20,7 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
     <Box component="article" aria-label={`Call for ${call.name}`} sx={{ borderTop: `2px solid ${colour.ink}`, pt: 2 }}>
       <Box sx={{ display: 'flex', gap: 3, flexWrap: 'wrap', alignItems: 'flex-end' }}>
         <Box sx={{ flex: '1 1 320px', minWidth: 0 }}>
-          <Typography variant="body2" color="text.secondary">
+          <Typography variant="body2" color="textSecondary">
             {isOpen ? 'Call for proposals, open' : 'Call for proposals, announced'}
           </Typography>
           <Typography variant="h2" sx={{ fontSize: '1.625rem' }}>
@@ -28,7 +28,7 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
           </Typography>
         </Box>
         <Box sx={{ flex: '0 1 auto' }}>
-          <Typography variant="body2" color="text.secondary">
+          <Typography variant="body2" color="textSecondary">
             {isOpen ? 'Closes in' : 'Opens in'}
           </Typography>
           <Typography sx={{ fontSize: '1.625rem', fontWeight: 600, lineHeight: 1.3, color: 'faintward.accent' }}>
@@ -52,7 +52,7 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
           borderCollapse: 'collapse',
           fontSize: '0.875rem',
           '& th, & td': { borderBottom: 1, borderColor: 'divider', py: 0.9, px: 1.25, textAlign: 'right' },
-          '& th:first-of-type, & td:first-of-type': { pl: 0, textAlign: 'left' },
+          '& thead th:first-of-type, & tbody th': { pl: 0, textAlign: 'left' },
           '& thead th': { color: 'text.secondary', fontSize: '0.8125rem' },
           '& small': { display: 'block', fontWeight: 400 },
           '& .bar': { width: '34%', display: { xs: 'none', sm: 'table-cell' } },

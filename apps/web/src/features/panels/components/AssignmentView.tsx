@@ -157,11 +157,11 @@ function ProposalsPanel({ panel }: { panel: PanelData }) {
               }}
             >
               <Box sx={{ minWidth: 0 }}>
-                <Typography variant="figure" component="span" color="text.secondary">
+                <Typography variant="figure" component="span" color="textSecondary">
                   {proposal.label}
                 </Typography>{' '}
                 <strong>{proposal.title}</strong>
-                <Typography variant="body2" color="text.secondary">
+                <Typography variant="body2" color="textSecondary">
                   {hoursText(proposal.requestedHours)} h
                 </Typography>
               </Box>

@@ -47,7 +47,7 @@ export function AwardDialog({ panelId, row, onClose }: { panelId: string; row: R
         <DialogContent>
           <Typography sx={{ mb: 2 }}>
             {row.title}
-            <Typography component="span" color="text.secondary" sx={{ display: 'block' }}>
+            <Typography component="span" color="textSecondary" sx={{ display: 'block' }}>
               asked for {hoursText(row.requestedHours)} h
             </Typography>
           </Typography>
@@ -71,7 +71,7 @@ export function AwardDialog({ panelId, row, onClose }: { panelId: string; row: R
                 options={AwardStanding.options.map((value) => ({ value, label: value }))}
               />
             </Box>
-            <Typography variant="body2" color="text.secondary">
+            <Typography variant="body2" color="textSecondary">
               {AwardStanding.options.map((standing) => standingHints[standing]).join(' · ')}
             </Typography>
             <TextField

@@ -30,7 +30,7 @@ export function RankingGrid({ ranking }: { ranking: Ranking }) {
         minWidth: 240,
         renderCell: ({ row }) => (
           <Box sx={{ lineHeight: 1.3, whiteSpace: 'normal', py: 0.5 }}>
-            <Typography variant="figure" component="span" color="text.secondary">
+            <Typography variant="figure" component="span" color="textSecondary">
               {row.label}
             </Typography>{' '}
             <strong>{row.title}</strong>

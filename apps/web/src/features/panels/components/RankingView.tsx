@@ -38,7 +38,7 @@ export function RankingView({ ranking }: { ranking: Ranking }) {
         <Typography variant="body2" sx={{ color: 'secondary.main', mt: 0.75 }} aria-live="polite">
           {describeCut(ranking)}
         </Typography>
-        <Typography variant="body2" color="text.secondary">
+        <Typography variant="body2" color="textSecondary">
           {ranking.method}
         </Typography>
       </Box>

@@ -59,7 +59,7 @@ export function CaseSectionEditor({
             {section.body}
           </Typography>
         ) : (
-          <Typography color="text.secondary">Nothing has been written here.</Typography>
+          <Typography color="textSecondary">Nothing has been written here.</Typography>
         )}
       </Panel>
     );
@@ -69,7 +69,7 @@ export function CaseSectionEditor({
       title={section.isRequired ? section.title : `${section.title} (if wanted)`}
       note={<span id={`${id}-guidance`}>{section.guidance}</span>}
       actions={
-        <Typography variant="body2" color="text.secondary" component="div" aria-live="polite">
+        <Typography variant="body2" color="textSecondary" component="div" aria-live="polite">
           <SaveStatus state={autosave.state} onRetry={autosave.retry} />
         </Typography>
       }

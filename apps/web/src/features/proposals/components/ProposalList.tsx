@@ -55,7 +55,7 @@ function ProposalEntry({ proposal }: { proposal: ProposalSummary }) {
       }}
     >
       <Box sx={{ minWidth: 0 }}>
-        <Typography variant="body2" color="text.secondary">
+        <Typography variant="body2" color="textSecondary">
           <Typography variant="figure" component="span">
             {proposal.label}
           </Typography>
@@ -74,7 +74,7 @@ function ProposalEntry({ proposal }: { proposal: ProposalSummary }) {
         >
           {proposal.title}
         </Link>
-        <Typography variant="body2" color="text.secondary">
+        <Typography variant="body2" color="textSecondary">
           {part}
         </Typography>
       </Box>

@@ -16,7 +16,7 @@ export function ProposalSummaryView({ proposal }: { proposal: Proposal }) {
           {proposal.abstract}
         </Typography>
       ) : (
-        <Typography color="text.secondary">There is no summary yet.</Typography>
+        <Typography color="textSecondary">There is no summary yet.</Typography>
       )}
     </Panel>
   );

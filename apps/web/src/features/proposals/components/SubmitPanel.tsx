@@ -35,7 +35,7 @@ export function SubmitPanel({ proposal, report }: { proposal: Proposal; report: 
       }
     >
       {!canSubmit && !canWithdraw && (
-        <Typography color="text.secondary">
+        <Typography color="textSecondary">
           {proposal.state === 'draft' || proposal.state === 'submitted'
             ? 'Only the principal investigator submits or withdraws, until the deadline.'
             : 'This proposal can no longer be submitted or withdrawn.'}

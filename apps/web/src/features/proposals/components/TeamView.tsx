@@ -61,7 +61,7 @@ export function TeamView({
               <Box sx={{ minWidth: 0 }}>
                 <strong>{member.name}</strong>
                 {member.isMe && ' (you)'}
-                <Typography variant="body2" color="text.secondary">
+                <Typography variant="body2" color="textSecondary">
                   {member.institutionName ?? 'no institution given'}
                 </Typography>
               </Box>
@@ -94,7 +94,7 @@ export function TeamView({
                   accessWords[member.access]
                 )}
               </Box>
-              <Typography variant="body2" color="text.secondary" component="div">
+              <Typography variant="body2" color="textSecondary" component="div">
                 {member.signedAt ? (
                   <>
                     signed <TimeDisplay instant={member.signedAt} short />

@@ -78,20 +78,20 @@ function Entry({ row }: { row: ReadingListEntry }) {
       }}
     >
       <Box sx={{ minWidth: 0 }}>
-        <Typography variant="figure" component="span" color="text.secondary">
+        <Typography variant="figure" component="span" color="textSecondary">
           {row.label}
         </Typography>{' '}
         <Link component={RouterLink} to={paths.review.to(row.proposalId)} color="text.primary" sx={{ fontWeight: 600 }}>
           {row.title}
         </Link>
         {row.isLead && (
-          <Typography component="span" variant="body2" color="text.secondary">
+          <Typography component="span" variant="body2" color="textSecondary">
             {' '}
             · lead reviewer
           </Typography>
         )}
       </Box>
-      <Typography variant="body2" color="text.secondary" sx={{ display: { xs: 'none', md: 'block' } }}>
+      <Typography variant="body2" color="textSecondary" sx={{ display: { xs: 'none', md: 'block' } }}>
         {counted(row.targetCount, 'target')}, {formatNumber(hours, { decimals: 1 })} h
       </Typography>
       <Typography variant="body2" sx={{ color: row.state === 'complete' ? 'success.main' : 'text.secondary' }}>

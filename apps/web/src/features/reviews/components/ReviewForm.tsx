@@ -54,7 +54,7 @@ export function ReviewForm({ review }: { review: Review }) {
     <Panel
       title="Your review"
       actions={
-        <Typography variant="body2" color="text.secondary" component="div" aria-live="polite">
+        <Typography variant="body2" color="textSecondary" component="div" aria-live="polite">
           <SaveStatus state={autosave.state} onRetry={autosave.retry} />
         </Typography>
       }

@@ -28,7 +28,7 @@ export function SubmittedProposal({ content }: { content: Review['content'] }) {
           {content.abstract || 'No summary was given.'}
         </Typography>
         {content.team && (
-          <Typography variant="body2" color="text.secondary" sx={{ mt: 1.5 }}>
+          <Typography variant="body2" color="textSecondary" sx={{ mt: 1.5 }}>
             {content.team
               .map((member) => `${member.name}${member.institutionName ? ` (${member.institutionName})` : ''}`)
               .join(', ')}
