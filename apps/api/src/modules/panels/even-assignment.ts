@@ -22,8 +22,9 @@ export interface AssignmentSolution {
  * one wherever that can be. As many pairs are made as can be made. The same input gives the same pairs.
  *
  * Reviews are handed out one at a time. Each goes along an alternating path, on which reviewers pass one review on to
- * somebody freer, to the least loaded reviewer that such a path reaches; this is the successive-path method for a flow with
- * convex costs (Harvey, Ladner, Lovász & Tamir 2006, Journal of Algorithms 59, 53, for tasks of one reviewer each).
+ * somebody freer, to the least loaded reviewer that such a path reaches: successive shortest paths for a flow whose costs are
+ * convex in the loads. (For tasks of one reviewer each it is the optimal semi-matching of Harvey, Ladner, Lovász & Tamir 2006,
+ * cited from memory; the tests compare with all possible assignments.)
  */
 export function assignEvenly(problem: AssignmentProblem): AssignmentSolution {
   const { proposalIds, reviewerIds, reviewersPerProposal, isConflicted } = problem;
