@@ -548,6 +548,11 @@ describe('input that cannot be computed with is refused by the path of its field
       'mode.skyAbMagPerArcsec2.bright',
       { mode: { ...mode, skyAbMagPerArcsec2: { dark: 21, grey: 20, bright: undefined } } },
     ],
+    ['conditions.moonClass', { conditions: { airmass: 1, moonClass: 'blue', transparency: 'clear' } }],
+    ['conditions.transparency', { conditions: { airmass: 1, moonClass: 'dark', transparency: 'fog' } }],
+    ['goal.per', { goal: { kind: 'signalToNoise', value: 5, per: 'night' } }],
+    ['mode.kind', { mode: { ...mode, kind: 'integralField' } }],
+    ['mode.skySubtraction.kind', { mode: { ...mode, skySubtraction: { kind: 'none' } } }],
     ['limits.maximumExposureCount', { limits: { maximumExposureCount: 0 } }],
   ];
 

@@ -51,7 +51,7 @@ const LONG_REQUEST_NIGHTS = 3;
  *
  * What cannot be reached is an answer (`outcome: 'infeasible'` with a reason), never NaN or Infinity.
  *
- * @throws {OutOfDomainError} if a field of the input is missing its domain; `field` is its path
+ * @throws {OutOfDomainError} if a field of the input cannot be computed with; `field` is its path
  */
 export function estimate(input: EstimateInput): Estimate {
   validateInput(input);

@@ -41,10 +41,9 @@ export function bestApertureRadiusArcsec(index: number, circularisedRadiusArcsec
 /**
  * Fraction of a Sérsic profile inside a centred circle after convolution with a Gaussian.
  *
- * Resolved profiles: the light is cut into shells of equal light, and the part of each, displaced and blurred, that falls
- * into the circle is added: within 0.2 % for 0.3 ≤ n ≤ 6, 1 % at n = 8. Nearly unresolved ones (R_e < FWHM/5, sooner for n > 1): a
- * Gaussian with the half-light radius √(R_e² + (FWHM/2)²), which holds up to 3 % too much of the light at n = 1 and 6 %
- * at n = 4; between that and twice that size the two are blended.
+ * Resolved profiles: convolved, ring by ring, within 0.1 % (checked for 0.3 ≤ n ≤ 8, R_e up to 20 FWHM). Nearly
+ * unresolved ones (R_e < FWHM/5, sooner for n > 1): a Gaussian with the half-light radius √(R_e² + (FWHM/2)²), which holds
+ * up to 4 % too much of the light; between that and twice that size the two are blended.
  */
 export function enclosedFractionAfterSeeing(
   index: number,
@@ -94,38 +93,57 @@ function smoothStep(t: number): number {
   return t * t * (3 - 2 * t);
 }
 
-const SHELL_COUNT = 24;
-const shellsByIndex = new Map<number, Float64Array>();
-const MOST_CACHED_INDICES = 200;
-
-/** Radii over R_e at the Gauss–Legendre nodes of enclosed light, ascending. Kept per index: programmes use few of them. */
-function shellRadii(index: number): Float64Array {
-  const known = shellsByIndex.get(index);
-  if (known !== undefined) return known;
-  const b = inverseRegularizedGammaP(2 * index, 0.5);
-  const { nodes } = gaussLegendreRule(SHELL_COUNT);
-  const radii = nodes.map((node) => (inverseRegularizedGammaP(2 * index, (1 + node) / 2) / b) ** index);
-  if (shellsByIndex.size >= MOST_CACHED_INDICES) shellsByIndex.clear();
-  shellsByIndex.set(index, radii);
-  return radii;
+/** What the integral needs of an index: b and the logarithm of b^(2n) / (n Γ(2n)), which makes the total light 1. */
+interface ProfileConstants {
+  b: number;
+  logNorm: number;
 }
 
+const constantsByIndex = new Map<number, ProfileConstants>();
+const MOST_CACHED_INDICES = 1000;
+
+/** Kept per index, because solving for b costs as much as the rest and programmes use few indices. */
+function profileConstants(index: number): ProfileConstants {
+  const known = constantsByIndex.get(index);
+  if (known !== undefined) return known;
+  const b = inverseRegularizedGammaP(2 * index, 0.5);
+  const constants = { b, logNorm: 2 * index * Math.log(b) - Math.log(index) - logGamma(2 * index) };
+  if (constantsByIndex.size >= MOST_CACHED_INDICES) constantsByIndex.clear();
+  constantsByIndex.set(index, constants);
+  return constants;
+}
+
+const RING_COUNT = 24;
+
+/**
+ * Light in the circle: all of the rings that lie well inside, and of the rings near its edge the part that the blur
+ * carries in. Rings are nodes in τ = (R/R_e)^(1/m), m = max(1, n), in which the cusp of the profile is smooth.
+ *
+ * @param halfLightOverSigma  R_e, in units of the Gaussian's σ like the aperture
+ */
 function convolvedFraction(
   index: number,
-  radiusOverSigma: number,
+  halfLightOverSigma: number,
   apertureOverSigma: number,
   nodeCount: number,
 ): number {
-  const radii = shellRadii(index);
-  const { weights } = gaussLegendreRule(SHELL_COUNT);
+  const { b, logNorm } = profileConstants(index);
+  const innermost = Math.max(0, apertureOverSigma - CUT_SIGMA) / halfLightOverSigma;
+  const outermost = (apertureOverSigma + CUT_SIGMA) / halfLightOverSigma;
+  const wholly = innermost === 0 ? 0 : regularizedGammaP(2 * index, b * innermost ** (1 / index));
+  const m = Math.max(1, index);
+  const low = innermost ** (1 / m);
+  const half = (outermost ** (1 / m) - low) / 2;
+  const { nodes, weights } = gaussLegendreRule(RING_COUNT);
   let sum = 0;
-  for (let i = 0; i < radii.length; i++) {
-    const share = displacedGaussianFraction((radii[i] ?? 0) * radiusOverSigma, apertureOverSigma, nodeCount);
-    // Shells come in order of radius: once one misses the aperture, all further ones do.
-    if (share === 0) break;
-    sum += (weights[i] ?? 0) * share;
+  for (let i = 0; i < RING_COUNT; i++) {
+    const tau = low + half * (1 + (nodes[i] ?? 0));
+    const radius = tau ** m;
+    const light = m * tau ** (2 * m - 1) * Math.exp(logNorm - b * (index >= 1 ? tau : tau ** (1 / index)));
+    sum +=
+      (weights[i] ?? 0) * light * displacedGaussianFraction(radius * halfLightOverSigma, apertureOverSigma, nodeCount);
   }
-  return sum / 2;
+  return Math.min(1, wholly + half * sum);
 }
 
 /** Gaussians are cut off here; e^(−6²/2) is 2e-8. */

@@ -17,6 +17,10 @@ function unknownChoice(field: string, value: never, allowed: string): never {
   throw new OutOfDomainError(field, value, allowed);
 }
 
+function oneOf(field: string, value: unknown, allowed: readonly string[]): void {
+  if (!allowed.some((each) => each === value)) throw new OutOfDomainError(field, value, `one of ${allowed.join(', ')}`);
+}
+
 function whole(field: string, value: number, lowest: number, highest: number): void {
   if (!Number.isInteger(value)) throw new OutOfDomainError(field, value, 'a whole number');
   inRange(field, value, lowest, highest);
@@ -44,6 +48,8 @@ export function validateInput(input: EstimateInput): void {
   if (conditions.seeingArcsec !== undefined)
     inRange('conditions.seeingArcsec', conditions.seeingArcsec, 0.05, 10, 'arcsec');
   inRange('conditions.airmass', conditions.airmass, 1, 10);
+  oneOf('conditions.moonClass', conditions.moonClass, ['dark', 'grey', 'bright']);
+  oneOf('conditions.transparency', conditions.transparency, ['clear', 'thinCloud']);
   validateMode(mode);
   validateGoal(goal, input);
   if (limits?.maximumExposureCount !== undefined) {
@@ -138,6 +144,7 @@ function validateExtent(extent: Extent): void {
 }
 
 function validateMode(mode: InstrumentMode): void {
+  oneOf('mode.kind', mode.kind, ['imaging', 'slitSpectroscopy']);
   inRange('mode.wavelengthLowNm', mode.wavelengthLowNm, 100, 1e5, 'nm');
   inRange('mode.wavelengthHighNm', mode.wavelengthHighNm, 100, 1e5, 'nm');
   ordered('mode.wavelengthLowNm', mode.wavelengthLowNm, 'mode.wavelengthHighNm', mode.wavelengthHighNm);
@@ -172,6 +179,9 @@ function validateMode(mode: InstrumentMode): void {
   if (mode.minimumExposureCount !== undefined) whole('mode.minimumExposureCount', mode.minimumExposureCount, 1, 1000);
   if (mode.systematicErrorFraction !== undefined) {
     inRange('mode.systematicErrorFraction', mode.systematicErrorFraction, 0, 1);
+  }
+  if (mode.skySubtraction !== undefined) {
+    oneOf('mode.skySubtraction.kind', mode.skySubtraction.kind, ['wideArea', 'annulus', 'ditheredFrames']);
   }
   if (mode.skySubtraction?.kind === 'annulus') {
     inRange('mode.skySubtraction.backgroundPixelRatio', mode.skySubtraction.backgroundPixelRatio, 0.01, 1e9);
@@ -214,6 +224,7 @@ function validateGoal(goal: Goal, input: EstimateInput): void {
       unknownChoice('goal.kind', goal, 'signalToNoise, lineSignificance or exposureTime');
   }
   const per = goal.per ?? 'aperture';
+  oneOf('goal.per', per, ['aperture', 'arcsec2', 'pixel', 'resolutionElement']);
   if (per === 'resolutionElement' && mode.kind === 'imaging') {
     throw new OutOfDomainError('goal.per', per, 'aperture, arcsec2 or pixel for imaging');
   }
