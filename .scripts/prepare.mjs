@@ -11,8 +11,8 @@ const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '..');
 process.chdir(root);
 
 const [major, minor] = process.versions.node.split('.').map(Number);
-if (major < 20 || (major === 20 && minor < 19)) {
-  fail(`Faintward needs Node.js 20.19 or newer; this is ${process.versions.node}.`);
+if (!((major === 20 && minor >= 19) || (major === 22 && minor >= 12) || major > 22)) {
+  fail(`Faintward needs Node.js 20.19 or later of the 20 series, or 22.12 or newer; this is ${process.versions.node}.`);
 }
 
 const lockHash = createHash('sha256').update(readFileSync('package-lock.json')).digest('hex');
@@ -36,17 +36,27 @@ function npm(args) {
 }
 
 function findOrInstallChromium() {
-  const candidates = [process.env['CHROMIUM_PATH'], '/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'];
+  const candidates = [
+    process.env['CHROMIUM_PATH'],
+    '/usr/bin/chromium',
+    '/usr/bin/chromium-browser',
+    '/usr/bin/google-chrome',
+  ];
   if (candidates.some((file) => file && existsSync(file))) return;
   const isRoot = process.getuid?.() === 0;
   if (isRoot && existsSync('/usr/bin/apt-get')) {
     console.log('Chromium is missing: installing it from the distribution for the end-to-end tests ...');
     const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
     spawnSync('apt-get', ['update', '-qq'], { stdio: 'inherit', env });
-    const result = spawnSync('apt-get', ['install', '-y', '-qq', '--no-install-recommends', 'chromium'], { stdio: 'inherit', env });
+    const result = spawnSync('apt-get', ['install', '-y', '-qq', '--no-install-recommends', 'chromium'], {
+      stdio: 'inherit',
+      env,
+    });
     if (result.status === 0 && existsSync('/usr/bin/chromium')) return;
   }
-  fail('The end-to-end tests need Chromium. Install it (Debian: "apt-get install chromium") or set CHROMIUM_PATH to its executable.');
+  fail(
+    'The end-to-end tests need Chromium. Install it (Debian: "apt-get install chromium") or set CHROMIUM_PATH to its executable.',
+  );
 }
 
 function fail(message) {
