@@ -12,7 +12,7 @@ import type {
 import { daysFrom, middleOf, semesterDates, type SemesterDates } from './calendar.js';
 import type { DemoData, ProposalData, SemesterKey } from './demo-data.js';
 import { demoId } from './identifiers.js';
-import { randomStream } from './random.js';
+import { randomStream, type RandomStream } from './random.js';
 import { type DemoTarget, targetsOf } from './target-lists.js';
 
 /** Everything of the demo that is told, not computed: no magnitude, second or score in here comes from the engine. */
@@ -228,7 +228,10 @@ export function buildScenario(data: DemoData, now: Date): Scenario {
     proposals: semesters.flatMap((semester) =>
       data.proposals
         .filter((proposal) => proposal.semester === semester.key)
-        .map((proposal, index) => layOutProposal(proposal, index + 1, semester, data, now)),
+        .map((proposal) => layOutProposal(proposal, semester, data, now))
+        // The observatory numbers proposals as they are begun.
+        .sort((a, b) => a.createdAt.getTime() - b.createdAt.getTime())
+        .map((proposal, index): ProposalRow => ({ ...proposal, number: index + 1 })),
     ),
   };
 }
@@ -288,11 +291,10 @@ function layOutFacilities(data: DemoData, siteId: string, staffId: string, now: 
 
 function layOutProposal(
   proposal: ProposalData,
-  number: number,
   semester: SemesterRow,
   data: DemoData,
   now: Date,
-): ProposalRow {
+): Omit<ProposalRow, 'number'> {
   const random = randomStream(`proposal ${proposal.key}`);
   const id = demoId('proposal', proposal.key);
   const latest = new Date(Math.min(now.getTime() - 1_200_000, semester.deadlineAt.getTime()));
@@ -322,7 +324,6 @@ function layOutProposal(
       data,
       everybody.map(({ person }) => person),
     ),
-    number,
     title: proposal.title,
     abstract: lacking.has('abstract') ? '' : proposal.abstract,
     keywords: proposal.keywords,
@@ -338,12 +339,7 @@ function layOutProposal(
       personId: demoId('person', personOf(data, person).key),
       access,
       isPrincipal: position === 0,
-      signedAt:
-        submittedAt !== null
-          ? daysFrom(submittedAt, -random.between(0.05, 3))
-          : position === 0 || random.next() < 0.6
-            ? daysFrom(now, -random.between(0.1, 3))
-            : null,
+      signedAt: signatureOf(position === 0, submittedAt, now, random),
       position,
       createdAt: daysFrom(createdAt, position === 0 ? 0 : random.between(0.05, 1)),
     })),
@@ -365,6 +361,12 @@ function layOutProposal(
       }));
     }),
   };
+}
+
+/** The principal investigator signs by submitting; the others had done so before, and most of those on a draft have too. */
+function signatureOf(isPrincipal: boolean, submittedAt: Date | null, now: Date, random: RandomStream): Date | null {
+  if (submittedAt !== null) return isPrincipal ? submittedAt : daysFrom(submittedAt, -random.between(0.05, 0.4));
+  return !isPrincipal && random.next() < 0.6 ? daysFrom(now, -random.between(0.1, 3)) : null;
 }
 
 function stateOf(proposal: ProposalData): ProposalState {

@@ -27,12 +27,14 @@ export function targetsOf(
   siteLongitudeDegEast: number,
   notes: CommentsData['targetNotes'],
 ): DemoTarget[] {
+  // Apart from the places, so that the hours a proposal asks for do not change with the day.
   const random = randomStream(`targets of ${proposal.key}`);
+  const placeRandom = randomStream(`places of ${proposal.key}`);
   const centreDeg = rightAscensionAtMidnightDeg(semesterMiddle, siteLongitudeDegEast);
   const takenNames = new Set<string>();
   const targets: DemoTarget[] = [];
   for (const [groupIndex, group] of proposal.targets.entries()) {
-    const places = placesOf(group, centreDeg, random);
+    const places = placesOf(group, centreDeg, placeRandom);
     for (let index = 0; index < group.count; index += 1) {
       let place = places(index);
       let name = nameAt(group.designation, place);
