@@ -15,6 +15,12 @@ import { problemMessage } from '../ui/ProblemDisplay';
 import { paths } from './paths';
 import { SignInAgain } from './SignInAgain';
 
+const personLinks: ShellSection[] = [
+  { label: 'Profile', to: paths.profile.to() },
+  { label: 'Distances and dimming', to: paths.distances.to() },
+  { label: 'Exposure sketchpad', to: paths.exposure.to() },
+];
+
 /** The frame around every page. Pages load inside it, so that it never flickers. */
 export function Root() {
   const me = useQuery(sessionQueries.me()).data;
@@ -48,7 +54,7 @@ export function Root() {
     <AppShell
       sections={sections}
       person={me ? { name: `${me.givenName} ${me.familyName}`, email: me.email } : undefined}
-      personLinks={[{ label: 'Profile', to: paths.profile.to() }]}
+      personLinks={personLinks}
       signInPath={paths.signIn.to()}
       onSignOut={() => void signOut()}
       deadline={call ? { at: call.deadlineAt, siteTimeZone: call.siteTimeZone } : undefined}
@@ -66,11 +72,13 @@ export function Root() {
 
 /** The sections of the top bar that concern this person. */
 export function sectionsOf(me: Me | null | undefined): ShellSection[] {
-  const calculators = [
-    { label: 'Distances', to: paths.distances.to() },
-    { label: 'Exposure', to: paths.exposure.to() },
-  ];
-  if (!me) return [...calculators, { label: 'Instruments', to: paths.instruments.to() }];
+  if (!me) {
+    return [
+      { label: 'Distances', to: paths.distances.to() },
+      { label: 'Exposure', to: paths.exposure.to() },
+      { label: 'Instruments', to: paths.instruments.to() },
+    ];
+  }
   const chaired = me.panels.filter((panel) => panel.role === 'chair');
   return [
     { label: 'Proposals', to: paths.proposals.to() },
@@ -79,6 +87,5 @@ export function sectionsOf(me: Me | null | undefined): ShellSection[] {
     { label: 'Instruments', to: paths.instruments.to() },
     ...(me.isStaff ? [{ label: 'Semesters', to: paths.semesters.to() }] : []),
     ...(me.isAdministrator ? [{ label: 'Administration', to: paths.administration.to() }] : []),
-    ...calculators,
   ];
 }

@@ -99,8 +99,8 @@ function TopBar({ sections, person, personLinks, signInPath, onSignOut, deadline
       sx={{
         display: 'flex',
         alignItems: 'center',
-        gap: { xs: 1, md: 3.25 },
-        px: { xs: 1.5, md: 5 },
+        gap: { xs: 1, md: 1.75, lg: 3.25 },
+        px: { xs: 1.5, md: 3, lg: 5 },
         minHeight: 50,
         bgcolor: 'background.paper',
         borderBottom: 1,
@@ -135,7 +135,7 @@ function TopBar({ sections, person, personLinks, signInPath, onSignOut, deadline
       <Box
         component="nav"
         aria-label="Sections"
-        sx={{ display: { xs: 'none', md: 'flex' }, gap: 3, alignSelf: 'stretch', overflowX: 'auto' }}
+        sx={{ display: { xs: 'none', md: 'flex' }, gap: { md: 2, lg: 3 }, alignSelf: 'stretch', overflowX: 'auto' }}
       >
         {sections.map((section) => (
           <Box key={section.to} component={NavLink} to={section.to} sx={sectionLink}>

@@ -197,6 +197,8 @@ function toGridColumn<Row extends GridValidRowModel>(column: TableColumn<Row>): 
   const align = numeric ? ('right' as const) : (rest.align ?? ('left' as const));
   return {
     ...rest,
+    // Drawn cells are centred as the written ones are.
+    ...(rest.renderCell ? { display: 'flex' as const } : {}),
     align,
     headerAlign: align,
     ...(computed ? { editable: false } : {}),
@@ -224,6 +226,8 @@ const tableStyle = {
   fontSize: '0.875rem',
   fontVariantNumeric: 'tabular-nums lining-nums',
   '--DataGrid-overlayHeight': '160px',
+  '--DataGrid-rowBorderColor': 'var(--fw-palette-divider)',
+  '--rowBorderColor': 'var(--fw-palette-divider)',
   '& .MuiDataGrid-columnHeaderTitleContainer': { color: 'text.secondary' },
   '& .MuiDataGrid-columnHeader': { fontSize: '0.8125rem', fontWeight: 600 },
   '& .MuiDataGrid-columnSeparator': { opacity: 0, transition: 'none' },

@@ -5,6 +5,7 @@ import { downloadText, toCsv } from '../lib/csv';
 import { formatNumber } from '../lib/format';
 import { colour } from '../theme/theme';
 import { Explained } from './Quantity';
+import { visuallyHidden } from './visuallyHidden';
 import { useWidth } from './plot/useWidth';
 
 /** One line of the ledger, as the server gives it. */
@@ -88,25 +89,38 @@ export function LightBudget({
         component="table"
         sx={{
           width: '100%',
+          // Fixed, so that the bars take the room that the names and numbers leave, and never the other way round.
+          tableLayout: 'fixed',
           borderCollapse: 'collapse',
           fontSize: '0.8125rem',
           '& td, & th': { p: 0, height: rowHeight, whiteSpace: 'nowrap' },
           '& th': { fontWeight: 400, textAlign: 'left' },
           '& thead th, & td': { textAlign: 'right', pl: 1.5 },
           '& thead th': { color: 'text.secondary', height: 22 },
-          '& .bars': { width: '52%', pl: { xs: 1, sm: 2 }, textAlign: 'left' },
+          '& .bars': { pl: { xs: 1, sm: 2 }, textAlign: 'left', overflow: 'hidden' },
+          '& .step': { width: { xs: 50, sm: 64 } },
+          '& .total': { width: { xs: 58, sm: 76 } },
         }}
       >
         <thead>
           <tr>
-            <Box component="th" scope="col" sx={{ textAlign: 'left !important', pl: '0 !important' }}>
+            <Box
+              component="th"
+              scope="col"
+              sx={{ textAlign: 'left !important', pl: '0 !important', width: { xs: '40%', sm: '36%' } }}
+            >
               from the source to the detector
             </Box>
             <td className="bars" aria-hidden="true">
               <div ref={box} />
             </td>
-            <th scope="col">step</th>
-            <th scope="col">total (AB)</th>
+            <th scope="col" className="step">
+              step
+            </th>
+            <th scope="col" className="total">
+              total
+              <span style={visuallyHidden}>, AB magnitude</span>
+            </th>
           </tr>
         </thead>
         <tbody>

@@ -2,6 +2,7 @@ import Box from '@mui/material/Box';
 import { useEffect, useRef } from 'react';
 import { NavLink } from 'react-router-dom';
 import { colour } from '../theme/theme';
+import { visuallyHidden } from './visuallyHidden';
 
 export interface ChainSection {
   label: string;
@@ -119,12 +120,3 @@ export function SectionChain({
     </Box>
   );
 }
-
-export const visuallyHidden = {
-  position: 'absolute',
-  width: '1px',
-  height: '1px',
-  overflow: 'hidden',
-  clip: 'rect(0 0 0 0)',
-  whiteSpace: 'nowrap',
-} as const;

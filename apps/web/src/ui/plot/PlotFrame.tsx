@@ -65,7 +65,7 @@ export function PlotFrame({ title, description, x, y, series, height = 280, file
         xKind === 'log',
       ),
     [left, width - right],
-    Math.max(2, Math.floor((width - left - right) / 52)),
+    Math.max(3, Math.floor((width - left - right) / 52)),
   );
   const yScale = makeScale(
     yKind,
