@@ -38,6 +38,8 @@ export const Semester = z
     endsOn: CivilDate,
     callOpensAt: Instant,
     deadlineAt: Instant,
+    /** When reviewers should have scored; a date to keep to, after which nothing closes by itself. */
+    reviewsDueAt: Instant.nullable(),
     /** Scores and names are released, awards are told. */
     decidedAt: Instant.nullable(),
     stage: SemesterStage,
@@ -59,6 +61,8 @@ export const SemesterInput = z
     endsOn: CivilDate,
     callOpensAt: Instant,
     deadlineAt: Instant,
+    // No default: in a patch, a default would take back a date that the patch does not mention.
+    reviewsDueAt: Instant.nullable().optional(),
     isAnonymised: z.boolean(),
     callText: prose(20_000),
     criteria: z.array(Criterion).min(1).max(12),

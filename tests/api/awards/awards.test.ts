@@ -248,6 +248,15 @@ describe('awards', () => {
       expect((await readModel.mapTold([proposal.id])).get(proposal.id)).toMatchObject(AWARD);
     });
 
+    it('meets an award that is being given in one order or the other: it counts, or it is refused', async () => {
+      const [given, final] = await Promise.all([agent.put(path).send(AWARD), finalise()]);
+      expect(final.status).toBe(200);
+      const stored = await app.db.select().from(awards);
+      expect([given.status, stored.length, await stateOf(proposal.id)]).toEqual(
+        given.status === 200 ? [200, 1, 'awarded'] : [409, 0, 'declined'],
+      );
+    });
+
     it('closes reviews', async () => {
       const reviewer = await aPanelMember(app, panel);
       await aReview(app, proposal, reviewer, 7);

@@ -2,6 +2,7 @@ import { and, eq } from 'drizzle-orm';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { assignments, conflicts } from '../../../apps/api/src/database/schema/assignments.js';
 import { panels } from '../../../apps/api/src/database/schema/panels.js';
+import { reviews } from '../../../apps/api/src/database/schema/reviews.js';
 import { ConflictsService } from '../../../apps/api/src/modules/panels/conflicts.service.js';
 import { PanelsReadModel } from '../../../apps/api/src/modules/panels/panels.read-model.js';
 import { aPanel, aPanelMember, aReview, aSubmittedProposal, anAssignment } from '../../factories/committee.js';
@@ -212,6 +213,24 @@ describe('panels', () => {
       const refused = await chairAgent.delete(`${path}/assignments/${proposal.id}/${busy.id}`).expect(409);
       expect(refused.body.code).toBe('wrong-state');
       await chairAgent.delete(`${path}/assignments/${proposal.id}/${idle.id}`).expect(404);
+    });
+
+    it('never takes an assignment back from under a review that is being saved', async () => {
+      const member = await aPanelMember(app, panel);
+      const memberAgent = await signedInAs(app, member);
+      const proposal = await aSubmittedProposal(app, panel);
+      await anAssignment(app, proposal, member);
+      const [saved, removed] = await Promise.all([
+        memberAgent
+          .put(`/api/v1/reviews/${proposal.id}`)
+          .set('If-Match', '"1"')
+          .send({ answers: { merit: { kind: 'score', score: 7 } } }),
+        chairAgent.delete(`${path}/assignments/${proposal.id}/${member.id}`),
+      ]);
+      const stored = await app.db.select().from(reviews);
+      expect([saved.status, removed.status, stored.length]).toEqual(
+        saved.status === 200 ? [200, 409, 1] : [404, 200, 0],
+      );
     });
 
     it('is closed once the panel is final', async () => {

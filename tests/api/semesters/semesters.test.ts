@@ -98,6 +98,7 @@ describe('semesters', () => {
     ['deadlineAt', { deadlineAt: '2030-03-01T12:00:00Z' }],
     ['startsOn', { startsOn: '2030-04-14' }],
     ['endsOn', { endsOn: '2030-09-30' }],
+    ['reviewsDueAt', { reviewsDueAt: '2030-04-15T18:00:00Z' }],
     ['criteria.1.criterionId', { criteria: [MERIT, { ...METHOD, criterionId: 'merit' }] }],
     ['criteria', { criteria: [] }],
     ['criteria.0.weight', { criteria: [{ ...MERIT, weight: 0 }] }],
@@ -174,6 +175,20 @@ describe('semesters', () => {
     const stale = await staff.patch(path).set('If-Match', '"1"').send({ callText: 'Second.' }).expect(412);
     expect(stale.body.current).toMatchObject({ callText: 'First.', version: 2 });
     expect((await staff.get(path)).body.callText).toBe('First.');
+  });
+
+  it('say when reviews are due, and keep the date through a patch that does not mention it', async () => {
+    const reviewsDueAt = '2030-06-01T12:00:00.000Z';
+    const created = await staff
+      .post('/api/v1/semesters')
+      .send(await anInput({ reviewsDueAt }))
+      .expect(201);
+    expect(created.body.reviewsDueAt).toBe(reviewsDueAt);
+    const path = `/api/v1/semesters/${created.body.semesterId}`;
+    const kept = await staff.patch(path).set('If-Match', '"1"').send({ callText: 'Changed.' }).expect(200);
+    expect(kept.body.reviewsDueAt).toBe(reviewsDueAt);
+    const dropped = await staff.patch(path).set('If-Match', '"2"').send({ reviewsDueAt: null }).expect(200);
+    expect(dropped.body.reviewsDueAt).toBeNull();
   });
 
   it('check a patch together with what is stored', async () => {

@@ -22,26 +22,26 @@ export class AwardsQueries {
       .where(inArray(awards.proposalId, [...proposalIds]));
   }
 
-  /** @returns false when another request was first */
-  async insert(proposalId: string, decidedBy: string, input: AwardInput): Promise<boolean> {
-    const rows = await this.database
+  /** @returns its id, or undefined when another request was first */
+  async insert(proposalId: string, decidedBy: string, input: AwardInput): Promise<string | undefined> {
+    const [row] = await this.database
       .current()
       .insert(awards)
       .values({ proposalId, decidedBy, ...input })
       .onConflictDoNothing()
-      .returning({ id: awards.id });
-    return rows.length === 1;
+      .returning({ awardId: awards.id });
+    return row?.awardId;
   }
 
-  /** @returns false when `version` is no longer the stored one */
-  async update(proposalId: string, version: number, decidedBy: string, input: AwardInput): Promise<boolean> {
-    const rows = await this.database
+  /** @returns its id, or undefined when `version` is no longer the stored one */
+  async update(proposalId: string, version: number, decidedBy: string, input: AwardInput): Promise<string | undefined> {
+    const [row] = await this.database
       .current()
       .update(awards)
       .set({ ...input, decidedBy, updatedAt: new Date(), version: sql`${awards.version} + 1` })
       .where(and(eq(awards.proposalId, proposalId), eq(awards.version, version)))
-      .returning({ id: awards.id });
-    return rows.length === 1;
+      .returning({ awardId: awards.id });
+    return row?.awardId;
   }
 
   /** @returns false when `version` is no longer the stored one */

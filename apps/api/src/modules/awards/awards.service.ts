@@ -59,17 +59,18 @@ export class AwardsService {
           `${proposal.label} has an award already. Send the version you are changing as If-Match.`,
         );
       }
-      const isStored =
+      const awardId =
         version === undefined
           ? await this.queries.insert(proposalId, actor.personId, input)
           : await this.queries.update(proposalId, version, actor.personId, input);
-      if (!isStored) throw staleVersion(await this.currentOf(actor, panelId, proposalId));
+      if (awardId === undefined) throw staleVersion(await this.currentOf(actor, panelId, proposalId));
       await this.history.record({
         personId: actor.personId,
         scope: 'panel',
         scopeId: panelId,
         subject: 'award',
-        subjectId: proposalId,
+        // Not the proposal's: that somebody has decided on it is not told before the ranking is final.
+        subjectId: awardId,
         subjectName: proposal.label,
         action: before === undefined ? 'created' : 'changed',
         details: differences<object>(before ?? {}, input),
@@ -94,7 +95,7 @@ export class AwardsService {
         scope: 'panel',
         scopeId: panelId,
         subject: 'award',
-        subjectId: proposalId,
+        subjectId: before.id,
         subjectName: proposal.label,
         action: 'removed',
         details: {

@@ -91,6 +91,23 @@ export class PanelsQueries {
       .orderBy(asc(assignments.createdAt), asc(assignments.id));
   }
 
+  /** One assignment, after the reviewer's save that may be under way. */
+  async findAssignmentLocked(panelId: string, proposalId: string, personId: string): Promise<string | undefined> {
+    const [row] = await this.database
+      .current()
+      .select({ assignmentId: assignments.id })
+      .from(assignments)
+      .where(
+        and(
+          eq(assignments.panelId, panelId),
+          eq(assignments.proposalId, proposalId),
+          eq(assignments.personId, personId),
+        ),
+      )
+      .for('update');
+    return row?.assignmentId;
+  }
+
   async insertAssignments(
     rows: readonly { panelId: string; proposalId: string; personId: string; isLead: boolean }[],
   ): Promise<AssignmentRow[]> {

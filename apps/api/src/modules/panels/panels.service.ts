@@ -132,10 +132,8 @@ export class PanelsService {
     await this.getVisible(actor, panelId, proposalId);
     await this.database.transaction(async () => {
       await this.access.holdOpen(panelId);
-      const assignment = (await this.queries.listAssignments(panelId)).find(
-        (row) => row.proposalId === proposalId && row.personId === personId,
-      );
-      if (assignment === undefined) throw notFound('assignment');
+      const assignmentId = await this.queries.findAssignmentLocked(panelId, proposalId, personId);
+      if (assignmentId === undefined) throw notFound('assignment');
       // A review by somebody with a conflict is not listed, and so does not hold the assignment.
       const review = (await this.reviews.listOfPanel(panelId, actor.personId)).find(
         (row) => row.proposalId === proposalId && row.personId === personId,
@@ -146,13 +144,13 @@ export class PanelsService {
           `${review.reviewerName} has begun this review. Work that was begun is kept; assign somebody in addition instead.`,
         );
       }
-      await this.queries.deleteAssignment(assignment.assignmentId);
+      await this.queries.deleteAssignment(assignmentId);
       await this.history.record({
         personId: actor.personId,
         scope: 'panel',
         scopeId: panelId,
         subject: 'assignment',
-        subjectId: assignment.assignmentId,
+        subjectId: assignmentId,
         action: 'removed',
       });
     });

@@ -66,6 +66,17 @@ export class ReviewsQueries {
     return row;
   }
 
+  /** Keeps an assignment from being taken back until the transaction ends; false when it has been. */
+  async holdAssignment(proposalId: string, personId: string): Promise<boolean> {
+    const rows = await this.database
+      .current()
+      .select({ id: assignments.id })
+      .from(assignments)
+      .where(and(eq(assignments.proposalId, proposalId), eq(assignments.personId, personId)))
+      .for('share');
+    return rows.length === 1;
+  }
+
   async find(proposalId: string, personId: string) {
     const [row] = await this.database
       .current()

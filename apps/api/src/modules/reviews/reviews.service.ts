@@ -109,6 +109,7 @@ export class ReviewsService {
     const { panel, semester } = await this.getAssigned(actor, proposalId);
     return this.database.transaction(async () => {
       await this.panelAccess.holdOpen(panel.panelId);
+      if (!(await this.queries.holdAssignment(proposalId, actor.personId))) throw notFound('review');
       const faults = unknownCriteria(input, semester.criteria);
       if (faults.length > 0) throw validationFailed(faults);
       const stored = await this.queries.find(proposalId, actor.personId);

@@ -10,6 +10,9 @@ export function faultsOf(semester: SemesterInput, siteTimeZone: string): FieldEr
   if (opensAt >= deadlineAt) {
     faults.push({ path: 'deadlineAt', message: 'The deadline must come after the call opens.' });
   }
+  if (semester.reviewsDueAt != null && new Date(semester.reviewsDueAt) <= deadlineAt) {
+    faults.push({ path: 'reviewsDueAt', message: 'Reviews can be due only after the deadline for proposals.' });
+  }
   if (civilDateAt(deadlineAt, siteTimeZone) > semester.startsOn) {
     faults.push({ path: 'startsOn', message: 'The semester cannot start before its deadline.' });
   }

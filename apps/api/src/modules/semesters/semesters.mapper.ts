@@ -9,6 +9,7 @@ export function toSemester(semester: SemesterDetails): Semester {
     endsOn: semester.endsOn,
     callOpensAt: semester.callOpensAt.toISOString(),
     deadlineAt: semester.deadlineAt.toISOString(),
+    reviewsDueAt: semester.reviewsDueAt?.toISOString() ?? null,
     decidedAt: semester.decidedAt?.toISOString() ?? null,
     stage: semester.stage,
     isAnonymised: semester.isAnonymised,

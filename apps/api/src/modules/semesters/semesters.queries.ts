@@ -72,6 +72,7 @@ function columnsOf(input: SemesterInput) {
     endsOn: input.endsOn,
     callOpensAt: new Date(input.callOpensAt),
     deadlineAt: new Date(input.deadlineAt),
+    reviewsDueAt: input.reviewsDueAt == null ? null : new Date(input.reviewsDueAt),
     isAnonymised: input.isAnonymised,
     callText: input.callText,
     criteria: input.criteria,

@@ -177,6 +177,7 @@ function toInput(semester: SemesterDetails): SemesterInput {
     endsOn: semester.endsOn,
     callOpensAt: semester.callOpensAt.toISOString(),
     deadlineAt: semester.deadlineAt.toISOString(),
+    reviewsDueAt: semester.reviewsDueAt?.toISOString() ?? null,
     isAnonymised: semester.isAnonymised,
     callText: semester.callText,
     criteria: semester.criteria,
@@ -186,10 +187,13 @@ function toInput(semester: SemesterDetails): SemesterInput {
 
 /** The fields a patch sets, instants in the one form they are compared in. */
 function given(patch: SemesterPatch): Partial<SemesterInput> {
-  const { callOpensAt, deadlineAt, ...rest } = patch;
+  const { callOpensAt, deadlineAt, reviewsDueAt, ...rest } = patch;
   return {
     ...(Object.fromEntries(Object.entries(rest).filter(([, value]) => value !== undefined)) as Partial<SemesterInput>),
     ...(callOpensAt === undefined ? {} : { callOpensAt: new Date(callOpensAt).toISOString() }),
     ...(deadlineAt === undefined ? {} : { deadlineAt: new Date(deadlineAt).toISOString() }),
+    ...(reviewsDueAt === undefined
+      ? {}
+      : { reviewsDueAt: reviewsDueAt === null ? null : new Date(reviewsDueAt).toISOString() }),
   };
 }
