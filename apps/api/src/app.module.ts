@@ -6,13 +6,19 @@ import { DatabaseModule } from './database/connection.module.js';
 import { AccountsModule } from './modules/accounts/accounts.module.js';
 import { AdministrationModule } from './modules/administration/administration.module.js';
 import { AwardsModule } from './modules/awards/awards.module.js';
+import { EstimatesModule } from './modules/estimates/estimates.module.js';
 import { FacilitiesModule } from './modules/facilities/facilities.module.js';
 import { HealthModule } from './modules/health/health.module.js';
+import { ObservationsModule } from './modules/observations/observations.module.js';
 import { PanelsModule } from './modules/panels/panels.module.js';
 import { PeopleModule } from './modules/people/people.module.js';
+import { ProposalsModule } from './modules/proposals/proposals.module.js';
 import { RankingModule } from './modules/ranking/ranking.module.js';
 import { ReviewsModule } from './modules/reviews/reviews.module.js';
 import { SemestersModule } from './modules/semesters/semesters.module.js';
+import { SubmissionsModule } from './modules/submissions/submissions.module.js';
+import { TargetsModule } from './modules/targets/targets.module.js';
+import { TeamModule } from './modules/team/team.module.js';
 import { PlatformModule } from './platform/platform.module.js';
 
 /** One line per subject, in alphabetical order. */
@@ -20,13 +26,19 @@ const SUBJECTS = [
   AccountsModule,
   AdministrationModule,
   AwardsModule,
+  EstimatesModule,
   FacilitiesModule,
   HealthModule,
+  ObservationsModule,
   PanelsModule,
   PeopleModule,
+  ProposalsModule,
   RankingModule,
   ReviewsModule,
   SemestersModule,
+  SubmissionsModule,
+  TargetsModule,
+  TeamModule,
 ];
 
 @Module({})

@@ -4,7 +4,6 @@ import {
   COSMOLOGY_PRESETS,
   type Cosmology,
   createCosmology,
-  type DistanceRow,
   distanceRows,
   InvalidCosmologyError,
   NoBigBangError,
@@ -122,22 +121,14 @@ function chosenOf(model: Cosmology, id: string, title: string, source: string | 
   return { id, title, source, parameters, model, distances: distancesOf(model) };
 }
 
-/** One target is asked for several of these in a row, so that the last row is worth keeping. */
+/** Through the tables of the batch functions, so that an estimate and the target grid use the very same distance. */
 function distancesOf(model: Cosmology): DistanceModel {
-  let last: DistanceRow | undefined;
-  const rowOf = (redshift: number): DistanceRow => {
-    if (last?.redshift !== redshift) [last] = distanceRows(model, [redshift]);
-    if (last === undefined) throw new Error('A batch of one redshift gave no row.');
-    return last;
-  };
-  const known = (value: number | undefined): number => {
-    if (value === undefined) throw new Error('A distance was asked for at redshift 0.');
-    return value;
-  };
   return {
-    luminosityDistanceMpc: (redshift) => rowOf(redshift).luminosityDistanceMpc,
-    distanceModulusMag: (redshift) => known(rowOf(redshift).distanceModulusMag),
-    kpcPerArcsec: (redshift) => known(rowOf(redshift).kpcPerArcsec),
+    luminosityDistanceMpc: (redshift) => {
+      const [row] = distanceRows(model, [redshift]);
+      if (row === undefined) throw new Error('A batch of one redshift gave no row.');
+      return row.luminosityDistanceMpc;
+    },
   };
 }
 

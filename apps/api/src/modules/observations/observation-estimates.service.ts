@@ -1,0 +1,129 @@
+import type { CosmologyChoice } from '@faintward/contracts/cosmology';
+import type { Conditions, Estimate, Goal } from '@faintward/contracts/estimates';
+import type { Extent, Light } from '@faintward/contracts/light';
+import { Injectable } from '@nestjs/common';
+import { canonicalJson } from '../../engine/canonical-json.js';
+import { chooseCosmology } from '../../engine/cosmologies.js';
+import { estimator, type EstimateOutcome, type EstimateTarget } from '../../engine/estimates.js';
+import { FacilitiesReadModel, type ModeSetup } from '../facilities/facilities.read-model.js';
+import { TargetsReadModel } from '../targets/targets.read-model.js';
+import { ObservationsQueries } from './observations.queries.js';
+
+export interface LitTarget {
+  redshift: number;
+  light: Light | null;
+  extent: Extent;
+}
+
+export interface ObservationPlan {
+  goal: Goal;
+  conditions: Conditions;
+  repeatCount: number;
+}
+
+/** What is stored of an estimate, beside the plan that it is of. */
+export interface EstimateColumns {
+  configurationVersion: number;
+  estimate: Estimate | null;
+  lacking: string | null;
+  totalSeconds: number | null;
+  openShutterSeconds: number | null;
+}
+
+/** Rows in one statement: keeps a parameter within some megabytes. */
+const BATCH_SIZE = 500;
+
+/** Estimates of stored observations. Whoever changes what they depend on calls it in the same transaction. */
+@Injectable()
+export class ObservationEstimates {
+  constructor(
+    private readonly queries: ObservationsQueries,
+    private readonly facilities: FacilitiesReadModel,
+    private readonly targets: TargetsReadModel,
+  ) {}
+
+  /** A function from targets to what is stored of their estimates under one plan. */
+  columnsFor(
+    mode: ModeSetup,
+    cosmology: CosmologyChoice,
+    plan: ObservationPlan,
+  ): (target: LitTarget) => EstimateColumns {
+    const estimateOf = estimator({
+      cosmology: chooseCosmology(cosmology),
+      setup: { telescope: mode.telescope, site: mode.site, mode: mode.configuration },
+      goal: plan.goal,
+      conditions: plan.conditions,
+    });
+    return ({ redshift, light, extent }) => {
+      const outcome = light === null ? undefined : estimateOf({ redshift, light, extent } satisfies EstimateTarget);
+      return toColumns(outcome, mode.configurationVersion, plan.repeatCount);
+    };
+  }
+
+  /**
+   * Computes the observations of some targets again, or of all targets of a proposal, with the configurations in force.
+   *
+   * @returns the number of observations
+   */
+  async recompute(
+    proposalId: string,
+    cosmology: CosmologyChoice,
+    targetIds: readonly string[] | 'all',
+  ): Promise<number> {
+    const rows = await this.queries.listPlans(proposalId, targetIds);
+    if (rows.length === 0) return 0;
+    const modeIds = [...new Set(rows.map(({ modeId }) => modeId))];
+    const modes = new Map(
+      (await this.facilities.listModes(modeIds.map((modeId) => ({ modeId })))).map((mode) => [mode.modeId, mode]),
+    );
+    const lit = new Map(
+      (await this.targets.listInputs(proposalId, targetIds)).map((target) => [target.targetId, target]),
+    );
+    const byPlan = new Map<string, (target: LitTarget) => EstimateColumns>();
+    const changed = rows.map((row) => {
+      const mode = modes.get(row.modeId);
+      const target = lit.get(row.targetId);
+      if (mode === undefined || target === undefined)
+        throw new Error(`Observation ${row.observationId} has lost its mode or target.`);
+      const key = canonicalJson([row.modeId, row.goal, row.conditions, row.repeatCount]);
+      const columnsOf = byPlan.get(key) ?? this.columnsFor(mode, cosmology, row);
+      byPlan.set(key, columnsOf);
+      return { observationId: row.observationId, ...columnsOf(target) };
+    });
+    for (let start = 0; start < changed.length; start += BATCH_SIZE) {
+      await this.queries.updateEstimates(changed.slice(start, start + BATCH_SIZE));
+    }
+    return changed.length;
+  }
+}
+
+function toColumns(
+  outcome: EstimateOutcome | undefined,
+  configurationVersion: number,
+  repeatCount: number,
+): EstimateColumns {
+  const none = { configurationVersion, estimate: null, totalSeconds: null, openShutterSeconds: null };
+  if (outcome === undefined) return { ...none, lacking: 'The target has no brightness yet.' };
+  if (!outcome.ok) return { ...none, lacking: outcome.faults.map((fault) => explain(fault)).join(' ') };
+  const { estimate } = outcome;
+  if (estimate.outcome === 'infeasible') return { ...none, estimate, lacking: null };
+  return {
+    configurationVersion,
+    estimate,
+    lacking: null,
+    totalSeconds: estimate.totalSeconds * repeatCount,
+    openShutterSeconds: estimate.openShutterSeconds * repeatCount,
+  };
+}
+
+/** Why a goal and a target do not go together, in words of the target's row rather than of a request. */
+function explain({ path, message }: { path: string; message: string }): string {
+  switch (path) {
+    case 'goal.kind':
+      return 'A goal of a line’s significance needs the brightness of a line.';
+    case 'goal.per':
+      return 'A ratio per square arcsecond needs an extended target.';
+    default:
+      return message;
+  }
+}

@@ -1,0 +1,194 @@
+import { type BrightnessDefaults } from './brightness-text.js';
+import {
+  type ImportPreview,
+  type ImportRequest,
+  type ImportRole,
+  MAX_IMPORT_CHARACTERS,
+  MAX_TARGET_COUNT,
+  type TargetCells,
+  type TargetInput,
+} from '@faintward/contracts/targets';
+import { designationFromPosition } from '@faintward/astronomy';
+import {
+  type ColumnRole,
+  type DelimitedTable,
+  guessColumnRoles,
+  readDelimitedText,
+  TableRefused,
+} from '@faintward/tables';
+import { lightFaults } from '../../engine/light.js';
+import { DomainError } from '../../platform/domain-error.js';
+import { readCells } from './target-cells.js';
+
+type TargetRole = Exclude<ImportRole, 'ignore'>;
+type PreviewRow = ImportPreview['rows'][number];
+
+export interface TableRow {
+  lineNumber: number;
+  cells: PreviewRow['cells'];
+  rowErrors: string[];
+  /** Undefined when the row has errors. */
+  target: TargetInput | undefined;
+}
+
+/** A table read as targets, without regard to what is stored. */
+export interface TargetTable {
+  columns: { header: string; role: ImportRole }[];
+  delimiter: string;
+  hasHeader: boolean;
+  rows: TableRow[];
+  tableErrors: string[];
+}
+
+const SAMPLE_ROW_COUNT = 100;
+
+const ROLE_NAMES: Readonly<Record<TargetRole, string>> = {
+  name: 'the name',
+  rightAscension: 'the right ascension',
+  declination: 'the declination',
+  redshift: 'the redshift',
+  redshiftSigma: 'the uncertainty of the redshift',
+  brightness: 'the brightness',
+  notes: 'notes',
+};
+
+const REQUIRED_ROLES: readonly TargetRole[] = ['rightAscension', 'declination', 'redshift'];
+
+/**
+ * Reads a pasted or uploaded table as targets, cell by cell. Bounded in time for any text: the table reader refuses what is
+ * not a table before it builds cells.
+ *
+ * @throws {DomainError} `unreadable-table` with what would be right
+ */
+export function readTargetTable({ text, options }: ImportRequest): TargetTable {
+  const table = readTable(text, options.hasHeader);
+  const roles = rolesOf(table, options.roles);
+  const tableErrors = roleErrors(roles);
+  const brightness: BrightnessDefaults = {
+    present: null,
+    bandId: options.brightnessBandId,
+    system: options.brightnessSystem,
+  };
+  const columnOf = new Map<TargetRole, number>();
+  roles.forEach((role, column) => {
+    if (role !== 'ignore' && !columnOf.has(role)) columnOf.set(role, column);
+  });
+  const cutRows = new Map(
+    table.issues.filter(({ code }) => code === 'long-row').map(({ row, message }) => [row, message]),
+  );
+  return {
+    columns: table.columns.map((header, column) => ({ header, role: roles[column] ?? 'ignore' })),
+    delimiter: table.delimiter,
+    hasHeader: table.hasHeader,
+    rows: table.rows.map((cells, index) => {
+      const lineNumber = table.rowNumbers[index] ?? 0;
+      return readRow(cells, lineNumber, columnOf, brightness, cutRows.get(lineNumber));
+    }),
+    tableErrors,
+  };
+}
+
+function readTable(text: string, hasHeader: boolean | undefined): DelimitedTable {
+  try {
+    return readDelimitedText(text, {
+      header: hasHeader === undefined ? 'auto' : hasHeader ? 'present' : 'absent',
+      maxCharacters: MAX_IMPORT_CHARACTERS,
+      maxRows: MAX_TARGET_COUNT,
+    });
+  } catch (error) {
+    if (error instanceof TableRefused) throw new DomainError('unreadable-table', error.message);
+    throw error;
+  }
+}
+
+const ROLE_OF_GUESS: Readonly<Partial<Record<ColumnRole, TargetRole>>> = {
+  name: 'name',
+  rightAscension: 'rightAscension',
+  declination: 'declination',
+  redshift: 'redshift',
+  redshiftSigma: 'redshiftSigma',
+  magnitude: 'brightness',
+  notes: 'notes',
+};
+
+function rolesOf(table: DelimitedTable, given: readonly ImportRole[] | undefined): ImportRole[] {
+  if (given !== undefined) return table.columns.map((_, column) => given[column] ?? 'ignore');
+  const roles: ImportRole[] = table.columns.map(() => 'ignore');
+  for (const { columnIndex, role } of guessColumnRoles(table.columns, table.rows.slice(0, SAMPLE_ROW_COUNT)).guesses) {
+    roles[columnIndex] = ROLE_OF_GUESS[role] ?? 'ignore';
+  }
+  // Our own word for what others call by its band or unit; it counts before a guessed magnitude.
+  const own = table.columns.findIndex((header) => /^(?:brightness|light)$/i.test(header.trim()));
+  if (own !== -1) {
+    const guessed = roles.indexOf('brightness');
+    if (guessed !== -1) roles[guessed] = 'ignore';
+    roles[own] = 'brightness';
+  }
+  return roles;
+}
+
+function roleErrors(roles: readonly ImportRole[]): string[] {
+  const count = (role: ImportRole) => roles.filter((each) => each === role).length;
+  return [
+    ...REQUIRED_ROLES.filter((role) => count(role) === 0).map(
+      (role) => `No column holds ${ROLE_NAMES[role]}. Choose the column that does.`,
+    ),
+    ...(Object.keys(ROLE_NAMES) as TargetRole[])
+      .filter((role) => count(role) > 1)
+      .map((role) => `${count(role)} columns are set to hold ${ROLE_NAMES[role]}. Keep one of them.`),
+  ];
+}
+
+function readRow(
+  texts: readonly string[],
+  lineNumber: number,
+  columnOf: ReadonlyMap<TargetRole, number>,
+  brightness: BrightnessDefaults,
+  cutMessage: string | undefined,
+): TableRow {
+  const cells: PreviewRow['cells'] = texts.map((text) => ({ text: shortened(text) }));
+  const rowErrors = cutMessage === undefined ? [] : [cutMessage];
+  const given: TargetCells = {};
+  for (const [role, column] of columnOf) given[role] = texts[column] ?? '';
+  const { values, errors, warnings } = readCells(given, brightness);
+  for (const [role, message] of Object.entries(errors) as [TargetRole, string][]) mark(role, 'error', message);
+  for (const [role, message] of Object.entries(warnings) as [TargetRole, string][]) mark(role, 'warning', message);
+
+  const { rightAscensionDeg, declinationDeg, redshift } = values;
+  if (
+    Object.keys(errors).length > 0 ||
+    rightAscensionDeg === undefined ||
+    declinationDeg === undefined ||
+    redshift === undefined
+  ) {
+    return { lineNumber, cells, rowErrors, target: undefined };
+  }
+  const target: TargetInput = {
+    // A list without names gets the usual designations by position.
+    name: values.name ?? designationFromPosition({ raDeg: rightAscensionDeg, decDeg: declinationDeg }),
+    rightAscensionDeg,
+    declinationDeg,
+    redshift,
+    redshiftSigma: values.redshiftSigma ?? null,
+    light: values.light ?? null,
+    extent: { kind: 'point' },
+    notes: values.notes ?? '',
+  };
+  for (const { path, message } of lightFaults(target)) {
+    const role = path === 'redshift' ? 'redshift' : 'brightness';
+    mark(role, 'error', message);
+    return { lineNumber, cells, rowErrors, target: undefined };
+  }
+  return { lineNumber, cells, rowErrors, target: rowErrors.length === 0 ? target : undefined };
+
+  function mark(role: TargetRole, kind: 'error' | 'warning', message: string): void {
+    const column = columnOf.get(role);
+    const cell = column === undefined ? undefined : cells[column];
+    if (cell === undefined) rowErrors.push(message);
+    else cell[kind] = message;
+  }
+}
+
+function shortened(text: string): string {
+  return text.length > 200 ? `${text.slice(0, 199)}…` : text;
+}

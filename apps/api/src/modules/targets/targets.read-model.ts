@@ -1,0 +1,222 @@
+import type { Extent, Light } from '@faintward/contracts/light';
+import type { CosmicTime, Target, TargetListQuery } from '@faintward/contracts/targets';
+import { Injectable } from '@nestjs/common';
+import { and, asc, eq, ilike, inArray, or, type SQL, sql } from 'drizzle-orm';
+import { observations } from '../../database/schema/observations.js';
+import { targets } from '../../database/schema/targets.js';
+import { DatabaseService } from '../../database/transaction.js';
+import { containing, orderOf, pageWindow } from '../../platform/pagination.js';
+import { toTarget } from './targets.mapper.js';
+
+/** What computing needs to know of a target. */
+export interface StoredTargetInputs {
+  targetId: string;
+  name: string;
+  rightAscensionDeg: number;
+  declinationDeg: number;
+  redshift: number;
+  light: Light | null;
+  extent: Extent;
+}
+
+export interface TargetPlace {
+  targetId: string;
+  name: string;
+  rightAscensionDeg: number;
+  declinationDeg: number;
+  nearestDuplicateName: string | null;
+}
+
+/** Targets as screens, other subjects and submissions read them. */
+@Injectable()
+export class TargetsReadModel {
+  constructor(private readonly database: DatabaseService) {}
+
+  async listPage(proposalId: string, query: TargetListQuery): Promise<{ rows: Target[]; rowCount: number }> {
+    const where = and(
+      eq(targets.proposalId, proposalId),
+      query.search === undefined
+        ? undefined
+        : or(ilike(targets.name, containing(query.search)), ilike(targets.notes, containing(query.search))),
+      query.withNotices === undefined ? undefined : query.withNotices ? hasNotices : sql`not ${hasNotices}`,
+    );
+    const sums = this.sums(proposalId);
+    const computedNumber = (name: string) => sql`(${targets.computed} ->> ${sql.raw(`'${name}'`)})::float8`;
+    const order = orderOf(
+      query,
+      {
+        position: targets.position,
+        name: sql`lower(${targets.name})`,
+        rightAscensionDeg: targets.rightAscensionDeg,
+        declinationDeg: targets.declinationDeg,
+        redshift: targets.redshift,
+        apparentMagnitudeAb: computedNumber('apparentMagnitudeAb'),
+        luminosityDistanceMpc: computedNumber('luminosityDistanceMpc'),
+        ageGyr: computedNumber('ageGyr'),
+        requestedSeconds: sums.requestedSeconds,
+      },
+      targets.id,
+    );
+    const { limit, offset } = pageWindow(query);
+    const rows = await this.select(proposalId, where)
+      .orderBy(...order)
+      .limit(limit)
+      .offset(offset);
+    const [total] = await this.database
+      .current()
+      .select({ rowCount: sql<number>`count(*)::int` })
+      .from(targets)
+      .where(where);
+    return { rows: rows.map(toTarget), rowCount: total?.rowCount ?? 0 };
+  }
+
+  async find(proposalId: string, targetId: string): Promise<Target | undefined> {
+    const [row] = await this.select(
+      proposalId,
+      and(eq(targets.proposalId, proposalId), eq(targets.id, targetId)),
+      targetId,
+    );
+    return row === undefined ? undefined : toTarget(row);
+  }
+
+  async listAll(proposalId: string): Promise<Target[]> {
+    const rows = await this.select(proposalId, eq(targets.proposalId, proposalId)).orderBy(
+      asc(targets.position),
+      asc(targets.id),
+    );
+    return rows.map(toTarget);
+  }
+
+  /** Inputs of some targets, or of all, in the order of the list; those that are not there are left out. */
+  async listInputs(proposalId: string, targetIds: readonly string[] | 'all'): Promise<StoredTargetInputs[]> {
+    return this.database
+      .current()
+      .select({
+        targetId: targets.id,
+        name: targets.name,
+        rightAscensionDeg: targets.rightAscensionDeg,
+        declinationDeg: targets.declinationDeg,
+        redshift: targets.redshift,
+        light: targets.light,
+        extent: targets.extent,
+      })
+      .from(targets)
+      .where(and(eq(targets.proposalId, proposalId), targetIds === 'all' ? undefined : isOneOf(targetIds)))
+      .orderBy(asc(targets.position), asc(targets.id));
+  }
+
+  async listPlaces(proposalId: string): Promise<TargetPlace[]> {
+    return this.database
+      .current()
+      .select({
+        targetId: targets.id,
+        name: targets.name,
+        rightAscensionDeg: targets.rightAscensionDeg,
+        declinationDeg: targets.declinationDeg,
+        nearestDuplicateName: targets.nearestDuplicateName,
+      })
+      .from(targets)
+      .where(eq(targets.proposalId, proposalId))
+      .orderBy(asc(targets.position), asc(targets.id));
+  }
+
+  async count(proposalId: string): Promise<number> {
+    const [row] = await this.database
+      .current()
+      .select({ targetCount: sql<number>`count(*)::int` })
+      .from(targets)
+      .where(eq(targets.proposalId, proposalId));
+    return row?.targetCount ?? 0;
+  }
+
+  async cosmicTimePoints(proposalId: string): Promise<CosmicTime['points']> {
+    const { sums, requestedSeconds } = this.sums(proposalId);
+    const rows = await this.database
+      .current()
+      .select({
+        targetId: targets.id,
+        name: targets.name,
+        redshift: targets.redshift,
+        ageGyr: sql<number | null>`(${targets.computed} ->> 'ageGyr')::float8`,
+        requestedSeconds,
+      })
+      .from(targets)
+      .leftJoin(sums, eq(sums.targetId, targets.id))
+      .where(eq(targets.proposalId, proposalId))
+      .orderBy(asc(targets.position), asc(targets.id));
+    return rows.flatMap(({ ageGyr, requestedSeconds: seconds, ...row }) =>
+      ageGyr === null ? [] : [{ ...row, ageGyr, hours: seconds === null ? null : seconds / 3600 }],
+    );
+  }
+
+  /** Targets that the checks before submission have something to say about: those with notices or without observation. */
+  async listForChecks(proposalId: string) {
+    return this.database
+      .current()
+      .select({
+        targetId: targets.id,
+        name: targets.name,
+        notices: sql<
+          { code: string; message: string; severity: string; field?: string }[]
+        >`${targets.computed} -> 'notices'`,
+        nearestDuplicateName: targets.nearestDuplicateName,
+        hasObservation: sql<boolean>`exists (select 1 from ${observations} where ${observations.targetId} = ${targets.id})`,
+      })
+      .from(targets)
+      .where(
+        and(
+          eq(targets.proposalId, proposalId),
+          or(
+            hasNotices,
+            sql`not exists (select 1 from ${observations} where ${observations.targetId} = ${targets.id})`,
+          ),
+        ),
+      )
+      .orderBy(asc(targets.position), asc(targets.id));
+  }
+
+  /** Counts and sums of observations by target, as one grouped join instead of a query for each row. */
+  private sums(proposalId: string, targetId?: string) {
+    const sums = this.database
+      .current()
+      .select({
+        targetId: observations.targetId,
+        observationCount: sql<number>`count(*)::int`.as('observation_count'),
+        requestedSeconds: sql<number | null>`sum(${observations.totalSeconds})::float8`.as('requested_seconds'),
+      })
+      .from(observations)
+      .where(
+        and(
+          eq(observations.proposalId, proposalId),
+          targetId === undefined ? undefined : eq(observations.targetId, targetId),
+        ),
+      )
+      .groupBy(observations.targetId)
+      .as('sums');
+    return { sums, requestedSeconds: sql<number | null>`${sums.requestedSeconds}` };
+  }
+
+  private select(proposalId: string, where: SQL | undefined, targetId?: string) {
+    const { sums } = this.sums(proposalId, targetId);
+    return this.database
+      .current()
+      .select({
+        target: targets,
+        observationCount: sql<number>`coalesce(${sums.observationCount}, 0)`,
+        requestedSeconds: sql<number | null>`${sums.requestedSeconds}`,
+      })
+      .from(targets)
+      .leftJoin(sums, eq(sums.targetId, targets.id))
+      .where(where)
+      .$dynamic();
+  }
+}
+
+const hasNotices = sql`(jsonb_array_length(${targets.computed} -> 'notices') > 0 or ${targets.nearestDuplicateName} is not null)`;
+
+function isOneOf(targetIds: readonly string[]): SQL {
+  // One parameter for any number of ids; a list of placeholders ends at 65 535.
+  return targetIds.length <= 1
+    ? inArray(targets.id, [...targetIds])
+    : sql`${targets.id} = any(array(select jsonb_array_elements_text(${JSON.stringify(targetIds)}::jsonb)::uuid))`;
+}
