@@ -34,7 +34,7 @@ export type ProposalAbilities = z.infer<typeof ProposalAbilities>;
 export const ProposalSummary = z
   .object({
     proposalId: Id,
-    /** Short label given by the observatory, such as "27B-014". */
+    /** Short label given by the observatory, such as "2710-014". */
     label: z.string(),
     title: z.string(),
     state: ProposalState,

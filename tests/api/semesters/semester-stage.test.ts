@@ -38,8 +38,8 @@ describe('the stage of a semester', () => {
 });
 
 describe('the label prefix of a semester', () => {
-  it('is the year with A in its first half and B in its second, then the rest of the alphabet', () => {
-    expect(labelPrefixes('2027-04-01').slice(0, 3)).toEqual(['27A', '27C', '27D']);
-    expect(labelPrefixes('2027-10-01').slice(0, 3)).toEqual(['27B', '27C', '27D']);
+  it('is the year and month in which it begins, then with a letter where that is taken', () => {
+    expect(labelPrefixes('2027-04-01').slice(0, 3)).toEqual(['2704', '2704B', '2704C']);
+    expect(labelPrefixes('2027-10-01').slice(0, 3)).toEqual(['2710', '2710B', '2710C']);
   });
 });

@@ -10,7 +10,7 @@ export const semesters = pgTable('semesters', {
     .references(() => sites.id),
   /** Named by its months: "Oct 2027 to Mar 2028". */
   name: text('name').notNull().unique(),
-  /** First part of the labels of its proposals: "27B". */
+  /** First part of the labels of its proposals: "2710". */
   labelPrefix: text('label_prefix').notNull().unique(),
   startsOn: date('starts_on').notNull(),
   endsOn: date('ends_on').notNull(),

@@ -5,7 +5,7 @@ import { awards } from '../../database/schema/awards.js';
 import { panels } from '../../database/schema/panels.js';
 import { proposals } from '../../database/schema/proposals.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { isFreeOfConflict } from '../panels/conflict-conditions.js';
+import { isFreeOfConflict } from '../panels/conflict-conditions.read-model.js';
 
 /** What ranking and proposals read of awards. It knows no other subject's services. */
 @Injectable()

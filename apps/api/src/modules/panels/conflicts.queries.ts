@@ -7,7 +7,7 @@ import { panelMembers } from '../../database/schema/panels.js';
 import { people } from '../../database/schema/people.js';
 import { proposalMembers, proposals } from '../../database/schema/proposals.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { isConflicted } from './conflict-conditions.js';
+import { isConflicted } from './conflict-conditions.read-model.js';
 
 const teamPeople = alias(people, 'team_people');
 

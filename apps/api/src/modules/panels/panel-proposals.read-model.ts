@@ -9,8 +9,8 @@ import { proposals } from '../../database/schema/proposals.js';
 import { semesters } from '../../database/schema/semesters.js';
 import { submissions } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { proposalLabel } from '../semesters/proposal-label.js';
-import { isConflicted, isFreeOfConflict } from './conflict-conditions.js';
+import { proposalLabel } from '../semesters/semesters.read-model.js';
+import { isConflicted, isFreeOfConflict } from './conflict-conditions.read-model.js';
 
 /** A proposal as its panel knows it: what was submitted, never the working copy. */
 export interface PanelProposalRow {

@@ -8,7 +8,7 @@ import { semesters } from '../../database/schema/semesters.js';
 import { DatabaseService } from '../../database/transaction.js';
 import type { Actor } from '../../platform/actor.js';
 import { forbidden, notFound } from '../../platform/domain-error.js';
-import { proposalLabel } from '../semesters/proposal-label.js';
+import { proposalLabel } from '../semesters/semesters.read-model.js';
 import { canEditEverything, canEditTargets, requireChangeable } from './proposal-rules.js';
 
 /** A proposal as seen by one member of its team: what decisions about it need. */

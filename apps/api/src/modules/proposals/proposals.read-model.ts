@@ -13,7 +13,7 @@ import { caseSections, proposalMembers, proposals } from '../../database/schema/
 import { semesters } from '../../database/schema/semesters.js';
 import { DatabaseService } from '../../database/transaction.js';
 import { containing, orderOf, pageWindow } from '../../platform/pagination.js';
-import { proposalLabel } from '../semesters/proposal-label.js';
+import { proposalLabel } from '../semesters/semesters.read-model.js';
 
 export interface OwnProposal {
   proposalId: string;

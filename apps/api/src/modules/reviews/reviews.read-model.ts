@@ -5,7 +5,7 @@ import { people } from '../../database/schema/people.js';
 import { proposals } from '../../database/schema/proposals.js';
 import { reviews } from '../../database/schema/reviews.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { isFreeOfConflict } from '../panels/conflict-conditions.js';
+import { isFreeOfConflict } from '../panels/conflict-conditions.read-model.js';
 
 export interface PanelReview {
   proposalId: string;

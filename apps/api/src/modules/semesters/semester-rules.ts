@@ -43,11 +43,10 @@ function repeated<Row>(rows: readonly Row[], keyOf: (row: Row) => string): numbe
 }
 
 /**
- * Prefixes for the labels of a semester's proposals, the first free one to be taken: two digits of the year and a letter,
- * A for a semester that begins in the first half of the year and B in the second, then the rest of the alphabet.
+ * Prefixes for the labels of a semester's proposals, the first free one to be taken: year and month in which it begins,
+ * "2710", and with a letter behind it where two semesters begin in one month.
  */
 export function labelPrefixes(startsOn: string): string[] {
-  const year = startsOn.slice(2, 4);
-  const letters = Number(startsOn.slice(5, 7)) <= 6 ? 'ACDEFGHIJKLMNOPQRSTUVWXYZ' : 'BCDEFGHIJKLMNOPQRSTUVWXYZ';
-  return [...letters].map((letter) => `${year}${letter}`);
+  const yearAndMonth = startsOn.slice(2, 4) + startsOn.slice(5, 7);
+  return [yearAndMonth, ...[...'BCDEFGHIJKLMNOPQRSTUVWXYZ'].map((letter) => yearAndMonth + letter)];
 }

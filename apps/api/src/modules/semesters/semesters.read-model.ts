@@ -7,6 +7,11 @@ import { DatabaseService } from '../../database/transaction.js';
 import { notFound } from '../../platform/domain-error.js';
 import { stageOf } from './semester-stage.js';
 
+/** Label of a proposal, of its semester's prefix and its running number there: "2710-014". */
+export function proposalLabel(semesterPrefix: string, number: number): string {
+  return `${semesterPrefix}-${String(number).padStart(3, '0')}`;
+}
+
 export interface SemesterDetails {
   semesterId: string;
   name: string;

@@ -7,7 +7,7 @@ import { proposals } from '../../database/schema/proposals.js';
 import { semesters } from '../../database/schema/semesters.js';
 import { submissions } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { proposalLabel } from '../semesters/proposal-label.js';
+import { proposalLabel } from '../semesters/semesters.read-model.js';
 
 export interface CurrentSubmission {
   submissionId: string;
