@@ -49,7 +49,11 @@ export function changesOf(scenario: Scenario, now: Date): PastChange[] {
         subjectId: proposal.id,
         subjectName: `${proposal.targets.length} targets`,
         action: 'imported',
-        details: { targetCount: { before: 0, after: proposal.targets.length } },
+        details: {
+          importedCount: { before: null, after: proposal.targets.length },
+          skippedFaultyCount: { before: null, after: 0 },
+          skippedDuplicateCount: { before: null, after: 0 },
+        },
       }),
       ...proposal.members.flatMap(({ id, personId, isPrincipal, signedAt }) =>
         isPrincipal || signedAt === null
@@ -74,15 +78,6 @@ export function changesOf(scenario: Scenario, now: Date): PastChange[] {
         }),
       ),
     ];
-    if (proposal.submittedAt !== null) {
-      changes.push(
-        of('submitted', proposal.submittedAt, principalId, {
-          ...titled,
-          action: 'submitted',
-          details: { state: { before: 'draft', after: 'submitted' } },
-        }),
-      );
-    }
     if (proposal.fate === 'withdrawn' && proposal.submittedAt !== null) {
       changes.push(
         of('withdrawn', daysFrom(proposal.submittedAt, 9), principalId, {
