@@ -62,6 +62,7 @@ export function LightBudget({
   const { share, breakAfter } = budgetPositions(steps.map((step) => step.totalMag));
   const at = (mag: number) => share(mag) * (width - 8) + 4;
   const rowHeight = 30;
+  const gap = width < 140 ? 3 : 7;
   return (
     <Box component="figure" sx={{ minWidth: 0 }}>
       <Box component="figcaption" sx={{ display: 'flex', alignItems: 'baseline', gap: 1 }}>
@@ -172,9 +173,19 @@ export function LightBudget({
                       fill={index === 0 ? colour.primary : step.deltaMag < 0 ? colour.good : colour.accent}
                       fillOpacity={index === 0 ? 1 : 0.85}
                     />
-                    {isBroken && <path d={`M${middle - 7} 5 l5 20 h7 l-5 -20 Z`} fill={colour.surface} stroke="none" />}
                     {isBroken && (
-                      <path d={`M${middle - 7} 5 l5 20 M${middle} 5 l5 20`} stroke={colour.inkSoft} fill="none" />
+                      <path
+                        d={`M${middle - gap} 5 l${gap / 2} 20 h${gap} l${-gap / 2} -20 Z`}
+                        fill={colour.surface}
+                        stroke="none"
+                      />
+                    )}
+                    {isBroken && (
+                      <path
+                        d={`M${middle - gap} 5 l${gap / 2} 20 M${middle} 5 l${gap / 2} 20`}
+                        stroke={colour.inkSoft}
+                        fill="none"
+                      />
                     )}
                   </svg>
                 </td>

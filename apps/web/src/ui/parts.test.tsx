@@ -124,7 +124,7 @@ describe('numbers', () => {
         }}
       />,
     );
-    const button = screen.getByRole('button', { name: /−2\.50.mag/ });
+    const button = screen.getByRole('button', { name: /−2\.50\s*mag/ });
     button.focus();
     await userEvent.keyboard('{Enter}');
     expect(await screen.findByRole('dialog', { name: 'Band shift' })).toHaveTextContent('Source: a paper');

@@ -40,6 +40,11 @@ export function SemesterFacts({ semester }: { semester: Semester }) {
       <dt>Review</dt>
       <dd>
         {semester.isAnonymised ? 'anonymised' : 'names are shown'}
+        {semester.reviewsDueAt && (
+          <>
+            , due <TimeDisplay instant={semester.reviewsDueAt} siteTimeZone={semester.siteTimeZone} />
+          </>
+        )}
         {semester.decidedAt ? (
           <>
             , decided <TimeDisplay instant={semester.decidedAt} siteTimeZone={semester.siteTimeZone} />
