@@ -171,7 +171,8 @@ describe('a database filled with the demo', () => {
     const states = (body as { rows: { state: string; lacking: string[] }[] }).rows;
     const draft = states.find(({ state }) => state === 'draft');
     // A target without brightness, and with it an observation without a time.
-    expect(draft?.lacking.length).toBe(2);
+    expect(draft?.lacking).toHaveLength(2);
+    expect(draft?.lacking.join()).not.toContain('without observation');
     expect(states.some(({ state }) => state === 'awarded')).toBe(true);
     expect(states.some(({ state }) => state === 'inReview')).toBe(true);
   });
@@ -188,6 +189,9 @@ describe('a database filled with the demo', () => {
       members.some(({ personId }) => personId === demoId('person', 'haruka')),
     );
     expect(rows.some(({ proposalId }) => own.some(({ id }) => id === proposalId))).toBe(false);
+    // Half-way through the list, and one proposal put aside as a conflict of interest.
+    const other = (await (await signedInAs('benoit')).get('/api/v1/reading-list').expect(200)).body as ReadingList;
+    expect(other.conflictCount).toBe(1);
   });
 
   it('gives a chair a ranking with a cut line inside it', async () => {

@@ -230,7 +230,7 @@ export class DemoWriter {
 
   /** One reviewer says on reading that the proposal competes with own work: the assignment stays, and shows as a conflict. */
   private async declareConflict(): Promise<void> {
-    const person = this.scenario.people.find(({ key }) => key === 'mirrin');
+    const person = this.scenario.people.find(({ key }) => key === 'benoit');
     const [assignment] = await this.db
       .select({ proposalId: assignments.proposalId })
       .from(assignments)

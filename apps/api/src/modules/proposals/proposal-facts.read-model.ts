@@ -49,8 +49,9 @@ export class ProposalFactsReadModel {
         targetCount: sql<number>`count(*)::int`,
         withoutBrightnessCount: sql<number>`(count(*) filter (where ${targets.light} is null))::int`,
         duplicateCount: sql<number>`count(${targets.nearestDuplicateName})::int`,
+        // Tables are named by hand: of a single table's fields drizzle leaves the table away, and `id` would be the inner one.
         withoutObservationCount: sql<number>`(count(*) filter (where not exists (
-          select 1 from ${observations} where ${observations.targetId} = ${targets.id})))::int`,
+          select 1 from ${observations} where ${observations}.target_id = ${targets}.id)))::int`,
       })
       .from(targets)
       .where(inArray(targets.proposalId, ids))

@@ -160,7 +160,8 @@ export class TargetsReadModel {
           { code: string; message: string; severity: string; field?: string }[]
         >`${targets.computed} -> 'notices'`,
         nearestDuplicateName: targets.nearestDuplicateName,
-        hasObservation: sql<boolean>`exists (select 1 from ${observations} where ${observations.targetId} = ${targets.id})`,
+        // Tables are named by hand: of a single table's fields drizzle leaves the table away, and `id` would be the inner one.
+        hasObservation: sql<boolean>`exists (select 1 from ${observations} where ${observations}.target_id = ${targets}.id)`,
       })
       .from(targets)
       .where(
