@@ -30,6 +30,9 @@ export function DistanceSheet({
         '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', fontWeight: 600, verticalAlign: 'bottom' },
         '& .group th': { fontWeight: 600, color: 'text.secondary', fontSize: '0.8125rem', pt: 1.75 },
         '& .beside': { bgcolor: 'faintward.raised' },
+        // On a phone two columns of long numbers only fit with their units beneath.
+        '& td > span': { whiteSpace: { xs: 'normal', sm: 'nowrap' } },
+        '& td > span > span': { display: { xs: 'block', sm: 'inline' } },
       }}
     >
       <thead>
@@ -70,7 +73,7 @@ export function DistanceSheet({
                           meaning: quantity.meaning,
                           formula: quantity.formula,
                           inputs: [
-                            { label: 'redshift z', value: formatNumber(row.redshift, { significant: 6 }) },
+                            { label: 'redshift z', value: String(row.redshift).replace('-', '−') },
                             { label: 'cosmology', value: modelTitle },
                           ],
                           source: quantity.source,
