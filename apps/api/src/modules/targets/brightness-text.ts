@@ -94,7 +94,14 @@ function parseFlux(
   if (!quantity.ok) return refuse(`${quantity.message} Write it like ${EXAMPLES}.`);
   const band = toBand(inBand?.['band']) ?? presentBand ?? bandId;
   const apparent = (magnitudeAb: number) =>
-    checked({ kind: 'apparentMagnitude', magnitude: magnitudeAb, system: 'AB', bandId: band, ...slope });
+    checked({
+      kind: 'apparentMagnitude',
+      // A millionth of a magnitude is far below what is ever known; more digits would only fill the cell.
+      magnitude: Number(magnitudeAb.toFixed(6)),
+      system: 'AB',
+      bandId: band,
+      ...slope,
+    });
   const { light } = quantity;
   switch (light.kind) {
     case 'abMagnitude':
@@ -114,8 +121,8 @@ function parseFlux(
       const basics = { restWavelengthNm, ...(line === undefined ? {} : { velocityWidthKmS: line.velocityWidthKmS }) };
       const parsed = checked(
         light.kind === 'lineFluxErgSCm2'
-          ? { kind: 'lineFlux', fluxErgSCm2: light.lineFluxErgSCm2, ...basics }
-          : { kind: 'lineLuminosity', luminosityErgS: light.lineLuminosityErgS, ...basics },
+          ? { kind: 'lineFlux', fluxErgSCm2: asTyped(light.lineFluxErgSCm2), ...basics }
+          : { kind: 'lineLuminosity', luminosityErgS: asTyped(light.lineLuminosityErgS), ...basics },
       );
       if (!parsed.ok || givenNm !== undefined || line !== undefined) return parsed;
       return {
@@ -124,6 +131,11 @@ function parseFlux(
       };
     }
   }
+}
+
+/** Without the rounding that converting units leaves in the last digits: nobody types sixteen of them. */
+function asTyped(value: number): number {
+  return Number(value.toPrecision(14));
 }
 
 /** The contract's own limits, so that a cell accepts what a form accepts. */

@@ -117,6 +117,9 @@ function rolesOf(table: DelimitedTable, given: readonly ImportRole[] | undefined
   for (const { columnIndex, role } of guessColumnRoles(table.columns, table.rows.slice(0, SAMPLE_ROW_COUNT)).guesses) {
     roles[columnIndex] = ROLE_OF_GUESS[role] ?? 'ignore';
   }
+  // A column "z" of strange numbers is still more likely the redshift, with errors to be shown, than a list has none.
+  const z = table.columns.findIndex((header, column) => roles[column] === 'ignore' && /^z$/i.test(header.trim()));
+  if (z !== -1 && !roles.includes('redshift')) roles[z] = 'redshift';
   // Our own word for what others call by its band or unit; it counts before a guessed magnitude.
   const own = table.columns.findIndex((header) => /^(?:brightness|light)$/i.test(header.trim()));
   if (own !== -1) {
