@@ -111,3 +111,9 @@ export const MailboxMessage = z
   })
   .meta({ id: 'MailboxMessage' });
 export type MailboxMessage = z.infer<typeof MailboxMessage>;
+
+/**
+ * Cookie that tells the web whether asking who is signed in can be of use. It carries no secret and gives no right: without it
+ * every visitor's first page would begin with two refused requests.
+ */
+export const SESSION_HINT_COOKIE = 'faintward_here';

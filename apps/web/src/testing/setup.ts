@@ -1,3 +1,4 @@
+import { SESSION_HINT_COOKIE } from '@faintward/contracts/accounts';
 import '@testing-library/jest-dom/vitest';
 import { cleanup } from '@testing-library/react';
 import { afterEach, beforeEach, vi } from 'vitest';
@@ -8,6 +9,8 @@ beforeEach(() => {
     Promise.reject(new Error(`Unexpected request: ${input instanceof Request ? input.url : String(input)}`)),
   );
   localStorage.clear();
+  // As after signing in: who is signed in is what the test answers to GET /session.
+  document.cookie = `${SESSION_HINT_COOKIE}=1`;
 });
 
 afterEach(() => {

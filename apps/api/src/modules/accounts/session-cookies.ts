@@ -1,3 +1,4 @@
+import { SESSION_HINT_COOKIE } from '@faintward/contracts/accounts';
 import type { CookieOptions, Request, Response } from 'express';
 import type { Config } from '../../config/config.js';
 import { API_PREFIX } from '../../platform/api-prefix.js';
@@ -21,15 +22,19 @@ const refreshCookie = (config: Config): CookieOptions => ({
   path: `/${API_PREFIX}/session`,
 });
 
+const hintCookie = (config: Config): CookieOptions => ({ ...accessCookie(config), httpOnly: false, path: '/' });
+
 export function setSessionCookies(response: Response, config: Config, tokens: SessionTokens): void {
   response.cookie(ACCESS_COOKIE, tokens.accessToken, accessCookie(config));
   response.cookie(REFRESH_COOKIE, tokens.refreshToken, refreshCookie(config));
+  response.cookie(SESSION_HINT_COOKIE, '1', hintCookie(config));
 }
 
 export function clearSessionCookies(response: Response, config: Config): void {
   for (const [name, options] of [
     [ACCESS_COOKIE, accessCookie(config)],
     [REFRESH_COOKIE, refreshCookie(config)],
+    [SESSION_HINT_COOKIE, hintCookie(config)],
   ] as const) {
     response.clearCookie(name, { ...options, maxAge: undefined });
   }

@@ -44,9 +44,15 @@ export class SessionsController {
   @Public()
   @Answers(Me, { status: 200, description: 'Renewed; the refresh cookie is replaced.' })
   async refresh(@Req() request: Request, @Res({ passthrough: true }) response: Response): Promise<Me> {
-    const { me, tokens } = await this.sessions.refresh(refreshTokenOf(request));
-    setSessionCookies(response, this.config, tokens);
-    return me;
+    try {
+      const { me, tokens } = await this.sessions.refresh(refreshTokenOf(request));
+      setSessionCookies(response, this.config, tokens);
+      return me;
+    } catch (error) {
+      // A refused token stays refused: without this the web would ask again on every page.
+      clearSessionCookies(response, this.config);
+      throw error;
+    }
   }
 
   /** Public, because signing out must also work when the access token has just expired. */

@@ -1,4 +1,4 @@
-import { Me } from '@faintward/contracts/accounts';
+import { Me, SESSION_HINT_COOKIE } from '@faintward/contracts/accounts';
 import { OpenCalls } from '@faintward/contracts/semesters';
 import { queryOptions } from '@tanstack/react-query';
 import { api, ApiError } from '../api';
@@ -11,6 +11,7 @@ export const sessionQueries = {
     queryOptions({
       queryKey: ['session', 'me'],
       queryFn: async ({ signal }): Promise<Me | null> => {
+        if (!document.cookie.includes(`${SESSION_HINT_COOKIE}=`)) return null;
         try {
           const me = await api({ path: '/session', schema: Me, signal, onSignedOut: 'refresh' });
           setHadPerson(true);
