@@ -1,5 +1,5 @@
 import type { ListQuery } from '@faintward/contracts/common';
-import { asc, desc, type SQL } from 'drizzle-orm';
+import { asc, desc, sql, type SQL } from 'drizzle-orm';
 import type { AnyPgColumn } from 'drizzle-orm/pg-core';
 import { invalidField } from './domain-error.js';
 
@@ -23,7 +23,8 @@ export function orderOf(
   const name = query.sort ?? names[0];
   const column = name === undefined || !Object.hasOwn(columns, name) ? undefined : columns[name];
   if (column === undefined) throw invalidField('sort', `Can be sorted by ${names.join(', ')}.`);
-  return [query.order === 'asc' ? asc(column) : desc(column), asc(tieBreaker)];
+  // What has no value comes last in either direction: nobody sorts to see the blanks.
+  return [sql`${query.order === 'asc' ? asc(column) : desc(column)} nulls last`, asc(tieBreaker)];
 }
 
 /** A page in the shape of `pageOf` in the contracts. */

@@ -24,7 +24,27 @@ export class ValidationPipe implements PipeTransform {
 }
 
 export function fieldErrorsOf(error: z.ZodError): FieldError[] {
-  return error.issues.map((issue) => ({ path: issue.path.map(String).join('.'), message: issue.message }));
+  return error.issues.flatMap((issue) => fieldErrorsOfIssue(issue, []));
+}
+
+/**
+ * A value that fits none of several shapes is told about in the shape it comes closest to: of those that got past the value
+ * itself, the one with the fewest faults among its own fields, where a missing or foreign field shows; then the one with the
+ * fewest in all. Where there is none, the whole value is wrong.
+ */
+function fieldErrorsOfIssue(issue: z.core.$ZodIssue, above: readonly PropertyKey[]): FieldError[] {
+  const path = [...above, ...issue.path];
+  if (issue.code === 'invalid_union') {
+    const [closest] = issue.errors
+      .filter((issues) => issues.length > 0 && issues.every((inner) => inner.path.length > 0))
+      .sort((one, other) => ownFaults(one) - ownFaults(other) || one.length - other.length);
+    if (closest) return closest.flatMap((inner) => fieldErrorsOfIssue(inner, path));
+  }
+  return [{ path: path.map(String).join('.'), message: issue.message }];
+}
+
+function ownFaults(issues: readonly z.core.$ZodIssue[]): number {
+  return issues.filter((issue) => issue.path.length === 1).length;
 }
 
 export function validationFailed(fieldErrors: readonly FieldError[]): DomainError {
