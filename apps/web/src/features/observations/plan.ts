@@ -1,0 +1,167 @@
+import { Conditions, Goal } from '@faintward/contracts/estimates';
+import type { Telescope } from '@faintward/contracts/facilities';
+import type { Observation } from '@faintward/contracts/observations';
+import { z } from 'zod';
+import { formatDuration, formatNumber } from '../../lib/format';
+import { parseNumber } from '../../ui/form/parseNumber';
+
+/** A setup, a goal and conditions as typed and chosen, flat, so that a change of kind loses nothing that was typed. */
+export interface PlanDraft {
+  mode: string;
+  goal: Goal['kind'];
+  signalToNoise: string;
+  per: string;
+  exposure: string;
+  count: string;
+  seeing: string;
+  airmass: string;
+  moon: string;
+  transparency: string;
+  repeat: string;
+}
+export type PlanField = keyof PlanDraft;
+export type PlanErrors = Partial<Record<PlanField, string>>;
+
+export const firstPlan: PlanDraft = {
+  mode: '',
+  goal: 'signalToNoise',
+  signalToNoise: '5',
+  per: 'aperture',
+  exposure: '',
+  count: '6',
+  seeing: '',
+  airmass: '1.2',
+  moon: 'dark',
+  transparency: 'clear',
+  repeat: '1',
+};
+
+const text = (value: number | undefined) => (value === undefined ? '' : String(value));
+
+export function toPlanDraft({
+  modeId,
+  goal,
+  conditions,
+  repeatCount,
+}: Pick<Observation, 'modeId' | 'goal' | 'conditions' | 'repeatCount'>): PlanDraft {
+  return {
+    ...firstPlan,
+    mode: modeId,
+    goal: goal.kind,
+    ...(goal.kind === 'signalToNoise' ? { signalToNoise: text(goal.value), per: goal.per } : {}),
+    ...(goal.kind === 'lineSignificance' ? { signalToNoise: text(goal.sigma) } : {}),
+    ...(goal.kind === 'exposureTime' ? { count: text(goal.exposureCount), per: goal.per ?? 'aperture' } : {}),
+    exposure: text(goal.exposureSeconds),
+    seeing: text(conditions.seeingArcsec),
+    airmass: text(conditions.airmass),
+    moon: conditions.moonClass,
+    transparency: conditions.transparency,
+    repeat: text(repeatCount),
+  };
+}
+
+const Plan = z.object({
+  modeId: z.uuid({ error: 'Choose an instrument and a mode.' }),
+  goal: Goal,
+  conditions: Conditions,
+  repeatCount: z.int({ error: 'A whole number, 1 or more.' }).min(1, { error: 'At least once.' }).max(200),
+});
+export type Plan = z.output<typeof Plan>;
+
+/** Which typed field a path of the request came from. */
+const fieldOfPart: Record<string, PlanField> = {
+  modeId: 'mode',
+  setup: 'mode',
+  'setup.modeId': 'mode',
+  goal: 'goal',
+  'goal.kind': 'goal',
+  'goal.value': 'signalToNoise',
+  'goal.sigma': 'signalToNoise',
+  'goal.per': 'per',
+  'goal.exposureSeconds': 'exposure',
+  'goal.exposureCount': 'count',
+  'conditions.seeingArcsec': 'seeing',
+  'conditions.airmass': 'airmass',
+  'conditions.moonClass': 'moon',
+  'conditions.transparency': 'transparency',
+  repeatCount: 'repeat',
+};
+export const planFieldOf = (path: string): PlanField | undefined => fieldOfPart[path];
+
+export type ReadPlan = { ok: true; plan: Plan } | { ok: false; errors: PlanErrors };
+
+/** What a draft asks for, or what is wrong with which field. */
+export function readPlanDraft(draft: PlanDraft): ReadPlan {
+  const number = (field: PlanField) => parseNumber(draft[field]) ?? undefined;
+  const exposureSeconds = number('exposure');
+  const goals = {
+    signalToNoise: { value: number('signalToNoise'), per: draft.per, exposureSeconds },
+    lineSignificance: { sigma: number('signalToNoise'), exposureSeconds },
+    exposureTime: { exposureSeconds, exposureCount: number('count'), per: draft.per },
+  };
+  const parsed = Plan.safeParse({
+    modeId: draft.mode,
+    goal: { kind: draft.goal, ...goals[draft.goal] },
+    conditions: {
+      seeingArcsec: number('seeing'),
+      airmass: number('airmass'),
+      moonClass: draft.moon,
+      transparency: draft.transparency,
+    },
+    repeatCount: number('repeat'),
+  });
+  if (parsed.success) return { ok: true, plan: parsed.data };
+  const errors: PlanErrors = {};
+  for (const issue of parsed.error.issues) {
+    const field = planFieldOf(issue.path.join('.'));
+    if (field) errors[field] ??= draft[field] === '' && field !== 'mode' ? 'Needed.' : issue.message;
+  }
+  return { ok: false, errors };
+}
+
+/** Every mode that may be asked for, with its instrument and telescope. */
+export function offeredModes(telescopes: readonly Telescope[], keptModeId?: string) {
+  return telescopes.flatMap((telescope) =>
+    telescope.instruments.flatMap((instrument) =>
+      instrument.modes
+        .filter((mode) => (instrument.isOffered && mode.isOffered) || mode.modeId === keptModeId)
+        .map((mode) => ({ telescope, instrument, mode })),
+    ),
+  );
+}
+export type OfferedMode = ReturnType<typeof offeredModes>[number];
+
+export const perWords = {
+  aperture: 'aperture',
+  arcsec2: 'square arcsecond',
+  pixel: 'pixel',
+  resolutionElement: 'resolution element',
+} as const;
+
+export const limitWords = {
+  source: 'the source',
+  sky: 'the sky',
+  dark: 'dark current',
+  readNoise: 'read-out',
+} as const;
+
+export function describeGoal(goal: Goal): string {
+  const number = (value: number) => formatNumber(value, { significant: 3 });
+  switch (goal.kind) {
+    case 'signalToNoise':
+      return `S/N ${number(goal.value)} per ${perWords[goal.per]}`;
+    case 'lineSignificance':
+      return `line at ${number(goal.sigma)} σ`;
+    case 'exposureTime':
+      return `${goal.exposureCount} × ${formatDuration(goal.exposureSeconds)}`;
+  }
+}
+
+export function describeConditions(conditions: Conditions): string {
+  return [
+    `${conditions.seeingArcsec}″`,
+    `airmass ${conditions.airmass}`,
+    conditions.moonClass,
+    conditions.transparency === 'clear' ? 'clear' : 'thin cloud',
+  ].join(' · ');
+}

@@ -1,0 +1,234 @@
+import type { Target } from '@faintward/contracts/targets';
+import MoreVertIcon from '@mui/icons-material/MoreVert';
+import Box from '@mui/material/Box';
+import IconButton from '@mui/material/IconButton';
+import Link from '@mui/material/Link';
+import Tooltip from '@mui/material/Tooltip';
+import type { ReactNode } from 'react';
+import { formatNumber, type NumberFormat } from '../../../lib/format';
+import type { TableColumn } from '../../../ui/DataTable';
+import { RedshiftValue } from '../../../ui/RedshiftValue';
+import { visuallyHidden } from '../../../ui/visuallyHidden';
+import {
+  cellOfField,
+  describeExtent,
+  redshiftDecimals,
+  shortNotice,
+  storedText,
+  type CellName,
+  type EditableField,
+} from '../cells';
+import { draftKey, type CellDraft, type Drafts } from '../hooks/useCellEdits';
+
+/** A target with what is typed over it: the fields that can be typed into hold texts. */
+export interface TargetRow extends Record<EditableField, string> {
+  target: Target;
+  drafts: Partial<Record<CellName, CellDraft>>;
+  isSaving: boolean;
+}
+
+export function toTargetRow(target: Target, drafts: Drafts): TargetRow {
+  const own: TargetRow['drafts'] = {};
+  const texts = {} as Record<EditableField, string>;
+  for (const [field, cell] of Object.entries(cellOfField) as [EditableField, CellName][]) {
+    const draft = drafts.get(draftKey(target.targetId, cell));
+    if (draft) own[cell] = draft;
+    texts[field] = draft?.text ?? storedText(target, cell);
+  }
+  return { ...texts, target, drafts: own, isSaving: Object.values(own).some((draft) => draft.state === 'saving') };
+}
+
+export interface ColumnActions {
+  canEdit: boolean;
+  onOpen: (targetId: string) => void;
+  onMenu: (target: Target, anchor: HTMLElement) => void;
+}
+
+export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): TableColumn<TargetRow>[] {
+  const typed = (
+    field: EditableField,
+    column: Omit<TableColumn<TargetRow>, 'field' | 'renderCell'>,
+    draw: (row: TargetRow) => ReactNode = (row) => row[field],
+  ): TableColumn<TargetRow> => ({
+    field,
+    editable: canEdit,
+    sortable: false,
+    ...column,
+    cellClassName: ({ row }) => {
+      const draft = row.drafts[cellOfField[field]];
+      return draft ? (draft.state === 'saving' ? 'saving' : 'faulty') : '';
+    },
+    renderCell: ({ row }) => {
+      const draft = row.drafts[cellOfField[field]];
+      return draft ? <DraftText draft={draft} /> : draw(row);
+    },
+  });
+  const computed = (
+    field: string,
+    headerName: string,
+    unit: string,
+    width: number,
+    read: (target: Target) => number | null,
+    format: NumberFormat,
+    sortable = false,
+  ): TableColumn<TargetRow> => ({
+    field,
+    headerName,
+    unit,
+    width,
+    sortable,
+    computed: true,
+    numeric: true,
+    valueGetter: (_value, row) => read(row.target),
+    renderCell: ({ row }) => formatNumber(read(row.target), format),
+  });
+  return [
+    typed('name', { headerName: 'Target', width: 156, sortable: true }, ({ name, target }) => (
+      <Link
+        component="button"
+        tabIndex={-1}
+        onClick={() => onOpen(target.targetId)}
+        title="Open the target sheet"
+        sx={{ fontWeight: 600, overflow: 'hidden', textOverflow: 'ellipsis', color: 'text.primary', textAlign: 'left' }}
+      >
+        {name}
+      </Link>
+    )),
+    typed('rightAscensionDeg', { headerName: 'Right ascension', unit: 'ICRS', width: 124, sortable: true }, coordinate),
+    typed('declinationDeg', { headerName: 'Declination', unit: 'ICRS', width: 124, sortable: true }, (row) =>
+      coordinate(row, 'declinationDeg'),
+    ),
+    typed('redshift', { headerName: 'Redshift', width: 96, sortable: true, numeric: true }, ({ target }) => (
+      <RedshiftValue redshift={target.redshift} decimals={redshiftDecimals(target.redshift)} />
+    )),
+    typed(
+      'redshiftSigma',
+      { headerName: 'σ_z', width: 72, numeric: true },
+      ({ redshiftSigma }) => redshiftSigma || '—',
+    ),
+    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 156 }, ({ brightnessText }) =>
+      brightnessText === '' ? <Quiet>not given</Quiet> : brightnessText,
+    ),
+    {
+      field: 'extent',
+      headerName: 'Size',
+      unit: 'half light',
+      width: 92,
+      sortable: false,
+      valueGetter: (_value, row) => describeExtent(row.target.extent),
+    },
+    computed(
+      'luminosityDistanceMpc',
+      'D_L',
+      'Mpc',
+      84,
+      (t) => t.computed.luminosityDistanceMpc,
+      { significant: 5 },
+      true,
+    ),
+    computed('kpcPerArcsec', 'Scale', 'kpc/″', 74, (t) => t.computed.kpcPerArcsec, { decimals: 3 }),
+    computed('ageGyr', 'Age', 'Gyr', 72, (t) => t.computed.ageGyr, { decimals: 3 }, true),
+    computed('distanceModulusMag', 'μ', 'mag', 72, (t) => t.computed.distanceModulusMag, { decimals: 2 }),
+    computed('dimming', 'Dimming', 'AB mag/″²', 84, (t) => t.computed.perFrequencyDimmingMag, { decimals: 2 }),
+    {
+      ...computed('apparentMagnitudeAb', 'm', 'AB', 74, (t) => t.computed.apparentMagnitudeAb, { decimals: 2 }, true),
+      renderCell: ({ row: { target } }) => (
+        <span title={target.computed.magnitudeLabel ?? undefined}>
+          {formatNumber(target.computed.apparentMagnitudeAb, { decimals: 2 })}
+        </span>
+      ),
+    },
+    computed(
+      'requestedSeconds',
+      'Time',
+      'h',
+      70,
+      (t) => (t.requestedSeconds === null ? null : t.requestedSeconds / 3600),
+      { decimals: 2 },
+      true,
+    ),
+    {
+      field: 'upSummary',
+      headerName: 'Up',
+      width: 96,
+      sortable: false,
+      computed: true,
+      valueGetter: (_value, row) => row.target.computed.upSummary ?? '—',
+    },
+    {
+      field: 'notices',
+      headerName: 'Notices',
+      width: 150,
+      sortable: false,
+      computed: true,
+      valueGetter: (_value, row) => row.target.computed.notices.map((notice) => notice.message).join(' '),
+      renderCell: ({ row }) => <NoticesCell notices={row.target.computed.notices} />,
+    },
+    typed('notes', { headerName: 'Notes', minWidth: 150, flex: 1 }),
+    {
+      field: 'menu',
+      headerName: 'More',
+      width: 52,
+      sortable: false,
+      renderHeader: () => <span style={visuallyHidden}>More</span>,
+      renderCell: ({ row: { target }, tabIndex }) => (
+        <IconButton
+          size="small"
+          tabIndex={tabIndex}
+          aria-haspopup="menu"
+          aria-label={`Actions for ${target.name}`}
+          onClick={(event) => onMenu(target, event.currentTarget)}
+        >
+          <MoreVertIcon fontSize="small" />
+        </IconButton>
+      ),
+    },
+  ];
+}
+
+function coordinate(row: TargetRow, field: 'rightAscensionDeg' | 'declinationDeg' = 'rightAscensionDeg') {
+  return (
+    <Box component="span" sx={{ typography: 'figure', fontSize: '0.8125rem' }}>
+      {row[field]}
+    </Box>
+  );
+}
+
+function Quiet({ children }: { children: ReactNode }) {
+  return (
+    <Box component="span" sx={{ color: 'text.secondary', fontStyle: 'italic' }}>
+      {children}
+    </Box>
+  );
+}
+
+/** What was typed, in its cell, with why it is not stored. */
+function DraftText({ draft }: { draft: CellDraft }) {
+  const text = draft.text === '' ? 'empty' : draft.text;
+  if (draft.state === 'saving') return <span>{text}</span>;
+  return (
+    <Tooltip title={draft.message} describeChild enterDelay={200}>
+      <Box component="span" sx={{ color: 'error.main', overflow: 'hidden', textOverflow: 'ellipsis' }}>
+        <span aria-hidden="true">▲ </span>
+        {text}
+        <span style={visuallyHidden}>, not stored: {draft.message}</span>
+      </Box>
+    </Tooltip>
+  );
+}
+
+function NoticesCell({ notices }: { notices: Target['computed']['notices'] }) {
+  const [first] = notices;
+  if (!first) return null;
+  const tone =
+    first.severity === 'error' ? 'error.main' : first.severity === 'warning' ? 'warning.main' : 'text.secondary';
+  return (
+    <Tooltip title={notices.map((notice) => notice.message).join(' ')} describeChild>
+      <Box component="span" sx={{ color: tone, overflow: 'hidden', textOverflow: 'ellipsis' }}>
+        <span aria-hidden="true">{first.severity === 'note' ? '· ' : '▲ '}</span>
+        {shortNotice(first)}
+        {notices.length > 1 && ` +${notices.length - 1}`}
+      </Box>
+    </Tooltip>
+  );
+}

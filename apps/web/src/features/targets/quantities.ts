@@ -1,0 +1,164 @@
+import type { DistanceRow } from '@faintward/contracts/distances';
+import type { TargetComputed } from '@faintward/contracts/targets';
+import type { NumberFormat } from '../../lib/format';
+
+const hogg = (section: number) => `Hogg 1999, arXiv:astro-ph/9905116, section ${section}`;
+const tolman = 'Tolman 1930, PNAS 16, 511: four powers of 1+z for energy; the rest follows from the width of the band';
+
+interface Defined {
+  label: string;
+  unit: string;
+  format: NumberFormat;
+  meaning: string;
+  formula: string;
+  source: string;
+}
+
+/** Distances and times of a target, each with where it comes from. */
+export const targetQuantities: readonly (Defined & { field: keyof TargetComputed & keyof DistanceRow })[] = [
+  {
+    field: 'luminosityDistanceMpc',
+    label: 'Luminosity distance',
+    unit: 'Mpc',
+    format: { significant: 6 },
+    meaning: 'The distance that makes bolometric flux fall as the inverse square.',
+    formula: 'D_L = (1 + z) D_M',
+    source: hogg(7),
+  },
+  {
+    field: 'distanceModulusMag',
+    label: 'Distance modulus',
+    unit: 'mag',
+    format: { decimals: 3 },
+    meaning: 'Apparent minus absolute bolometric magnitude.',
+    formula: 'μ = 5 log₁₀(D_L / 10 pc)',
+    source: hogg(8),
+  },
+  {
+    field: 'angularDiameterDistanceMpc',
+    label: 'Angular diameter distance',
+    unit: 'Mpc',
+    format: { significant: 6 },
+    meaning: 'Proper size divided by the angle it spans.',
+    formula: 'D_A = D_M / (1 + z)',
+    source: hogg(6),
+  },
+  {
+    field: 'kpcPerArcsec',
+    label: 'Scale',
+    unit: 'kpc/″',
+    format: { decimals: 3 },
+    meaning: 'Proper kiloparsec that one arcsecond spans at the source.',
+    formula: 's = D_A · π / 648 000',
+    source: hogg(6),
+  },
+  {
+    field: 'ageGyr',
+    label: 'Age of the Universe then',
+    unit: 'Gyr',
+    format: { decimals: 3 },
+    meaning: 'Age when the light set out.',
+    formula: 't = (1 / H₀) ∫ dz′ / [(1 + z′) E(z′)], from z to infinity',
+    source: hogg(10),
+  },
+  {
+    field: 'lookbackTimeGyr',
+    label: 'Lookback time',
+    unit: 'Gyr',
+    format: { decimals: 3 },
+    meaning: 'How long the light has travelled.',
+    formula: 't_L = (1 / H₀) ∫₀ᶻ dz′ / [(1 + z′) E(z′)]',
+    source: hogg(10),
+  },
+];
+
+/** The same surface, four ways to count its light: each loses another power of 1+z. */
+export const dimmingQuantities: readonly (Defined & { field: keyof DistanceRow; powers: string })[] = [
+  {
+    field: 'bolometricDimmingMag',
+    label: 'In energy: bolometric, or a whole line',
+    powers: '(1+z)⁴',
+    unit: 'mag/″²',
+    format: { decimals: 3 },
+    meaning: 'One power each for the energy and the rate of the photons, two for the angle that the surface spans.',
+    formula: '10 log₁₀(1 + z)',
+    source: tolman,
+  },
+  {
+    field: 'perFrequencyDimmingMag',
+    label: 'Per unit frequency: AB magnitudes',
+    powers: '(1+z)³',
+    unit: 'mag/″²',
+    format: { decimals: 3 },
+    meaning: 'A band of frequency narrows on its way, which gives one power back. The column in the table is this one.',
+    formula: '7.5 log₁₀(1 + z)',
+    source: tolman,
+  },
+  {
+    field: 'perWavelengthDimmingMag',
+    label: 'Per unit wavelength: f_λ, Vega magnitudes',
+    powers: '(1+z)⁵',
+    unit: 'mag/″²',
+    format: { decimals: 3 },
+    meaning: 'A band of wavelength widens on its way, which takes one power more.',
+    formula: '12.5 log₁₀(1 + z)',
+    source: tolman,
+  },
+  {
+    field: 'photonRateDimmingMag',
+    label: 'In photons of a line, or of all wavelengths',
+    powers: '(1+z)³',
+    unit: 'mag/″²',
+    format: { decimals: 3 },
+    meaning: 'A counter does not mind the energy that each photon lost.',
+    formula: '7.5 log₁₀(1 + z)',
+    source: tolman,
+  },
+];
+
+export const lightQuantities: readonly (Defined & {
+  field: 'apparentMagnitudeAb' | 'absoluteMagnitudeAb' | 'halfLightRadiusArcsec' | 'surfaceBrightnessAbMagPerArcsec2';
+  unknown: string;
+})[] = [
+  {
+    field: 'apparentMagnitudeAb',
+    label: 'Apparent magnitude',
+    unit: 'AB',
+    format: { decimals: 2 },
+    meaning:
+      'Before the atmosphere: as given, or from the absolute magnitude at the wavelength to which it is shifted.',
+    formula: 'm = M + μ − 2.5 log₁₀(1 + z)',
+    source: 'Hogg et al. 2002, arXiv:astro-ph/0210394; AB system: Oke & Gunn 1983, ApJ 266, 713',
+    unknown: 'A line and an even surface have no magnitude of their own.',
+  },
+  {
+    field: 'absoluteMagnitudeAb',
+    label: 'Absolute magnitude',
+    unit: 'AB',
+    format: { decimals: 2 },
+    meaning: 'At the rest wavelength that is observed in the band, so that no colour enters.',
+    formula: 'M = m − μ + 2.5 log₁₀(1 + z)',
+    source: 'Hogg et al. 2002, arXiv:astro-ph/0210394',
+    unknown: 'Needs a magnitude and a distance.',
+  },
+  {
+    field: 'halfLightRadiusArcsec',
+    label: 'Half-light radius',
+    unit: '″',
+    format: { significant: 3 },
+    meaning: 'As given, or from kiloparsec through the scale.',
+    formula: 'θ = r / s',
+    source: hogg(6),
+    unknown: 'Only a galaxy with a profile has one.',
+  },
+  {
+    field: 'surfaceBrightnessAbMagPerArcsec2',
+    label: 'Mean surface brightness within it',
+    unit: 'AB/″²',
+    format: { decimals: 2 },
+    meaning: 'Half of the light over the area of the ellipse that holds it.',
+    formula: '⟨μ⟩ = m + 2.5 log₁₀(2π q θ²)',
+    source: 'Graham & Driver 2005, arXiv:astro-ph/0503176, section 2.2',
+    unknown: 'Needs a magnitude and a size.',
+  },
+];
