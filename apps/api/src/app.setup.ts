@@ -37,7 +37,6 @@ export async function createApp(
     bodyParser: false,
     logger: options.logger ?? loggerFor(config),
     abortOnError: false,
-    forceCloseConnections: true,
     routeConflictPolicy: { duplicate: 'error', shadow: 'off' },
     routeResolutionStrategy: 'specificity',
   });
@@ -76,21 +75,30 @@ function configureApp(app: NestExpressApplication, config: Config, webFolder: st
   serveWeb(app, webFolder);
 }
 
+/** Whether an address belongs to the api however it is written: `//api`, `/API/v1` and `/api%2Fv1` do. */
+function isApiPath(requestPath: string): boolean {
+  return /^(\/|%2f)+api(\/|%2f|$)/i.test(requestPath);
+}
+
+/** Addresses of pages: no file ending, no hidden file, nothing in the folder of built files. */
+function isPagePath(requestPath: string): boolean {
+  return !isApiPath(requestPath) && !/^\/+assets(\/|$)/i.test(requestPath) && !/(^|\/)\.|\.[^/]*$/.test(requestPath);
+}
+
 /**
  * The web application on the same port. Built files carry a hash in their name and never change; the page itself is asked
  * for again each time. Addresses without a file ending are the web's own routes and get the page; a missing file is 404.
  */
 function serveWeb(app: NestExpressApplication, webFolder: string): void {
   const page = path.join(webFolder, 'index.html');
-  app.use('/assets', express.static(path.join(webFolder, 'assets'), { index: false, immutable: true, maxAge: '365d' }));
-  app.use(express.static(webFolder, { index: false, maxAge: '1h', etag: true }));
+  const files = { index: false, redirect: false } as const;
+  app.use('/assets', express.static(path.join(webFolder, 'assets'), { ...files, immutable: true, maxAge: '365d' }));
+  app.use(express.static(webFolder, { ...files, maxAge: '1h', etag: true }));
   app.use((request: Request, response: Response, next: NextFunction) => {
     if (request.path.startsWith(`/${API_PREFIX}/`)) return next();
     const isPage =
       (request.method === 'GET' || request.method === 'HEAD') &&
-      request.path !== '/api' &&
-      !request.path.startsWith('/api/') &&
-      path.extname(request.path) === '' &&
+      isPagePath(request.path) &&
       request.accepts(['html', 'json']) === 'html';
     if (!isPage) return next(new DomainError('not-found', 'There is nothing at this address.'));
     if (!existsSync(page)) {

@@ -1,19 +1,27 @@
 import 'reflect-metadata';
-import type { AddressInfo } from 'node:net';
+import type { Server } from 'node:http';
+import net, { type AddressInfo } from 'node:net';
 import process from 'node:process';
 import type { NestExpressApplication } from '@nestjs/platform-express';
-import { createApp } from './app.setup.js';
 import { MEMORY_DATA_DIR, readConfig } from './config/config.js';
 import { openDatabase } from './database/connection.js';
-import { seedDemoIfWanted } from './demo-loader.js';
-import { AccountsService } from './modules/accounts/accounts.service.js';
-import { DemoMode } from './platform/demo-mode.js';
+import { finishRequests } from './platform/finish-requests.js';
 import { runCommand } from './startup.js';
 import { VERSION } from './version.js';
 
+/** Longer than any answer takes; a request that is still coming in after it is cut off. */
+const PATIENCE_MS = 10_000;
+
 await runCommand(async () => {
   const config = readConfig();
+  await assertPortIsFree(config.port, config.host);
   const database = await openDatabase(config);
+  // Loaded only now: what makes a start impossible shows in a moment.
+  const [{ createApp }, { seedDemoIfWanted }, { DemoMode }] = await Promise.all([
+    import('./app.setup.js'),
+    import('./demo-loader.js'),
+    import('./platform/demo-mode.js'),
+  ]);
   const app = await createApp(config, database);
   endCleanly(app);
   if (await app.get(DemoMode).shouldSeed()) console.log('The database is empty: filling it with the demo scenario …');
@@ -36,7 +44,20 @@ await runCommand(async () => {
   await printDemoPeople(app);
 });
 
+/** Asked before anything else, because an empty database takes a while to fill. */
+async function assertPortIsFree(port: number, host: string): Promise<void> {
+  const server = net.createServer();
+  await new Promise<void>((resolve, reject) => {
+    server.once('error', reject);
+    server.listen(port, host, () => server.close(() => resolve()));
+  });
+}
+
 async function printDemoPeople(app: NestExpressApplication): Promise<void> {
+  const [{ AccountsService }, { DemoMode }] = await Promise.all([
+    import('./modules/accounts/accounts.service.js'),
+    import('./platform/demo-mode.js'),
+  ]);
   if ((await app.get(DemoMode).findPassword()) === undefined) return;
   const { people, password } = await app.get(AccountsService).listDemoPeople();
   console.log(`\nDemo people, all with the password "${password}":`);
@@ -51,7 +72,8 @@ function endCleanly(app: NestExpressApplication): void {
   const end = () => {
     if (isEnding) process.exit(1);
     isEnding = true;
-    app.close().then(
+    const closing = finishRequests(app.getHttpServer() as Server, PATIENCE_MS).then(() => app.close());
+    closing.then(
       () => process.exit(0),
       (error: unknown) => {
         console.error(error instanceof Error ? error.message : error);

@@ -129,6 +129,15 @@ describe('a session', () => {
     await app.http().post('/api/v1/session/refresh').set('Cookie', cookies).expect(401);
   });
 
+  it('takes a cookie of another form for no cookie', async () => {
+    for (const value of ['j:{"a":1}', 'j:["a"]', 'j:null', '%00', '']) {
+      const cookies = `faintward_refresh=${value}; faintward_access=${value}`;
+      await app.http().post('/api/v1/session/refresh').set('Cookie', cookies).expect(401);
+      await app.http().get('/api/v1/session').set('Cookie', cookies).expect(401);
+      await app.http().delete('/api/v1/session').set('Cookie', cookies).expect(204);
+    }
+  });
+
   it('refuses a token that was signed by somebody else or not at all', async () => {
     const person = await aPerson(app);
     const encode = (value: object) => Buffer.from(JSON.stringify(value)).toString('base64url');

@@ -1,4 +1,4 @@
-import { mkdtempSync, readFileSync, statSync } from 'node:fs';
+import { mkdtempSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { describe, expect, it } from 'vitest';
@@ -37,6 +37,26 @@ describe('the configuration', () => {
     const file = path.join(dataDir, 'session-secret');
     expect(readFileSync(file, 'utf8')).toBe(first);
     expect(statSync(file).mode & 0o077).toBe(0);
+  });
+
+  it('refuses a kept secret that is too short to be one, and says how to get another', () => {
+    const dataDir = mkdtempSync(path.join(os.tmpdir(), 'faintward-config-'));
+    const file = path.join(dataDir, 'session-secret');
+    for (const content of ['', 'short\n']) {
+      writeFileSync(file, content);
+      expect(() => readConfig({ DATA_DIR: dataDir })).toThrow(InvalidConfiguration);
+      expect(() => readConfig({ DATA_DIR: dataDir })).toThrow(`${file} does not hold a secret`);
+    }
+    rmSync(file);
+    expect(readConfig({ DATA_DIR: dataDir }).sessionSecret.length).toBeGreaterThanOrEqual(64);
+    expect(readdirSync(dataDir)).toEqual(['session-secret']);
+  });
+
+  it('takes digits only for a number', () => {
+    for (const PORT of [' ', '0x50', '1e3', '-1', '65536', '80.5']) {
+      expect(() => readConfig({ DATA_DIR: 'memory://', PORT })).toThrow('PORT: must be a port number from 0 to 65535');
+    }
+    expect(readConfig({ DATA_DIR: 'memory://', PORT: '8080' }).port).toBe(8080);
   });
 
   it('marks cookies secure where people come by https', () => {

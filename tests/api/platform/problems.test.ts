@@ -42,6 +42,15 @@ describe('a refusal', () => {
     expect(JSON.stringify(body)).not.toContain('hidden-value');
   });
 
+  it('says 400 to a body that is nested beyond reason, and takes brackets inside text for text', async () => {
+    const send = (body: string) =>
+      app.http().post('/api/v1/session').set('Content-Type', 'application/json').send(body);
+    const { body } = await send(`{"email":${'['.repeat(100_000)}${']'.repeat(100_000)}}`).expect(400);
+    expect(body).toMatchObject({ code: 'malformed-request', detail: 'The body is nested too deeply.' });
+    await send(JSON.stringify({ email: 'a@b.example', password: `\\"${'['.repeat(150)}` })).expect(401);
+    await send(`{"list":[${'[],'.repeat(200)}[]]}`).expect(422);
+  });
+
   it('says 422 to a request without any body where one is needed', async () => {
     const { body } = await app.http().post('/api/v1/session').expect(422);
     expect(body.code).toBe('validation-failed');

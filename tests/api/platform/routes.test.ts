@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs';
+import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { listRoutes, type RouteDescription } from '../../../apps/api/src/platform/routes.js';
 import { aPerson, signedInAs } from '../../factories/people.js';
@@ -36,6 +38,20 @@ describe('every route', () => {
     expect(documented.length).toBeGreaterThan(15);
   });
 
+  it('stands in the table of the contracts, which names no other', () => {
+    const readme = readFileSync(path.resolve(import.meta.dirname, '../../../libs/contracts/README.md'), 'utf8');
+    const described = readme.split('\n').flatMap((line) => {
+      const [, cell] = /^\| (`(?:GET|POST|PUT|PATCH|DELETE).*?) \|/.exec(line) ?? [];
+      let address = '';
+      return [...(cell ?? '').matchAll(/`([A-Z]+)(?: (\S+))?`/g)].map(([, method, given]) => {
+        address = given ?? address;
+        return `${method} /api/v1${address.replaceAll(/\{[^}]+\}/g, '{}')}`;
+      });
+    });
+    const present = routes.map((route) => `${route.method} ${route.path.replaceAll(/:[^/]+/g, '{}')}`);
+    expect(described.sort()).toEqual(present.sort());
+  });
+
   it('is public, for the signed-in, or names a permission', () => {
     const silent = routes.filter((route) => route.access === undefined);
     expect(silent.map((route) => `${route.controller}.${route.handler}`)).toEqual([]);
@@ -71,7 +87,7 @@ describe('every route', () => {
   it('never answers 500 to a signed-in person who asks for what does not exist, with or without a body', async () => {
     const agent = await signedInAs(app, await aPerson(app, { isStaff: true, isAdministrator: true }));
     for (const route of routes.filter(({ path }) => !path.endsWith('/session'))) {
-      for (const body of [undefined, {}, [], { unexpected: null }]) {
+      for (const body of [undefined, {}, [], { unexpected: null }, JSON.parse('{"__proto__":{"a":1},"a":"\\u0000"}')]) {
         const call = send(agent, route).set('If-Match', '"1"');
         const response = body === undefined || route.method === 'GET' ? await call : await call.send(body);
         expect([route.method, route.path, JSON.stringify(body), response.status >= 500]).toEqual([

@@ -38,6 +38,26 @@ describe('the web pages', () => {
     await app.http().post('/proposals').set('Accept', 'text/html').expect(404);
   });
 
+  it('never stand in for the api under another spelling of its address, nor for hidden files', async () => {
+    const addresses = [
+      '/API/V1/health',
+      '//api/v1/health',
+      '/api%2Fv1%2Fhealth',
+      '/assets',
+      '/assets/',
+      '/assets/x',
+      '/.env',
+    ];
+    for (const address of [...addresses, '/.git/config']) {
+      const response = await app.http().get(address).set('Accept', 'text/html');
+      expect([address, response.status, response.headers['content-type']]).toEqual([
+        address,
+        404,
+        'application/problem+json; charset=utf-8',
+      ]);
+    }
+  });
+
   it('cannot be left for another folder', async () => {
     const response = await app.http().get('/assets/..%2f..%2fpackage.json').set('Accept', 'text/html');
     expect(response.text).not.toContain('the page"');

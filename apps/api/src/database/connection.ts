@@ -21,6 +21,18 @@ export interface DatabaseHandle {
   close(): Promise<void>;
 }
 
+/** The files of the embedded database cannot be opened by this engine. */
+export class DatabaseUnreadable extends Error {
+  override readonly name = 'DatabaseUnreadable';
+  constructor(folder: string, cause: unknown) {
+    super(
+      `The database in ${folder} cannot be opened: it is damaged, or another version of the engine made it. Keep the ` +
+        'folder, and restore the newest backup into another one: DATA_DIR=… npm run restore -- faintward-….tar.gz',
+      { cause },
+    );
+  }
+}
+
 /** Generated migrations, beside the workspaces; the same relative path from sources and from the build. */
 export const MIGRATIONS_FOLDER = path.resolve(import.meta.dirname, '../../../../drizzle');
 
@@ -60,11 +72,20 @@ async function openEmbedded(dataDir: string): Promise<DatabaseHandle> {
   if (dataDir === MEMORY_DATA_DIR) return embeddedHandle(await PGlite.create({ extensions }));
   const unlock = await lockDataFolder(dataDir);
   try {
-    return await embeddedHandle(await PGlite.create({ dataDir: embeddedFolder(dataDir), extensions }), unlock);
+    const folder = embeddedFolder(dataDir);
+    const client = await PGlite.create({ dataDir: folder, extensions }).catch((error: unknown) => {
+      // A full disk or a folder of somebody else says so itself.
+      throw isFileError(error) ? error : new DatabaseUnreadable(folder, error);
+    });
+    return await embeddedHandle(client, unlock);
   } catch (error) {
     await unlock();
     throw error;
   }
+}
+
+function isFileError(error: unknown): boolean {
+  return error instanceof Error && typeof (error as NodeJS.ErrnoException).syscall === 'string';
 }
 
 /** Wraps an open PGlite, for instance one that a test restored from a template. */
@@ -93,18 +114,32 @@ async function openServer(connectionString: string, poolSize: number): Promise<D
   const { default: pg } = await import('pg');
   const { drizzle } = await import('drizzle-orm/node-postgres');
   const { migrate } = await import('drizzle-orm/node-postgres/migrator');
-  const pool = new pg.Pool({ connectionString, max: poolSize });
+  const pool = new pg.Pool({
+    connectionString,
+    max: poolSize,
+    // Waiting for ever would pile up requests while the server is away or all connections are busy.
+    connectionTimeoutMillis: 10_000,
+    keepAlive: true,
+    application_name: 'faintward',
+    // The locks of a process that stands still must not hold up the others for ever.
+    idle_in_transaction_session_timeout: 60_000,
+  });
   // An idle connection that the server drops must not end the process; the pool opens another.
   pool.on('error', () => undefined);
   const db = drizzle(pool, { schema });
   // The migrator itself takes no lock: several processes that start together would each create the same tables.
-  const client = await pool.connect();
   try {
-    await client.query('select pg_advisory_lock($1)', [MIGRATION_LOCK]);
-    await migrate(db, { migrationsFolder: MIGRATIONS_FOLDER });
-  } finally {
-    await client.query('select pg_advisory_unlock($1)', [MIGRATION_LOCK]);
-    client.release();
+    const client = await pool.connect();
+    try {
+      await client.query('select pg_advisory_lock($1)', [MIGRATION_LOCK]);
+      await migrate(db, { migrationsFolder: MIGRATIONS_FOLDER });
+    } finally {
+      // The lock ends with its connection, in whatever state that is.
+      client.release(true);
+    }
+  } catch (error) {
+    await pool.end();
+    throw error;
   }
   return {
     db: db as unknown as Database,

@@ -7,13 +7,29 @@ export interface DatabaseFailure {
   constraint: string | undefined;
 }
 
+/** SQLSTATE `connection_failure`; also stands for what the driver finds before there is a server to name a state. */
+const CONNECTION_FAILURE = '08006';
+
+/** The requests of people open no other connections than those to the database. */
+function isLostConnection(code: unknown, message: string): boolean {
+  return (
+    (typeof code === 'string' &&
+      /^(ECONNREFUSED|ECONNRESET|ENOTFOUND|EAI_AGAIN|ETIMEDOUT|EHOSTUNREACH|EPIPE)$/.test(code)) ||
+    // Errors of `pg` that carry no code.
+    /^(Connection terminated|timeout exceeded when trying to connect|Client has encountered a connection error)/.test(
+      message,
+    )
+  );
+}
+
 /** Reads SQLSTATE and constraint from an error of either driver, wrapped by drizzle or not; undefined for other errors. */
 export function databaseFailure(error: unknown): DatabaseFailure | undefined {
   for (let candidate: unknown = error, depth = 0; candidate instanceof Error && depth < 5; depth += 1) {
     const { code, constraint } = candidate as { code?: unknown; constraint?: unknown };
-    if (typeof code === 'string' && /^[0-9A-Z]{5}$/.test(code)) {
+    if (typeof code === 'string' && /^[0-9A-Z]{5}$/.test(code) && code !== 'EPIPE') {
       return { code, constraint: typeof constraint === 'string' ? constraint : undefined };
     }
+    if (isLostConnection(code, candidate.message)) return { code: CONNECTION_FAILURE, constraint: undefined };
     candidate = candidate.cause;
   }
   return undefined;
@@ -64,8 +80,11 @@ export function generalAnswer(failure: DatabaseFailure): DomainError | undefined
       );
     case '53300':
     case '57P01':
+    case '57P02':
     case '57P03':
-    case '08006':
+    case '08000':
+    case '08003':
+    case CONNECTION_FAILURE:
       return new DomainError('unavailable', 'The database is not available right now.', { retryAfterSeconds: 5 });
     default:
       return undefined;

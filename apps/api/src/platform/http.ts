@@ -56,7 +56,7 @@ export function bodyParsers(app: NestExpressApplication): RequestHandler {
   const parserFor = (limit: number): RequestHandler => {
     const known = parsers.get(limit);
     if (known !== undefined) return known;
-    const parser = json({ limit, strict: true });
+    const parser = json({ limit, strict: true, verify: (_request, _response, body) => refuseDeepNesting(body) });
     parsers.set(limit, parser);
     return parser;
   };
@@ -90,8 +90,29 @@ export function bodyParsers(app: NestExpressApplication): RequestHandler {
   };
 }
 
+/** Deeper than any request of ours; the parser of JSON takes several times longer over nesting than over text. */
+const MAX_NESTING = 64;
+
+function refuseDeepNesting(body: Buffer): void {
+  let depth = 0;
+  let isInText = false;
+  for (let index = 0; index < body.length; index += 1) {
+    const byte = body[index];
+    if (isInText) {
+      if (byte === BACKSLASH) index += 1;
+      else if (byte === QUOTE) isInText = false;
+    } else if (byte === QUOTE) isInText = true;
+    else if (byte === BRACKET || byte === BRACE) {
+      depth += 1;
+      if (depth > MAX_NESTING) throw new Error('nested too deeply');
+    } else if (byte === BRACKET_END || byte === BRACE_END) depth -= 1;
+  }
+}
+const [QUOTE, BACKSLASH, BRACKET, BRACKET_END, BRACE, BRACE_END] = Buffer.from('"\\[]{}');
+
 function bodyError(error: unknown, limit: number): unknown {
   const { type, status } = error as { type?: unknown; status?: unknown };
+  if (type === 'entity.verify.failed') return new DomainError('malformed-request', 'The body is nested too deeply.');
   if (type === 'entity.parse.failed') return new DomainError('malformed-request', 'The body is not valid JSON.');
   if (type === 'entity.too.large') {
     return new DomainError('too-large', `The body is larger than the ${limit / MEGABYTE} MB that are accepted here.`);
@@ -108,8 +129,7 @@ export function methodCheck(app: NestExpressApplication): RequestHandler {
     routes ??= listRoutes(app).map((route) => ({ method: route.method, matches: pathMatcher(route.path) }));
     const methods = new Set(routes.filter((route) => route.matches(request.path)).map((route) => route.method));
     if (methods.has('GET')) methods.add('HEAD');
-    if (methods.size === 0 || methods.has('ALL') || methods.has(request.method) || request.method === 'OPTIONS')
-      return next();
+    if (methods.size === 0 || methods.has('ALL') || methods.has(request.method)) return next();
     next(
       new DomainError('method-not-allowed', `${request.method} is not possible here.`, {
         allowedMethods: [...methods].sort(),

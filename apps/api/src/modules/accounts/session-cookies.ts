@@ -40,6 +40,8 @@ export function clearSessionCookies(response: Response, config: Config): void {
   }
 }
 
+/** A cookie of another form (the parser reads `j:{…}` as JSON) is no token of ours. */
 export function refreshTokenOf(request: Request): string | undefined {
-  return (request.cookies as Record<string, string | undefined>)[REFRESH_COOKIE];
+  const token = (request.cookies as Record<string, unknown>)[REFRESH_COOKIE];
+  return typeof token === 'string' ? token : undefined;
 }
