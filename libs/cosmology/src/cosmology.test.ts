@@ -437,6 +437,30 @@ describe('parameters', () => {
     );
   });
 
+  it('with next to nothing in them are as good as empty of it', () => {
+    const fading = { hubbleConstantKmSMpc: 70, w0: 0, wa: -20 };
+    for (const omegaMatter of [6.4e-323, 1e-315, 1.2e-283, 1e-31]) {
+      // Nothing would be left to expand: dark energy fades away, and no matter takes over.
+      expect(() => createCosmology({ ...fading, omegaMatter })).toThrow(NoBigBangError);
+      const milne = createCosmology({ ...base, omegaMatter, omegaDarkEnergy: 0 });
+      expect(milne.omegaMatter).toBe(0);
+      expect(relative(milne.ageGyr(0), milne.hubbleTimeGyr)).toBeLessThan(1e-14);
+    }
+    const least = createCosmology({ ...fading, omegaMatter: 1e-29 });
+    for (const value of [
+      least.comovingVolumeMpc3(MAX_REDSHIFT),
+      least.ageGyr(0),
+      least.lookbackTimeGyr(MAX_REDSHIFT),
+    ]) {
+      expect(value).toBeGreaterThan(0);
+      expect(value).toBeLessThan(Infinity);
+    }
+    expect(distanceRows(least, [0, 5, 50, MAX_REDSHIFT])).toHaveLength(4);
+    const cold = createCosmology({ ...base, omegaMatter: 0.3, cmbTemperatureK: 1e-80, effectiveNeutrinoCount: 3 });
+    expect(cold.omegaPhotons).toBe(0);
+    expect(cold.omegaNeutrinos).toBe(0);
+  });
+
   it('without anything to begin the expansion give an infinite age and a finite lookback time', () => {
     const deSitter = createCosmology({ ...base, omegaMatter: 0, omegaDarkEnergy: 1 });
     expect(deSitter.ageGyr(0)).toBe(Infinity);

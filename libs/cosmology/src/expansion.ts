@@ -14,6 +14,16 @@ import type { CompleteParameters } from './parameters.js';
 const KOMATSU_EXPONENT = 1.83;
 const KOMATSU_MASS_COEFFICIENT = 0.3173;
 
+/**
+ * A density today below this counts as none. It would decide nothing that could be measured, and products of still smaller
+ * numbers leave the range in which a floating-point number has all its digits.
+ */
+const LEAST_DENSITY = 1e-30;
+
+function presentOrNone(density: number): number {
+  return Math.abs(density) < LEAST_DENSITY ? 0 : density;
+}
+
 /** 3 H0²/(8πG) in g cm⁻³. */
 export function criticalDensityTodayGCm3(hubbleConstantKmSMpc: number): number {
   const perSecond = hubbleConstantKmSMpc / MEGAPARSEC.value;
@@ -89,22 +99,21 @@ export interface Expansion {
 }
 
 /**
- * E(z)² = Ωm s³ + Ωk s² + (Ωγ + Ων) s⁴ + Ω_DE f(s), s = 1 + z.
+ * E(z)² = Ωm s³ + Ωk s² + (Ωγ + Ων) s⁴ + Ω_DE f(s), s = 1 + z. Densities today below 1e-30 are taken for none.
  *
  * @throws {NoBigBangError} if E² is not positive at some s ≥ 1
  * @throws {InvalidCosmologyError} if E² comes so close to zero that rounding decides about distances
  * @see Hogg 1999, astro-ph/9905116, eq. 14 (without radiation); Komatsu et al. 2011, eq. 26 (neutrinos)
  */
 export function createExpansion(parameters: CompleteParameters): Expansion {
-  const { omegaMatter } = parameters;
-  const omegaPhotons = omegaPhotonsToday(
-    parameters.cmbTemperatureK,
-    criticalDensityTodayGCm3(parameters.hubbleConstantKmSMpc),
+  const omegaMatter = presentOrNone(parameters.omegaMatter);
+  const omegaPhotons = presentOrNone(
+    omegaPhotonsToday(parameters.cmbTemperatureK, criticalDensityTodayGCm3(parameters.hubbleConstantKmSMpc)),
   );
   const ratio = neutrinoToPhotonRatio(parameters);
   const omegaNeutrinos = omegaPhotons * ratio(1);
   const flat = parameters.omegaDarkEnergy === undefined;
-  const omegaDarkEnergy = parameters.omegaDarkEnergy ?? 1 - omegaMatter - omegaPhotons - omegaNeutrinos;
+  const omegaDarkEnergy = presentOrNone(parameters.omegaDarkEnergy ?? 1 - omegaMatter - omegaPhotons - omegaNeutrinos);
   const omegaCurvature = flat ? 0 : 1 - omegaMatter - omegaDarkEnergy - omegaPhotons - omegaNeutrinos;
   const growth = darkEnergyGrowth(parameters.w0, parameters.wa);
 
