@@ -2,7 +2,7 @@ import { NewProposal } from '@faintward/contracts/proposals';
 import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import { useQuery } from '@tanstack/react-query';
-import { useNavigate } from 'react-router-dom';
+import { Navigate } from 'react-router-dom';
 import { paths } from '../app/paths';
 import { useCreateProposal } from '../features/proposals/api/proposals';
 import { sessionQueries } from '../lib/queries/session';
@@ -45,21 +45,19 @@ export function Component() {
 }
 
 function NewProposalForm({ calls }: { calls: readonly { value: string; label: string }[] }) {
-  const navigate = useNavigate();
   const create = useCreateProposal();
   const form = useZodForm(NewProposal, { defaultValues: { semesterId: calls[0]?.value ?? '', title: '' } });
-  const submit = form.handleSubmit(async (input) => {
-    const proposal = await create
-      .mutateAsync(input)
-      .catch((error: unknown) => void showServerErrors(form, error, ['title', 'semesterId']));
-    if (proposal) {
-      form.reset(input);
-      await navigate(paths.proposalSection.to(proposal.proposalId, 'targets'));
-    }
-  });
+  const submit = form.handleSubmit((input) =>
+    create.mutateAsync(input).then(
+      () => undefined,
+      (error: unknown) => void showServerErrors(form, error, ['title', 'semesterId']),
+    ),
+  );
+  // Drawn instead of the form, so that its guard against leaving is gone before the page is left.
+  if (create.data) return <Navigate to={paths.proposalSection.to(create.data.proposalId, 'targets')} replace />;
   return (
     <form onSubmit={(event) => void submit(event)} noValidate>
-      <LeaveGuard when={form.formState.isDirty && !create.isSuccess} what="The title" />
+      <LeaveGuard when={form.formState.isDirty} what="The title" />
       <Stack component="fieldset" disabled={create.isPending} sx={{ border: 0, p: 0, m: 0, gap: 2.5 }}>
         <SelectField control={form.control} name="semesterId" label="Call" options={calls} fullWidth />
         <TextField
