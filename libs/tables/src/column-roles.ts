@@ -256,6 +256,11 @@ export function columnOfRole(mapping: ColumnRoleMapping, role: ColumnRole): numb
   return mapping.guesses.find((guess) => guess.role === role)?.columnIndex;
 }
 
+/** Unit that a header states in brackets or at its end, in lower case: "h" of "RA [h]", "deg" of "dec_deg"; undefined if it states none. */
+export function headerUnit(column: string): string | undefined {
+  return splitHeader(column).unit;
+}
+
 /** Whether a header text belongs to the vocabulary of some role. */
 export function isKnownHeader(column: string): boolean {
   const { word } = splitHeader(column);

@@ -17,6 +17,7 @@ export {
 export {
   columnOfRole,
   guessColumnRoles,
+  headerUnit,
   type ColumnGuess,
   type ColumnRole,
   type ColumnRoleMapping,

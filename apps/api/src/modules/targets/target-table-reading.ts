@@ -18,6 +18,8 @@ import {
 } from '@faintward/tables';
 import { lightFaults } from '../../engine/light.js';
 import { DomainError } from '../../platform/domain-error.js';
+import { mapInSlices } from '../../engine/slices.js';
+import { foreignUnitError, headerBrightness, withColumnUnit } from './column-units.js';
 import { readCells } from './target-cells.js';
 
 type TargetRole = Exclude<ImportRole, 'ignore'>;
@@ -54,25 +56,47 @@ const ROLE_NAMES: Readonly<Record<TargetRole, string>> = {
 
 const REQUIRED_ROLES: readonly TargetRole[] = ['rightAscension', 'declination', 'redshift'];
 
+/** How the cells of a table are to be read. */
+interface Reading {
+  columnOf: ReadonlyMap<TargetRole, number>;
+  headers: readonly string[];
+  brightness: BrightnessDefaults;
+  /** Said at each brightness when the header and the person differ. */
+  brightnessWarning: string | undefined;
+}
+
 /**
- * Reads a pasted or uploaded table as targets, cell by cell. Bounded in time for any text: the table reader refuses what is
- * not a table before it builds cells.
+ * Reads a pasted or uploaded table as targets, cell by cell, letting others have their turn meanwhile. Bounded in time for any
+ * text: the table reader refuses what is not a table before it builds cells. Units that a header states are kept to.
  *
  * @throws {DomainError} `unreadable-table` with what would be right
  */
-export function readTargetTable({ text, options }: ImportRequest): TargetTable {
+export async function readTargetTable({ text, options }: ImportRequest): Promise<TargetTable> {
   const table = readTable(text, options.hasHeader);
   const roles = rolesOf(table, options.roles);
-  const tableErrors = roleErrors(roles);
-  const brightness: BrightnessDefaults = {
-    present: null,
-    bandId: options.brightnessBandId,
-    system: options.brightnessSystem,
-  };
+  // Without a header line the columns are named by their numbers.
+  const headers = table.hasHeader ? table.columns : table.columns.map(() => '');
+  const tableErrors = [...roleErrors(roles), ...unitErrors(headers, roles)];
   const columnOf = new Map<TargetRole, number>();
   roles.forEach((role, column) => {
     if (role !== 'ignore' && !columnOf.has(role)) columnOf.set(role, column);
   });
+  const brightnessColumn = columnOf.get('brightness');
+  const said = brightnessColumn === undefined ? {} : headerBrightness(headers[brightnessColumn] ?? '');
+  const brightness: BrightnessDefaults = {
+    present: null,
+    bandId: said.bandId ?? options.brightnessBandId,
+    system: said.system ?? options.brightnessSystem,
+  };
+  const differs = brightness.bandId !== options.brightnessBandId || brightness.system !== options.brightnessSystem;
+  const reading: Reading = {
+    columnOf,
+    headers,
+    brightness,
+    brightnessWarning: differs
+      ? `Taken as ${brightness.bandId}, ${brightness.system}, as the header of the column says.`
+      : undefined,
+  };
   const cutRows = new Map(
     table.issues.filter(({ code }) => code === 'long-row').map(({ row, message }) => [row, message]),
   );
@@ -80,9 +104,9 @@ export function readTargetTable({ text, options }: ImportRequest): TargetTable {
     columns: table.columns.map((header, column) => ({ header, role: roles[column] ?? 'ignore' })),
     delimiter: table.delimiter,
     hasHeader: table.hasHeader,
-    rows: table.rows.map((cells, index) => {
+    rows: await mapInSlices(table.rows, (cells, index) => {
       const lineNumber = table.rowNumbers[index] ?? 0;
-      return readRow(cells, lineNumber, columnOf, brightness, cutRows.get(lineNumber));
+      return readRow(cells, lineNumber, reading, cutRows.get(lineNumber));
     }),
     tableErrors,
   };
@@ -142,18 +166,28 @@ function roleErrors(roles: readonly ImportRole[]): string[] {
   ];
 }
 
+function unitErrors(headers: readonly string[], roles: readonly ImportRole[]): string[] {
+  return headers.flatMap((header, column) => foreignUnitError(header, roles[column] ?? 'ignore') ?? []);
+}
+
 function readRow(
   texts: readonly string[],
   lineNumber: number,
-  columnOf: ReadonlyMap<TargetRole, number>,
-  brightness: BrightnessDefaults,
+  { columnOf, headers, brightness, brightnessWarning }: Reading,
   cutMessage: string | undefined,
 ): TableRow {
   const cells: PreviewRow['cells'] = texts.map((text) => ({ text: shortened(text) }));
   const rowErrors = cutMessage === undefined ? [] : [cutMessage];
   const given: TargetCells = {};
   for (const [role, column] of columnOf) given[role] = texts[column] ?? '';
+  const rightAscension = withColumnUnit(
+    given.rightAscension ?? '',
+    headers[columnOf.get('rightAscension') ?? -1] ?? '',
+  );
+  if (given.rightAscension !== undefined) given.rightAscension = rightAscension.text;
   const { values, errors, warnings } = readCells(given, brightness);
+  if (rightAscension.warning !== undefined) warnings.rightAscension ??= rightAscension.warning;
+  if (brightnessWarning !== undefined && isBareNumber(given.brightness)) warnings.brightness ??= brightnessWarning;
   for (const [role, message] of Object.entries(errors) as [TargetRole, string][]) mark(role, 'error', message);
   for (const [role, message] of Object.entries(warnings) as [TargetRole, string][]) mark(role, 'warning', message);
 
@@ -190,6 +224,11 @@ function readRow(
     if (cell === undefined) rowErrors.push(message);
     else cell[kind] = message;
   }
+}
+
+/** Only a bare number leaves its band and system to the column. */
+function isBareNumber(text: string | undefined): boolean {
+  return text !== undefined && /^\s*[+-]?[\d.]+\s*$/.test(text);
 }
 
 function shortened(text: string): string {
