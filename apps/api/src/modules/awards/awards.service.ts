@@ -11,7 +11,7 @@ import { PanelProposalsReadModel } from '../panels/panel-proposals.read-model.js
 import { PanelsReadModel } from '../panels/panels.read-model.js';
 import { ProposalOutcomesService } from '../proposals/proposal-outcomes.service.js';
 import { RankingService } from '../ranking/ranking.service.js';
-import { SemestersReadModel } from '../semesters/semesters.read-model.js';
+import { isPastDeadline, SemestersReadModel } from '../semesters/semesters.read-model.js';
 import { SemestersService } from '../semesters/semesters.service.js';
 import { AwardsQueries } from './awards.queries.js';
 
@@ -122,7 +122,7 @@ export class AwardsService {
       const now = new Date();
       await this.access.finalise(actor, panelId, now);
       const semester = await this.semesters.get(panel.semesterId);
-      if (now < semester.deadlineAt) {
+      if (!isPastDeadline(semester.deadlineAt, now)) {
         throw new DomainError(
           'wrong-state',
           `The deadline of ${semester.name} has not passed: proposals can still be submitted.`,

@@ -2,14 +2,14 @@ import type { ProposalState } from '@faintward/contracts/proposals';
 import type { HoursByMoonClass } from '@faintward/contracts/semesters';
 import type { SubmittedContent } from '@faintward/contracts/submissions';
 import { Injectable } from '@nestjs/common';
-import { and, asc, count, eq, inArray, isNull, sql, type SQL } from 'drizzle-orm';
+import { and, asc, count, eq, inArray, isNull, lt, sql, type SQL } from 'drizzle-orm';
 import { assignments } from '../../database/schema/assignments.js';
 import { panelMembers } from '../../database/schema/panels.js';
 import { proposals } from '../../database/schema/proposals.js';
 import { semesters } from '../../database/schema/semesters.js';
 import { submissions } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { proposalLabel } from '../semesters/semesters.read-model.js';
+import { DEADLINE_GRACE_SECONDS, proposalLabel } from '../semesters/semesters.read-model.js';
 import { isConflicted, isFreeOfConflict } from './conflict-conditions.read-model.js';
 
 /** A proposal as its panel knows it: what was submitted, never the working copy. */
@@ -28,7 +28,19 @@ export interface PanelProposalRow {
 const BEFORE_THE_PANEL: ProposalState[] = ['submitted', 'inReview', 'awarded', 'declined'];
 
 /**
- * What a committee sees of proposals. It reads the submissions itself, because a conflict has to be left out by the
+ * Condition on `proposals` and `semesters`: the proposal lies before its panel. Until the deadline it may still be changed and
+ * submitted again, so that nobody may begin to judge it; nor within the seconds in which late requests are still taken.
+ */
+function isBeforeThePanel(): SQL | undefined {
+  return and(
+    inArray(proposals.state, BEFORE_THE_PANEL),
+    isNull(proposals.deletedAt),
+    lt(semesters.deadlineAt, new Date(Date.now() - DEADLINE_GRACE_SECONDS * 1000)),
+  );
+}
+
+/**
+ * What a committee sees of proposals: from the deadline on, what was submitted last. It reads the submissions itself, because a conflict has to be left out by the
  * query that would otherwise have read its row.
  */
 @Injectable()
@@ -55,12 +67,12 @@ export class PanelProposalsReadModel {
       .select({ content: submissions.content })
       .from(submissions)
       .innerJoin(proposals, eq(proposals.id, submissions.proposalId))
+      .innerJoin(semesters, eq(semesters.id, proposals.semesterId))
       .where(
         and(
           eq(proposals.id, proposalId),
           eq(submissions.isCurrent, true),
-          inArray(proposals.state, BEFORE_THE_PANEL),
-          isNull(proposals.deletedAt),
+          isBeforeThePanel(),
           isOnPanelOf(viewerId),
           isFreeOfConflict(sql`${viewerId}::uuid`),
         ),
@@ -125,7 +137,7 @@ export class PanelProposalsReadModel {
       .from(proposals)
       .innerJoin(semesters, eq(semesters.id, proposals.semesterId))
       .innerJoin(submissions, and(eq(submissions.proposalId, proposals.id), eq(submissions.isCurrent, true)))
-      .where(and(condition, inArray(proposals.state, BEFORE_THE_PANEL), isNull(proposals.deletedAt)))
+      .where(and(condition, isBeforeThePanel()))
       .orderBy(asc(semesters.labelPrefix), asc(proposals.number));
     return rows.flatMap(({ labelPrefix, number, panelId, ...row }) =>
       panelId === null ? [] : [{ ...row, panelId, label: proposalLabel(labelPrefix, number) }],

@@ -12,6 +12,7 @@ export interface PanelRow {
   name: string;
   semesterId: string;
   semesterName: string;
+  deadlineAt: Date;
   finalisedAt: Date | null;
 }
 
@@ -35,6 +36,7 @@ export class PanelsQueries {
         name: panels.name,
         semesterId: panels.semesterId,
         semesterName: semesters.name,
+        deadlineAt: semesters.deadlineAt,
         finalisedAt: panels.finalisedAt,
         role: panelMembers.role,
       })

@@ -14,12 +14,13 @@ import { DomainError, invalidField, notFound } from '../../platform/domain-error
 import { HistoryService } from '../../platform/history.js';
 import { IdempotencyService } from '../../platform/idempotency.js';
 import { type PanelReview, ReviewsReadModel } from '../reviews/reviews.read-model.js';
+import { isPastDeadline } from '../semesters/semesters.read-model.js';
 import { ConflictsQueries } from './conflicts.queries.js';
 import { ConflictsService } from './conflicts.service.js';
 import { assignEvenly } from './even-assignment.js';
 import { PanelAccess } from './panel-access.service.js';
 import { PanelProposalsReadModel } from './panel-proposals.read-model.js';
-import { type AssignmentRow, PanelsQueries } from './panels.queries.js';
+import { type AssignmentRow, type PanelRow, PanelsQueries } from './panels.queries.js';
 
 type AssignmentResult = z.infer<typeof AutomaticAssignmentResult>;
 
@@ -97,7 +98,7 @@ export class PanelsService {
   }
 
   async assign(actor: Actor, panelId: string, key: string | undefined, input: Assignment): Promise<Panel> {
-    await this.access.getAsChair(actor, panelId);
+    requireDeadlinePassed(await this.access.getAsChair(actor, panelId));
     await this.conflicts.detectForPanel(panelId);
     const proposal = await this.getVisible(actor, panelId, input.proposalId);
     const route = `panels/${panelId}/assignments`;
@@ -168,7 +169,7 @@ export class PanelsService {
     key: string | undefined,
     input: AutomaticAssignment,
   ): Promise<AssignmentResult> {
-    await this.access.getAsChair(actor, panelId);
+    requireDeadlinePassed(await this.access.getAsChair(actor, panelId));
     const route = `panels/${panelId}/automatic-assignment`;
     const result = await this.idempotency.idempotent(
       { personId: actor.personId, key, route, body: input },
@@ -249,6 +250,15 @@ export class PanelsService {
       })),
     );
   }
+}
+
+/** @throws {DomainError} `wrong-state` while proposals can still be changed and submitted again */
+function requireDeadlinePassed({ semesterName, deadlineAt }: PanelRow): void {
+  if (isPastDeadline(deadlineAt, new Date())) return;
+  throw new DomainError(
+    'wrong-state',
+    `Until the deadline of ${semesterName}, ${deadlineAt.toISOString()}, its proposals can still change. They can be assigned and read after it.`,
+  );
 }
 
 function keyOf(pair: { proposalId: string; personId: string }): string {

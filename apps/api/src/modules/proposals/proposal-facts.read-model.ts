@@ -9,6 +9,8 @@ import { targets } from '../../database/schema/targets.js';
 import { DatabaseService } from '../../database/transaction.js';
 import { CASE_SECTIONS, countWords } from './case-sections.js';
 
+export { CASE_SECTIONS };
+
 /** Counts from which the state of a proposal's sections is told. */
 export interface ProposalFacts {
   targetCount: number;

@@ -1,12 +1,7 @@
 import type { ProposalAbilities, ProposalState } from '@faintward/contracts/proposals';
 import type { TeamAccess } from '@faintward/contracts/permissions';
 import { DomainError } from '../../platform/domain-error.js';
-
-/**
- * How long after the deadline a change is still taken, by the server's clock: a request that was sent in time may arrive
- * late.
- */
-export const DEADLINE_GRACE_SECONDS = 30;
+import { isPastDeadline } from '../semesters/semesters.read-model.js';
 
 export interface ProposalStanding {
   state: ProposalState;
@@ -21,10 +16,6 @@ export interface Membership {
 /** The state as people see it: a submitted proposal is in review from the deadline on, without anybody storing it. */
 export function shownState({ state, deadlineAt }: ProposalStanding, now: Date): ProposalState {
   return state === 'submitted' && now >= deadlineAt ? 'inReview' : state;
-}
-
-export function isPastDeadline(deadlineAt: Date, now: Date): boolean {
-  return now.getTime() > deadlineAt.getTime() + DEADLINE_GRACE_SECONDS * 1000;
 }
 
 /** @throws {DomainError} `wrong-state` or `deadline-passed` when nothing of the proposal can be changed any more */

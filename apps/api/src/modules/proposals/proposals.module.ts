@@ -1,4 +1,5 @@
 import { Module } from '@nestjs/common';
+import { ConflictsModule } from '../panels/conflicts.module.js';
 import { PanelsReadModule } from '../panels/panels-read.module.js';
 import { PeopleModule } from '../people/people.module.js';
 import { SemestersModule } from '../semesters/semesters.module.js';
@@ -12,7 +13,15 @@ import { ProposalsReadModule } from './proposals-read.module.js';
 import { ProposalsService } from './proposals.service.js';
 
 @Module({
-  imports: [PanelsReadModule, PeopleModule, ProposalsReadModule, SemestersModule, SubmissionsReadModule, TargetsModule],
+  imports: [
+    ConflictsModule,
+    PanelsReadModule,
+    PeopleModule,
+    ProposalsReadModule,
+    SemestersModule,
+    SubmissionsReadModule,
+    TargetsModule,
+  ],
   controllers: [ProposalsController],
   providers: [CaseService, ProposalsQueries, ProposalsReadModel, ProposalsService],
   exports: [CaseService, ProposalsReadModule, ProposalsService],

@@ -12,6 +12,17 @@ export function proposalLabel(semesterPrefix: string, number: number): string {
   return `${semesterPrefix}-${String(number).padStart(3, '0')}`;
 }
 
+/**
+ * How long after the deadline a change is still taken, by the server's clock: a request that was sent in time may arrive
+ * late.
+ */
+export const DEADLINE_GRACE_SECONDS = 30;
+
+/** Whether nothing can be changed or submitted any more. */
+export function isPastDeadline(deadlineAt: Date, now: Date): boolean {
+  return now.getTime() > deadlineAt.getTime() + DEADLINE_GRACE_SECONDS * 1000;
+}
+
 export interface SemesterDetails {
   semesterId: string;
   name: string;

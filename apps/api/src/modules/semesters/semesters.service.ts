@@ -12,7 +12,7 @@ import { ReviewsReadModel } from '../reviews/reviews.read-model.js';
 import { faultsOf, labelPrefixes } from './semester-rules.js';
 import { toSemester } from './semesters.mapper.js';
 import { SemestersQueries } from './semesters.queries.js';
-import { type SemesterDetails, SemestersReadModel } from './semesters.read-model.js';
+import { isPastDeadline, type SemesterDetails, SemestersReadModel } from './semesters.read-model.js';
 
 @Injectable()
 export class SemestersService {
@@ -130,6 +130,20 @@ export class SemestersService {
           { fieldErrors: [{ path: 'isAnonymised', message: 'Fixed by now.' }] },
         );
       }
+    }
+    // A review is of what was submitted last: moved, the deadline would let it become a review of something else.
+    if (
+      'deadlineAt' in changes &&
+      isPastDeadline(stored.deadlineAt, now) &&
+      (await this.reviews.haveBegunInSemester(stored.semesterId))
+    ) {
+      throw new DomainError(
+        'wrong-state',
+        'Reviews of this semester have begun: its deadline cannot be moved any more.',
+        {
+          fieldErrors: [{ path: 'deadlineAt', message: 'Fixed since reviews have begun.' }],
+        },
+      );
     }
     if (stored.decidedAt !== null && ('callOpensAt' in changes || 'deadlineAt' in changes)) {
       throw new DomainError('wrong-state', 'This semester is decided: its call cannot be opened or moved any more.');

@@ -1,6 +1,5 @@
 import type { CheckFinding } from '@faintward/contracts/submissions';
-import { CASE_SECTIONS } from '../proposals/case-sections.js';
-import type { ProposalFacts } from '../proposals/proposal-facts.read-model.js';
+import { CASE_SECTIONS, type ProposalFacts } from '../proposals/proposal-facts.read-model.js';
 
 /** What the rules look at. */
 export interface CheckedProposal {
