@@ -9,6 +9,9 @@ import { ProposalAccess } from './proposal-access.service.js';
 import { ProposalsQueries } from './proposals.queries.js';
 import { ProposalsReadModel } from './proposals.read-model.js';
 
+/** How long, from its first save on, one person's writing in one section is one change of the history. */
+const ONE_CHANGE_MINUTES = 10;
+
 /** The text of a proposal's case. Longer than the limit may be saved, so that nothing written is lost, but not submitted. */
 @Injectable()
 export class CaseService {
@@ -42,21 +45,40 @@ export class CaseService {
           ? await this.queries.insertSection(proposalId, sectionId, actor.personId, body, UNWRITTEN_VERSION + 1)
           : await this.queries.updateSection(proposalId, sectionId, actor.personId, body, version);
       if (!isStored) throw staleVersion(await this.getStored(proposalId, sectionId));
-      await this.history.record({
-        personId: actor.personId,
-        scope: 'proposal',
-        scopeId: proposalId,
-        subject: 'caseSection',
-        subjectId: sectionId,
-        subjectName: before.title,
-        action: 'changed',
-        details: {
-          body: { before: before.body, after: body },
-          wordCount: { before: before.wordCount, after: countWords(body) },
-        },
-      });
+      await this.record(actor, proposalId, before, body);
       await this.access.touch(proposalId);
       return this.getStored(proposalId, sectionId);
+    });
+  }
+
+  /**
+   * Drafts are saved every few seconds while somebody writes. What one person does to one section within some minutes is one
+   * change: its entry keeps the text that was there before the first of these saves.
+   */
+  private async record(actor: Actor, proposalId: string, before: CaseSection, body: string): Promise<void> {
+    const open = await this.queries.findOpenSectionChange(
+      proposalId,
+      before.sectionId,
+      actor.personId,
+      new Date(Date.now() - ONE_CHANGE_MINUTES * 60_000),
+    );
+    const detailsFrom = (text: string, wordCount: number) => ({
+      body: { before: text, after: body },
+      wordCount: { before: wordCount, after: countWords(body) },
+    });
+    if (open !== undefined) {
+      await this.queries.extendChange(open.changeId, detailsFrom(open.bodyBefore, countWords(open.bodyBefore)));
+      return;
+    }
+    await this.history.record({
+      personId: actor.personId,
+      scope: 'proposal',
+      scopeId: proposalId,
+      subject: 'caseSection',
+      subjectId: before.sectionId,
+      subjectName: before.title,
+      action: 'changed',
+      details: detailsFrom(before.body, before.wordCount),
     });
   }
 

@@ -1,7 +1,8 @@
 import type { CosmologyChoice } from '@faintward/contracts/cosmology';
 import type { CaseSectionId, ProposalState } from '@faintward/contracts/proposals';
 import { Injectable } from '@nestjs/common';
-import { and, eq, sql } from 'drizzle-orm';
+import { and, desc, eq, gte, or, sql } from 'drizzle-orm';
+import { changes } from '../../database/schema/history.js';
 import { caseSections, proposalMembers, proposals } from '../../database/schema/proposals.js';
 import { DatabaseService } from '../../database/transaction.js';
 
@@ -76,6 +77,47 @@ export class ProposalsQueries {
       .update(proposals)
       .set({ deletedAt: new Date(), version: sql`${proposals.version} + 1` })
       .where(eq(proposals.id, proposalId));
+  }
+
+  /**
+   * The newest change of a section, if it is this person's, not older than `since`, and nothing was submitted after it: what
+   * was submitted must stand between two entries.
+   */
+  async findOpenSectionChange(
+    proposalId: string,
+    sectionId: string,
+    personId: string,
+    since: Date,
+  ): Promise<{ changeId: string; bodyBefore: string } | undefined> {
+    const [newest] = await this.database
+      .current()
+      .select({
+        changeId: changes.id,
+        personId: changes.personId,
+        subject: changes.subject,
+        bodyBefore: sql<string | null>`${changes.details} -> 'body' ->> 'before'`,
+      })
+      .from(changes)
+      .where(
+        and(
+          eq(changes.scope, 'proposal'),
+          eq(changes.scopeId, proposalId),
+          gte(changes.at, since),
+          or(
+            and(eq(changes.subject, 'caseSection'), eq(changes.subjectId, sectionId)),
+            eq(changes.subject, 'submission'),
+          ),
+        ),
+      )
+      .orderBy(desc(changes.at))
+      .limit(1);
+    return newest?.subject === 'caseSection' && newest.personId === personId && newest.bodyBefore !== null
+      ? { changeId: newest.changeId, bodyBefore: newest.bodyBefore }
+      : undefined;
+  }
+
+  async extendChange(changeId: string, details: (typeof changes.$inferInsert)['details']): Promise<void> {
+    await this.database.current().update(changes).set({ details }).where(eq(changes.id, changeId));
   }
 
   /** @returns false when somebody else has begun the section meanwhile */
