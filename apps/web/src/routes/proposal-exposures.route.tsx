@@ -93,6 +93,7 @@ export function Component() {
                   telescopes={list.rows}
                   targets={settledSearch === '' ? targets.rows : (foundTargets.data?.rows ?? [])}
                   targetCount={targets.rowCount}
+                  like={page.data?.rows[0]}
                   onSearchTargets={setTargetSearch}
                   isSearching={foundTargets.isFetching || targetSearch !== settledSearch}
                   onApplied={() => setIsApplying(true)}

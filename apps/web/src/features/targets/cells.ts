@@ -70,7 +70,7 @@ export function describeExtent(extent: Extent): string {
 
 /** Notices in two words, for the grid; the whole sentence is in the tooltip and on the sheet. */
 const shortNotices: Record<string, string> = {
-  noBrightness: 'no brightness',
+  noBrightness: 'no light',
   lightUnusable: 'light unusable',
   beyondLymanBreak: 'no flux in band',
   neverUp: 'never up',

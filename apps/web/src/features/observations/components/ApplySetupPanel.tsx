@@ -1,7 +1,7 @@
 import type { CosmologyChoice } from '@faintward/contracts/cosmology';
 import type { EstimateRequest } from '@faintward/contracts/estimates';
 import type { Telescope } from '@faintward/contracts/facilities';
-import type { ApplySetupResult } from '@faintward/contracts/observations';
+import type { ApplySetupResult, Observation } from '@faintward/contracts/observations';
 import type { Target } from '@faintward/contracts/targets';
 import Autocomplete from '@mui/material/Autocomplete';
 import Box from '@mui/material/Box';
@@ -21,7 +21,15 @@ import { Note } from '../../../ui/Note';
 import { Panel } from '../../../ui/Panel';
 import { ProblemDisplay } from '../../../ui/ProblemDisplay';
 import { observationQueries, useObservationMutations } from '../api/observations';
-import { firstPlan, offeredModes, planFieldOf, readPlanDraft, type PlanDraft, type PlanErrors } from '../plan';
+import {
+  firstPlan,
+  offeredModes,
+  planFieldOf,
+  readPlanDraft,
+  toPlanDraft,
+  type PlanDraft,
+  type PlanErrors,
+} from '../plan';
 import { EstimateSummary } from './EstimateSummary';
 import { PlanForm } from './PlanForm';
 
@@ -35,6 +43,8 @@ export interface ApplySetupPanelProps {
   /** Those that match what is searched for; the first of them without a search. */
   targets: readonly TargetOption[];
   targetCount: number;
+  /** An observation of the proposal, to start from its plan; without one from the first mode that is offered. */
+  like: Observation | undefined;
   onSearchTargets: (search: string) => void;
   isSearching: boolean;
   onApplied: () => void;
@@ -47,13 +57,16 @@ export function ApplySetupPanel({
   telescopes,
   targets,
   targetCount,
+  like,
   onSearchTargets,
   isSearching,
   onApplied,
 }: ApplySetupPanelProps) {
   const { apply } = useObservationMutations(proposalId);
   const [draft, setDraft] = useState<PlanDraft>(() => {
-    const [first] = offeredModes(telescopes);
+    const modes = offeredModes(telescopes);
+    if (like && modes.some(({ mode }) => mode.modeId === like.modeId)) return toPlanDraft(like);
+    const [first] = modes;
     return first
       ? { ...firstPlan, mode: first.mode.modeId, seeing: String(first.telescope.site.zenithSeeingArcsec) }
       : firstPlan;
@@ -213,7 +226,7 @@ export function ApplySetupPanel({
             )}
           </Box>
         </Box>
-        <Box sx={{ minWidth: 0 }}>
+        <Box sx={{ minWidth: 0, position: { md: 'sticky' }, top: 16 }}>
           <Typography variant="h4" sx={{ mb: 1.25 }}>
             What it gives for one of them
           </Typography>

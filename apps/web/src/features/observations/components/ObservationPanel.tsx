@@ -55,7 +55,7 @@ export function ObservationPanel({ proposalId, observation, telescopes, canEdit,
               {observation.targetName}
             </Link>
           </Typography>
-          <Box sx={{ display: 'flex', gap: 2, flexWrap: 'wrap', alignItems: 'center', fontSize: '0.875rem' }}>
+          <Box sx={{ display: 'flex', columnGap: 2, flexWrap: 'wrap', alignItems: 'center', fontSize: '0.875rem' }}>
             <RedshiftValue redshift={observation.redshift} />
             <span>
               {observation.telescopeName} · {observation.instrumentName} · {observation.modeName}, configuration{' '}

@@ -184,6 +184,8 @@ function Field({
       slotProps={{
         htmlInput: { inputMode: 'decimal', style: { textAlign: 'right' } },
         input: unit ? { endAdornment: <InputAdornment position="end">{unit}</InputAdornment> } : {},
+        // A label inside the field would lie under the unit.
+        inputLabel: unit ? { shrink: true } : {},
       }}
     />
   );

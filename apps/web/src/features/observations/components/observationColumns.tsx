@@ -17,15 +17,14 @@ export const observationColumns: TableColumn<Observation>[] = [
   {
     field: 'redshift',
     headerName: 'Redshift',
-    width: 92,
+    width: 86,
     numeric: true,
     renderCell: ({ row }) => <RedshiftValue redshift={row.redshift} />,
   },
   {
     field: 'modeName',
     headerName: 'Setup',
-    minWidth: 150,
-    flex: 1,
+    width: 174,
     renderCell: ({ row }) => (
       <Clipped title={`${row.telescopeName}, ${row.instrumentName}, ${row.modeName}`}>
         {row.instrumentName} · {row.modeName}
@@ -36,7 +35,7 @@ export const observationColumns: TableColumn<Observation>[] = [
     field: 'totalSeconds',
     headerName: 'Time',
     unit: 'h',
-    width: 76,
+    width: 64,
     computed: true,
     numeric: true,
     renderCell: ({ row }) => (row.totalSeconds === null ? '—' : formatNumber(row.totalSeconds / 3600, { decimals: 2 })),
@@ -44,7 +43,7 @@ export const observationColumns: TableColumn<Observation>[] = [
   {
     field: 'exposures',
     headerName: 'Exposures',
-    width: 122,
+    width: 112,
     computed: true,
     numeric: true,
     sortable: false,
@@ -53,7 +52,7 @@ export const observationColumns: TableColumn<Observation>[] = [
   {
     field: 'signalToNoise',
     headerName: 'S/N',
-    width: 68,
+    width: 60,
     computed: true,
     numeric: true,
     sortable: false,
@@ -61,19 +60,30 @@ export const observationColumns: TableColumn<Observation>[] = [
       row.estimate?.outcome === 'feasible' ? formatNumber(row.estimate.signalToNoise, { significant: 3 }) : '—',
   },
   {
-    field: 'outcome',
+    field: 'limitedBy',
     headerName: 'Limited by',
-    width: 168,
+    width: 104,
     computed: true,
     sortable: false,
-    valueGetter: (_value, row) => outcomeOf(row).text,
+    valueGetter: (_value, row) => (row.estimate?.outcome === 'feasible' ? limitWords[row.estimate.limitedBy] : '—'),
+  },
+  {
+    field: 'notices',
+    headerName: 'Notices',
+    minWidth: 190,
+    flex: 1,
+    computed: true,
+    sortable: false,
+    valueGetter: (_value, row) => noticeOf(row)?.text ?? '',
     renderCell: ({ row }) => {
-      const { text, tone } = outcomeOf(row);
+      const notice = noticeOf(row);
       return (
-        <Clipped title={text} colour={tone}>
-          {tone !== undefined && <span aria-hidden="true">▲ </span>}
-          {text}
-        </Clipped>
+        notice && (
+          <Clipped title={notice.text} colour={notice.tone}>
+            <span aria-hidden="true">▲ </span>
+            {notice.text}
+          </Clipped>
+        )
       );
     },
   },
@@ -103,19 +113,15 @@ function exposuresOf({ estimate, repeatCount }: Observation): string {
   return repeatCount > 1 ? `${repeatCount} × (${once})` : once;
 }
 
-/** What holds an observation back, or why it gives no time, in words. */
-export function outcomeOf({ estimate, lacking }: Observation): {
-  text: string;
-  tone: 'error.main' | 'warning.main' | undefined;
-} {
+/** Why an observation gives no time, or what speaks against it, in words. */
+function noticeOf({ estimate, lacking }: Observation): { text: string; tone: string } | undefined {
   if (estimate === null) return { text: lacking ?? 'No estimate.', tone: 'warning.main' };
   if (estimate.outcome === 'infeasible')
     return { text: `Not feasible. ${estimate.reason.message}`, tone: 'error.main' };
-  const caution = estimate.notices.find((notice) => notice.severity !== 'note');
-  return {
-    text: caution ? `${limitWords[estimate.limitedBy]}. ${caution.message}` : limitWords[estimate.limitedBy],
-    tone: caution ? 'warning.main' : undefined,
-  };
+  const cautions = estimate.notices.filter((notice) => notice.severity !== 'note');
+  return cautions.length === 0
+    ? undefined
+    : { text: cautions.map((notice) => notice.message).join(' '), tone: 'warning.main' };
 }
 
 function Clipped({

@@ -18,6 +18,7 @@ import { LightFields } from './LightFields';
 
 const fields = ['name', 'rightAscension', 'declination', 'redshift', 'redshiftSigma', 'notes'] as const;
 type Field = (typeof fields)[number];
+const needed = ['name', 'rightAscension', 'declination', 'redshift'] as const satisfies readonly Field[];
 type Cells = Record<Field, string>;
 
 const emptyCells: Cells = { name: '', rightAscension: '', declination: '', redshift: '', redshiftSigma: '', notes: '' };
@@ -46,6 +47,8 @@ export function AddTargetDialog({
 
   const lightErrors: LightErrors = showErrors && !read.ok ? { ...read.errors } : {};
   const cellErrors: Partial<Record<string, string>> = {};
+  const lacking = needed.filter((name) => cells[name].trim() === '');
+  if (showErrors) for (const name of lacking) cellErrors[name] = 'Needed.';
   const error = create.error instanceof ApiError ? create.error : undefined;
   let allPlaced = error !== undefined && error.fieldErrors.length > 0;
   for (const { path, message } of error?.fieldErrors ?? []) {
@@ -58,9 +61,8 @@ export function AddTargetDialog({
 
   const submit = () => {
     setShowErrors(true);
-    if (!read.ok) return;
-    const { notes, ...typed } = cells;
-    const sent: TargetCells = { ...typed, notes };
+    if (!read.ok || lacking.length > 0) return;
+    const sent: TargetCells = cells;
     create.mutate(
       { cells: sent, light: read.light, extent: read.extent },
       {

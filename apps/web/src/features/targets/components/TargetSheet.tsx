@@ -80,7 +80,7 @@ function Head({ target }: { target: Target }) {
       <Typography variant="h2" sx={{ overflowWrap: 'anywhere' }}>
         {target.name}
       </Typography>
-      <Box sx={{ display: 'flex', gap: 2, flexWrap: 'wrap', alignItems: 'center', mt: 0.25 }}>
+      <Box sx={{ display: 'flex', columnGap: 2, flexWrap: 'wrap', alignItems: 'center', mt: 0.25 }}>
         <Typography variant="figure" component="span">
           {target.rightAscensionText} {target.declinationText}
         </Typography>
@@ -111,6 +111,10 @@ function Sheet({ proposalId, target, beside, canEdit, observations }: TargetShee
       <Block title="Light and size">
         <Values>
           <tbody>
+            <tr>
+              <th scope="row">As known</th>
+              <td>{target.brightnessText || 'not given'}</td>
+            </tr>
             {lightQuantities.map((quantity) => (
               <tr key={quantity.field}>
                 <th scope="row">

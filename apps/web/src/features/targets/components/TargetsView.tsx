@@ -42,6 +42,8 @@ export interface TargetsViewProps {
 }
 
 const hideable = [
+  ['rightAscensionDeg', 'Right ascension'],
+  ['declinationDeg', 'Declination'],
   ['redshiftSigma', 'σ of the redshift'],
   ['brightnessText', 'Brightness as known'],
   ['extent', 'Size'],
@@ -57,6 +59,8 @@ const hideable = [
   ['notes', 'Notes'],
 ] as const;
 const hiddenAtFirst = ['extent', 'distanceModulusMag', 'redshiftSigma'];
+/** On a phone the redshift should not hide behind coordinates. */
+const hiddenOnPhones = [...hiddenAtFirst, 'rightAscensionDeg', 'declinationDeg'];
 
 /** The targets of a proposal: along cosmic time, and as a table that is typed into. */
 export function TargetsView({
@@ -73,7 +77,10 @@ export function TargetsView({
   const edits = useCellEdits(proposalId);
   const remove = useRemoveTargets(proposalId);
   const announce = useNotices();
-  const [shownColumns, setShownColumns] = useShownColumns('faintward.targets.columns', hiddenAtFirst);
+  const [shownColumns, setShownColumns] = useShownColumns(
+    'faintward.targets.columns',
+    window.matchMedia('(max-width: 599.95px)').matches ? hiddenOnPhones : hiddenAtFirst,
+  );
   const [columnsAnchor, setColumnsAnchor] = useState<HTMLElement | null>(null);
   const [selected, setSelected] = useState<ReadonlySet<string>>(new Set());
   const [menu, setMenu] = useState<{ target: Target; anchor: HTMLElement }>();

@@ -48,7 +48,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
   const typed = (
     field: EditableField,
     column: Omit<TableColumn<TargetRow>, 'field' | 'renderCell'>,
-    draw: (row: TargetRow) => ReactNode = (row) => row[field],
+    draw: (row: TargetRow) => ReactNode = (row) => <Clipped text={row[field]} />,
   ): TableColumn<TargetRow> => ({
     field,
     editable: canEdit,
@@ -83,7 +83,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     renderCell: ({ row }) => formatNumber(read(row.target), format),
   });
   return [
-    typed('name', { headerName: 'Target', width: 156, sortable: true }, ({ name, target }) => (
+    typed('name', { headerName: 'Target', width: 184, sortable: true }, ({ name, target }) => (
       <Link
         component="button"
         tabIndex={-1}
@@ -94,11 +94,11 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
         {name}
       </Link>
     )),
-    typed('rightAscensionDeg', { headerName: 'Right ascension', unit: 'ICRS', width: 124, sortable: true }, coordinate),
-    typed('declinationDeg', { headerName: 'Declination', unit: 'ICRS', width: 124, sortable: true }, (row) =>
+    typed('rightAscensionDeg', { headerName: 'Right ascension', unit: 'ICRS', width: 114, sortable: true }, coordinate),
+    typed('declinationDeg', { headerName: 'Declination', unit: 'ICRS', width: 114, sortable: true }, (row) =>
       coordinate(row, 'declinationDeg'),
     ),
-    typed('redshift', { headerName: 'Redshift', width: 96, sortable: true, numeric: true }, ({ target }) => (
+    typed('redshift', { headerName: 'Redshift', width: 86, sortable: true, numeric: true }, ({ target }) => (
       <RedshiftValue redshift={target.redshift} decimals={redshiftDecimals(target.redshift)} />
     )),
     typed(
@@ -106,8 +106,8 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
       { headerName: 'σ_z', width: 72, numeric: true },
       ({ redshiftSigma }) => redshiftSigma || '—',
     ),
-    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 156 }, ({ brightnessText }) =>
-      brightnessText === '' ? <Quiet>not given</Quiet> : brightnessText,
+    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 126 }, ({ brightnessText }) =>
+      brightnessText === '' ? <Quiet>not given</Quiet> : <Clipped text={brightnessText} />,
     ),
     {
       field: 'extent',
@@ -121,17 +121,17 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
       'luminosityDistanceMpc',
       'D_L',
       'Mpc',
-      84,
+      72,
       (t) => t.computed.luminosityDistanceMpc,
       { significant: 5 },
       true,
     ),
-    computed('kpcPerArcsec', 'Scale', 'kpc/″', 74, (t) => t.computed.kpcPerArcsec, { decimals: 3 }),
-    computed('ageGyr', 'Age', 'Gyr', 72, (t) => t.computed.ageGyr, { decimals: 3 }, true),
+    computed('kpcPerArcsec', 'Scale', 'kpc/″', 64, (t) => t.computed.kpcPerArcsec, { decimals: 3 }),
+    computed('ageGyr', 'Age', 'Gyr', 60, (t) => t.computed.ageGyr, { decimals: 3 }, true),
     computed('distanceModulusMag', 'μ', 'mag', 72, (t) => t.computed.distanceModulusMag, { decimals: 2 }),
-    computed('dimming', 'Dimming', 'AB mag/″²', 84, (t) => t.computed.perFrequencyDimmingMag, { decimals: 2 }),
+    computed('dimming', 'Dimming', 'AB mag/″²', 80, (t) => t.computed.perFrequencyDimmingMag, { decimals: 2 }),
     {
-      ...computed('apparentMagnitudeAb', 'm', 'AB', 74, (t) => t.computed.apparentMagnitudeAb, { decimals: 2 }, true),
+      ...computed('apparentMagnitudeAb', 'm', 'AB', 60, (t) => t.computed.apparentMagnitudeAb, { decimals: 2 }, true),
       renderCell: ({ row: { target } }) => (
         <span title={target.computed.magnitudeLabel ?? undefined}>
           {formatNumber(target.computed.apparentMagnitudeAb, { decimals: 2 })}
@@ -142,7 +142,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
       'requestedSeconds',
       'Time',
       'h',
-      70,
+      58,
       (t) => (t.requestedSeconds === null ? null : t.requestedSeconds / 3600),
       { decimals: 2 },
       true,
@@ -150,7 +150,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     {
       field: 'upSummary',
       headerName: 'Up',
-      width: 96,
+      width: 92,
       sortable: false,
       computed: true,
       valueGetter: (_value, row) => row.target.computed.upSummary ?? '—',
@@ -158,7 +158,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     {
       field: 'notices',
       headerName: 'Notices',
-      width: 150,
+      width: 114,
       sortable: false,
       computed: true,
       valueGetter: (_value, row) => row.target.computed.notices.map((notice) => notice.message).join(' '),
@@ -190,6 +190,14 @@ function coordinate(row: TargetRow, field: 'rightAscensionDeg' | 'declinationDeg
   return (
     <Box component="span" sx={{ typography: 'figure', fontSize: '0.8125rem' }}>
       {row[field]}
+    </Box>
+  );
+}
+
+function Clipped({ text }: { text: string }) {
+  return (
+    <Box component="span" title={text} sx={{ overflow: 'hidden', textOverflow: 'ellipsis', whiteSpace: 'nowrap' }}>
+      {text}
     </Box>
   );
 }
