@@ -142,6 +142,8 @@ export const CosmicTime = z
     points: z.array(CosmicTimePoint),
     /** Ticks of the axis: redshift with the age it belongs to in this proposal's cosmology. */
     ticks: z.array(z.object({ redshift: z.number(), ageGyr: z.number() })),
+    /** Ticks at round ages of the universe, with the redshift each belongs to; the youngest first. */
+    ageTicks: z.array(z.object({ ageGyr: z.number(), redshift: z.number() })),
     ageTodayGyr: z.number(),
   })
   .meta({ id: 'CosmicTime' });

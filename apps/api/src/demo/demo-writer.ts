@@ -115,7 +115,7 @@ export class DemoWriter {
   }
 
   private async writeTargets(proposal: ProposalRow, sky: SkyOfSemester): Promise<void> {
-    const columns = computeTargetColumns(proposal.targets, chooseProposalCosmology(proposal.cosmology), sky);
+    const columns = await computeTargetColumns(proposal.targets, chooseProposalCosmology(proposal.cosmology), sky);
     await this.insert(
       targets,
       proposal.targets.flatMap(({ targetId, proposalKey: _key, groupIndex: _group, position, ...input }, index) => {

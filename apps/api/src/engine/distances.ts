@@ -1,3 +1,4 @@
+import { setImmediate as nextTurn } from 'node:timers/promises';
 import type { Notice } from '@faintward/contracts/common';
 import type { DistanceRow, DistancesRequest, DistancesResponse } from '@faintward/contracts/distances';
 import type { FieldError } from '@faintward/contracts/errors';
@@ -14,18 +15,25 @@ import { surfaceBrightnessDimmingMag } from '@faintward/photometry';
 import { validationFailed } from '../platform/validation.js';
 import { chooseCosmology } from './cosmologies.js';
 
+/** A few milliseconds of computing. */
+const BATCH_ROWS = 1000;
+
 /**
  * Distances, times, scale, volume and dimming of many redshifts, in their order.
  *
  * @throws {DomainError} `validation-failed`, naming each redshift and each parameter that cannot be used
  */
-export function computeDistances({ cosmology: choice, redshifts }: DistancesRequest): DistancesResponse {
+export async function computeDistances({ cosmology: choice, redshifts }: DistancesRequest): Promise<DistancesResponse> {
   const cosmology = chooseCosmology(choice);
   const faults = redshiftFaults(redshifts);
   if (faults.length > 0) throw validationFailed(faults);
-  let rows: EngineRow[];
+  const rows: DistanceRow[] = [];
   try {
-    rows = distanceRows(cosmology.model, redshifts);
+    for (let start = 0; start < redshifts.length; start += BATCH_ROWS) {
+      // A hundred thousand rows at once would keep every other request waiting.
+      if (start > 0) await nextTurn();
+      rows.push(...distanceRows(cosmology.model, redshifts.slice(start, start + BATCH_ROWS)).map(toDistanceRow));
+    }
   } catch (error) {
     if (error instanceof AntipodeError) throw beyondAntipode(redshifts, error.allowed.maximum);
     throw error;
@@ -34,7 +42,7 @@ export function computeDistances({ cosmology: choice, redshifts }: DistancesRequ
   // One for the largest redshift: a hundred thousand of the same would hide the others.
   const largest = redshifts.reduce((most, redshift) => Math.max(most, redshift), 0);
   notices.push(...redshiftWarnings(largest).map(toNotice));
-  if (rows.some((row) => row.ageGyr === undefined)) {
+  if (rows.some((row) => row.ageGyr === null)) {
     notices.push({
       code: 'no-beginning',
       message: 'This universe has no beginning: its age has no value.',
@@ -45,7 +53,7 @@ export function computeDistances({ cosmology: choice, redshifts }: DistancesRequ
     cosmology: { id: cosmology.id, title: cosmology.title, source: cosmology.source },
     engineVersion: ENGINE_VERSION,
     notices,
-    rows: rows.map(toDistanceRow),
+    rows,
   };
 }
 

@@ -17,6 +17,7 @@ import {
 import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
 import { apparentMagnitudeAbOf, lightFaults } from './light.js';
+import { mapInSlices } from './slices.js';
 
 /** The part of a target that its columns are computed from. */
 export interface TargetInputs {
@@ -35,12 +36,12 @@ export interface SkyOfSemester {
   zenithSeeingArcsec: number;
 }
 
-/** The computed columns of targets, same order. One at a time or thousands at once give the same numbers. */
-export function computeTargetColumns(
+/** The computed columns of targets, same order. One at a time or thousands at once give the same numbers; thousands give others a turn. */
+export async function computeTargetColumns(
   targets: readonly TargetInputs[],
   cosmology: ChosenCosmology,
   sky: SkyOfSemester,
-): TargetComputed[] {
+): Promise<TargetComputed[]> {
   const rows = distanceRows(
     cosmology.model,
     targets.map(({ redshift }) => redshift),
@@ -54,7 +55,7 @@ export function computeTargetColumns(
     usefulHours: sky.plan.usefulHours,
     zenithSeeingArcsec: sky.zenithSeeingArcsec,
   });
-  return targets.map((target, index) => {
+  return mapInSlices(targets, (target, index) => {
     const distances = rows[index];
     if (distances === undefined) throw new Error('A batch of distances is shorter than its targets.');
     return columnsOf(target, distances, cosmology, sky, sharedJson);

@@ -4,6 +4,7 @@ import type { Extent, Light } from '@faintward/contracts/light';
 import { Injectable } from '@nestjs/common';
 import { canonicalJson } from '../../engine/canonical-json.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
+import { inBatches, mapInSlices } from '../../engine/slices.js';
 import { estimator, type EstimateOutcome, type EstimateTarget } from '../../engine/estimates.js';
 import { FacilitiesReadModel, type ModeSetup } from '../facilities/facilities.read-model.js';
 import { TargetsReadModel } from '../targets/targets.read-model.js';
@@ -30,8 +31,11 @@ export interface EstimateColumns {
   openShutterSeconds: number | null;
 }
 
-/** Rows in one statement: keeps a parameter within some megabytes. */
-const BATCH_SIZE = 500;
+/** Rows in one statement: keeps a parameter within a megabyte or two, and the embedded database from keeping others waiting. */
+const BATCH_SIZE = 150;
+
+/** Estimates that were worked out already, by what they depend on. */
+export type EstimateMemo = Map<string, EstimateColumns>;
 
 /** Estimates of stored observations. Whoever changes what they depend on calls it in the same transaction. */
 @Injectable()
@@ -63,15 +67,35 @@ export class ObservationEstimates {
   /**
    * Computes the observations of some targets again, or of all targets of a proposal, with the configurations in force.
    *
+   * @param memo what {@link prepare} worked out before the transaction
    * @returns the number of observations
    */
   async recompute(
     proposalId: string,
     cosmology: CosmologyChoice,
     targetIds: readonly string[] | 'all',
+    memo: EstimateMemo = new Map(),
   ): Promise<number> {
+    const changed = await this.compute(proposalId, cosmology, targetIds, memo);
+    await inBatches(changed, BATCH_SIZE, (batch) => this.queries.updateEstimates(batch));
+    return changed.length;
+  }
+
+  /** Works out what {@link recompute} will store, and stores nothing: for before the transaction. */
+  async prepare(proposalId: string, cosmology: CosmologyChoice): Promise<EstimateMemo> {
+    const memo: EstimateMemo = new Map();
+    await this.compute(proposalId, cosmology, 'all', memo);
+    return memo;
+  }
+
+  private async compute(
+    proposalId: string,
+    cosmology: CosmologyChoice,
+    targetIds: readonly string[] | 'all',
+    memo: EstimateMemo,
+  ): Promise<(EstimateColumns & { observationId: string })[]> {
     const rows = await this.queries.listPlans(proposalId, targetIds);
-    if (rows.length === 0) return 0;
+    if (rows.length === 0) return [];
     const modeIds = [...new Set(rows.map(({ modeId }) => modeId))];
     const modes = new Map(
       (await this.facilities.listModes(modeIds.map((modeId) => ({ modeId })))).map((mode) => [mode.modeId, mode]),
@@ -80,20 +104,22 @@ export class ObservationEstimates {
       (await this.targets.listInputs(proposalId, targetIds)).map((target) => [target.targetId, target]),
     );
     const byPlan = new Map<string, (target: LitTarget) => EstimateColumns>();
-    const changed = rows.map((row) => {
+    return mapInSlices(rows, (row) => {
       const mode = modes.get(row.modeId);
       const target = lit.get(row.targetId);
       if (mode === undefined || target === undefined)
         throw new Error(`Observation ${row.observationId} has lost its mode or target.`);
-      const key = canonicalJson([row.modeId, row.goal, row.conditions, row.repeatCount]);
-      const columnsOf = byPlan.get(key) ?? this.columnsFor(mode, cosmology, row);
-      byPlan.set(key, columnsOf);
-      return { observationId: row.observationId, ...columnsOf(target) };
+      // Versions grow with every change, so that what was worked out for these holds as long as they are the same.
+      const memoKey = [row.observationId, row.version, target.version, mode.configurationVersion].join(' ');
+      const known = memo.get(memoKey);
+      if (known !== undefined) return { observationId: row.observationId, ...known };
+      const planKey = canonicalJson([row.modeId, row.goal, row.conditions, row.repeatCount]);
+      const columnsOf = byPlan.get(planKey) ?? this.columnsFor(mode, cosmology, row);
+      byPlan.set(planKey, columnsOf);
+      const columns = columnsOf(target);
+      memo.set(memoKey, columns);
+      return { observationId: row.observationId, ...columns };
     });
-    for (let start = 0; start < changed.length; start += BATCH_SIZE) {
-      await this.queries.updateEstimates(changed.slice(start, start + BATCH_SIZE));
-    }
-    return changed.length;
   }
 }
 

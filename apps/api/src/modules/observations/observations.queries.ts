@@ -31,6 +31,7 @@ export class ObservationsQueries {
         goal: observations.goal,
         conditions: observations.conditions,
         repeatCount: observations.repeatCount,
+        version: observations.version,
       })
       .from(observations)
       .where(and(eq(observations.proposalId, proposalId), ofTargets(targetIds)));

@@ -1,12 +1,16 @@
 import type { Observation, ObservationListQuery, TimeRequest } from '@faintward/contracts/observations';
 import type { MoonClass } from '@faintward/contracts/semesters';
 import { Injectable } from '@nestjs/common';
-import { and, asc, eq, ilike, or, type SQL, sql } from 'drizzle-orm';
+import { and, asc, eq, ilike, inArray, or, type SQL, sql } from 'drizzle-orm';
 import { instruments, modes, telescopes } from '../../database/schema/facilities.js';
 import { observations } from '../../database/schema/observations.js';
 import { targets } from '../../database/schema/targets.js';
 import { DatabaseService } from '../../database/transaction.js';
+import { inBatches } from '../../engine/slices.js';
 import { containing, orderOf, pageWindow } from '../../platform/pagination.js';
+
+/** Whole observations that are read at once: with the steps of its estimate each takes some kilobytes. */
+const READ_BATCH_SIZE = 200;
 
 /** Observations with what they are of, for screens, checks and submissions. */
 @Injectable()
@@ -58,13 +62,26 @@ export class ObservationsReadModel {
 
   /** All of a proposal, in the order of its targets. */
   async listAll(proposalId: string): Promise<Observation[]> {
-    const rows = await this.select(eq(observations.proposalId, proposalId)).orderBy(
-      asc(targets.position),
-      asc(telescopes.position),
-      asc(modes.name),
-      asc(observations.id),
-    );
-    return rows.map(toObservation);
+    const order = [asc(targets.position), asc(telescopes.position), asc(modes.name), asc(observations.id)];
+    const ids = await this.database
+      .current()
+      .select({ observationId: observations.id })
+      .from(observations)
+      .innerJoin(targets, eq(targets.id, observations.targetId))
+      .innerJoin(modes, eq(modes.id, observations.modeId))
+      .innerJoin(instruments, eq(instruments.id, modes.instrumentId))
+      .innerJoin(telescopes, eq(telescopes.id, instruments.telescopeId))
+      .where(eq(observations.proposalId, proposalId))
+      .orderBy(...order);
+    const all: Observation[] = [];
+    await inBatches(ids, READ_BATCH_SIZE, async (batch) => {
+      const wanted = batch.map(({ observationId }) => observationId);
+      const rows = await this.select(
+        and(eq(observations.proposalId, proposalId), inArray(observations.id, wanted)),
+      ).orderBy(...order);
+      all.push(...rows.map(toObservation));
+    });
+    return all;
   }
 
   /** Observations that give no time, with the reason, for the checks; at most `limit` of each kind. */

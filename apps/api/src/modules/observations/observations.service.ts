@@ -8,7 +8,9 @@ import type {
 } from '@faintward/contracts/observations';
 import type { Goal } from '@faintward/contracts/estimates';
 import { Injectable } from '@nestjs/common';
+import { canonicalJson } from '../../engine/canonical-json.js';
 import { goalFaults } from '../../engine/estimates.js';
+import { inBatches, mapInSlices } from '../../engine/slices.js';
 import { DatabaseService } from '../../database/transaction.js';
 import type { Actor } from '../../platform/actor.js';
 import { DomainError, invalidField, notFound, staleVersion } from '../../platform/domain-error.js';
@@ -16,14 +18,14 @@ import { differences, HistoryService } from '../../platform/history.js';
 import { toPage } from '../../platform/pagination.js';
 import { validationFailed } from '../../platform/validation.js';
 import { FacilitiesReadModel, type ModeSetup } from '../facilities/facilities.read-model.js';
-import { ProposalAccess } from '../proposals/proposal-access.service.js';
-import { TargetsReadModel } from '../targets/targets.read-model.js';
-import { ObservationEstimates } from './observation-estimates.service.js';
-import { ObservationsQueries } from './observations.queries.js';
+import { ProposalAccess, type ProposalForMember } from '../proposals/proposal-access.service.js';
+import { type StoredTargetInputs, TargetsReadModel } from '../targets/targets.read-model.js';
+import { type EstimateMemo, ObservationEstimates, type ObservationPlan } from './observation-estimates.service.js';
+import { type NewObservationRow, ObservationsQueries } from './observations.queries.js';
 import { ObservationsReadModel } from './observations.read-model.js';
 
-/** Rows in one statement: keeps its one JSON parameter within some megabytes. */
-const BATCH_SIZE = 500;
+/** Rows in one statement: keeps its one JSON parameter small, and the embedded database from keeping others waiting. */
+const BATCH_SIZE = 150;
 
 @Injectable()
 export class ObservationsService {
@@ -51,18 +53,26 @@ export class ObservationsService {
 
   /** The same plan for many targets, estimated at once. */
   async apply(actor: Actor, proposalId: string, input: ApplySetup): Promise<ApplySetupResult> {
+    const wanted = input.targetIds === 'all' ? 'all' : [...new Set(input.targetIds)];
+    const memo: EstimateMemo = new Map();
+    // Estimated before the transaction begins, in which only what somebody changes meanwhile is estimated again.
+    await this.estimateAll(
+      await this.access.requireTargets(actor, proposalId),
+      await this.getMode(input.modeId, input.goal),
+      input,
+      await this.targets.listInputs(proposalId, wanted),
+      memo,
+    );
     return this.database.transaction(async () => {
       const proposal = await this.access.requireTargetsForChange(actor, proposalId);
       const mode = await this.getMode(input.modeId, input.goal);
-      const wanted = input.targetIds === 'all' ? 'all' : [...new Set(input.targetIds)];
       const targets = await this.targets.listInputs(proposalId, wanted);
       if (wanted === 'all' && targets.length === 0) {
         throw new DomainError('wrong-state', 'This proposal has no targets yet: add targets first.');
       }
       if (input.targetIds !== 'all') requireAll(input.targetIds, new Set(targets.map(({ targetId }) => targetId)));
       const { goal, conditions, repeatCount, modeId } = input;
-      const columnsOf = this.estimates.columnsFor(mode, proposal.cosmology, { goal, conditions, repeatCount });
-      const rows = targets.map((target) => ({ targetId: target.targetId, ...columnsOf(target) }));
+      const rows = await this.estimateAll(proposal, mode, input, targets, memo);
       const replacedCount = input.replaceSameMode
         ? await this.queries.deleteOfTargets(
             proposalId,
@@ -70,13 +80,9 @@ export class ObservationsService {
             targets.map(({ targetId }) => targetId),
           )
         : 0;
-      for (let start = 0; start < rows.length; start += BATCH_SIZE) {
-        await this.queries.insertMany(
-          proposalId,
-          { modeId, goal, conditions, repeatCount },
-          rows.slice(start, start + BATCH_SIZE),
-        );
-      }
+      await inBatches(rows, BATCH_SIZE, (batch) =>
+        this.queries.insertMany(proposalId, { modeId, goal, conditions, repeatCount }, batch),
+      );
       const [only] = targets;
       await this.history.record({
         personId: actor.personId,
@@ -168,6 +174,24 @@ export class ObservationsService {
         await this.access.touch(proposalId);
       }
       return { removedCount: targetIds.length };
+    });
+  }
+
+  /** Versions grow with every change: what stands in the memo under all of them is still right. */
+  private async estimateAll(
+    { cosmology }: ProposalForMember,
+    mode: ModeSetup,
+    plan: ObservationPlan,
+    targets: readonly StoredTargetInputs[],
+    memo: EstimateMemo,
+  ): Promise<NewObservationRow[]> {
+    const context = `${mode.configurationVersion} ${canonicalJson(cosmology)}`;
+    const columnsOf = this.estimates.columnsFor(mode, cosmology, plan);
+    return mapInSlices(targets, (target) => {
+      const key = `${target.targetId} ${target.version} ${context}`;
+      const columns = memo.get(key) ?? columnsOf(target);
+      memo.set(key, columns);
+      return { targetId: target.targetId, ...columns };
     });
   }
 

@@ -1,3 +1,4 @@
+import type { CosmologyChoice } from '@faintward/contracts/cosmology';
 import type { ListQuery } from '@faintward/contracts/common';
 import type {
   NewProposal,
@@ -10,18 +11,20 @@ import type {
 } from '@faintward/contracts/proposals';
 import { Injectable } from '@nestjs/common';
 import { DatabaseService } from '../../database/transaction.js';
+import { canonicalJson } from '../../engine/canonical-json.js';
 import { chooseProposalCosmology } from '../../engine/cosmologies.js';
 import type { Actor } from '../../platform/actor.js';
 import { DomainError, invalidField, staleVersion } from '../../platform/domain-error.js';
 import { differences, HistoryService } from '../../platform/history.js';
 import { toPage } from '../../platform/pagination.js';
+import { ConflictsService } from '../panels/conflicts.service.js';
 import { PanelsReadModel } from '../panels/panels.read-model.js';
-import { SemestersReadModel } from '../semesters/semesters.read-model.js';
+import { isPastDeadline, SemestersReadModel } from '../semesters/semesters.read-model.js';
 import { SubmissionsReadModel } from '../submissions/submissions.read-model.js';
 import { TargetRecomputation } from '../targets/target-recomputation.service.js';
 import { ProposalAccess } from './proposal-access.service.js';
 import { ProposalFactsReadModel } from './proposal-facts.read-model.js';
-import { abilitiesOf, isPastDeadline, shownState } from './proposal-rules.js';
+import { abilitiesOf, canEditEverything, requireChangeable, shownState } from './proposal-rules.js';
 import { ProposalsQueries } from './proposals.queries.js';
 import { ProposalsReadModel } from './proposals.read-model.js';
 import { lackingTexts, sectionStatuses } from './section-status.js';
@@ -37,6 +40,7 @@ export class ProposalsService {
     private readonly submissions: SubmissionsReadModel,
     private readonly semesters: SemestersReadModel,
     private readonly panels: PanelsReadModel,
+    private readonly conflicts: ConflictsService,
     private readonly recomputation: TargetRecomputation,
     private readonly history: HistoryService,
   ) {}
@@ -141,10 +145,12 @@ export class ProposalsService {
     };
   }
 
-  /** A change of the cosmology computes everything of the proposal again, in the same transaction. */
+  /**
+   * A change of the cosmology computes everything of the proposal again: before the transaction, which takes up what others
+   * changed meanwhile and stores all of it.
+   */
   async update(actor: Actor, proposalId: string, version: number, patch: ProposalPatch): Promise<Proposal> {
-    // Making a model of own parameters takes a while: before the transaction.
-    if (patch.cosmology !== undefined) chooseProposalCosmology(patch.cosmology);
+    const prepared = await this.prepareCosmology(actor, proposalId, patch.cosmology);
     return this.database.transaction(async () => {
       const proposal = await this.access.requireEverythingForChange(actor, proposalId);
       if (proposal.version !== version) throw staleVersion(await this.get(actor, proposalId));
@@ -155,7 +161,11 @@ export class ProposalsService {
       if (Object.keys(details).length === 0) return this.get(actor, proposalId);
       await this.queries.update(proposalId, patch);
       if (details['cosmology'] !== undefined && patch.cosmology !== undefined) {
-        await this.recomputation.recomputeAll(proposalId, proposal.semesterId, patch.cosmology);
+        await this.recomputation.recomputeAll(proposalId, proposal.semesterId, patch.cosmology, prepared);
+      }
+      // Another panel will read what is submitted already: somebody of it may not.
+      if (details['panelId'] !== undefined && proposal.state === 'submitted') {
+        await this.conflicts.detectForProposal(proposalId);
       }
       await this.history.record({
         personId: actor.personId,
@@ -169,6 +179,17 @@ export class ProposalsService {
       });
       return this.get(actor, proposalId);
     });
+  }
+
+  /** Undefined when nothing has to be computed, or the person may not change it: that the transaction says. */
+  private async prepareCosmology(actor: Actor, proposalId: string, cosmology: CosmologyChoice | undefined) {
+    if (cosmology === undefined) return undefined;
+    chooseProposalCosmology(cosmology);
+    const proposal = await this.access.requireRead(actor, proposalId);
+    if (!canEditEverything(proposal) || canonicalJson(proposal.cosmology) === canonicalJson(cosmology))
+      return undefined;
+    requireChangeable(proposal, new Date());
+    return this.recomputation.prepareAll(proposalId, proposal.semesterId, cosmology);
   }
 
   /** Takes a draft away. It is kept for some days, so that a mistake can be undone by hand. */

@@ -9,7 +9,7 @@ import type {
 import { Injectable } from '@nestjs/common';
 import { Config } from '../../config/config.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { canonicalJson, sha256 } from '../../engine/canonical-json.js';
+import { fingerprintOf } from '../../engine/canonical-json.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
 import { ENGINE_VERSION } from '../../engine/estimates.js';
 import type { Actor } from '../../platform/actor.js';
@@ -108,7 +108,7 @@ export class SubmissionsService {
     if (blocking.length > 0) throw checksFailed(blocking);
 
     const content = await this.freeze(actor, proposal);
-    const fingerprint = sha256(canonicalJson(content));
+    const fingerprint = await fingerprintOf(content);
     const submittedAt = new Date();
     const targetCount = content.targets.length;
     const { submissionId, number } = await this.queries.insertCurrent({

@@ -1,15 +1,18 @@
-import type { ImportPreview, ImportRequest, ImportResult } from '@faintward/contracts/targets';
+import type { CosmologyChoice } from '@faintward/contracts/cosmology';
+import type { ImportPreview, ImportRequest, ImportResult, TargetComputed } from '@faintward/contracts/targets';
 import { Injectable } from '@nestjs/common';
 import { DatabaseService } from '../../database/transaction.js';
+import { canonicalJson } from '../../engine/canonical-json.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
 import { ProposalSkies } from '../../engine/proposal-sky.service.js';
+import { inBatches } from '../../engine/slices.js';
 import { computeTargetColumns } from '../../engine/target-columns.js';
 import type { Actor } from '../../platform/actor.js';
 import { HistoryService } from '../../platform/history.js';
 import { IdempotencyService } from '../../platform/idempotency.js';
 import { validationFailed } from '../../platform/validation.js';
 import { NamedPlaces } from './named-places.js';
-import { ProposalAccess } from '../proposals/proposal-access.service.js';
+import { ProposalAccess, type ProposalForMember } from '../proposals/proposal-access.service.js';
 import { BATCH_SIZE, TargetRecomputation } from './target-recomputation.service.js';
 import { readTargetTable, type TableRow, type TargetTable } from './target-table-reading.js';
 import { requireRoom } from './targets.service.js';
@@ -19,6 +22,12 @@ import { TargetsReadModel, type TargetPlace } from './targets.read-model.js';
 /** Rows that a preview shows: the first ones, and faulty ones up to the limit. */
 const FIRST_ROW_COUNT = 50;
 const PREVIEW_ROW_COUNT = 500;
+
+/** What the engine made of a table's ready rows, under a cosmology. */
+interface PreparedColumns {
+  cosmology: CosmologyChoice;
+  byRow: ReadonlyMap<TableRow, TargetComputed>;
+}
 
 /** Tables of targets, pasted or uploaded. Ready rows are imported; faulty ones are told, row by row, and left out. */
 @Injectable()
@@ -36,7 +45,7 @@ export class TargetImportsService {
 
   async preview(actor: Actor, proposalId: string, request: ImportRequest): Promise<ImportPreview> {
     await this.access.requireTargets(actor, proposalId);
-    const table = readTargetTable(request);
+    const table = await readTargetTable(request);
     const duplicates = duplicatesOf(table, await this.readModel.listPlaces(proposalId));
     const isReady = (row: TableRow) => table.tableErrors.length === 0 && row.target !== undefined;
     const readyCount = table.rows.filter(isReady).length;
@@ -65,12 +74,13 @@ export class TargetImportsService {
     key: string | undefined,
     request: ImportRequest,
   ): Promise<ImportResult> {
-    await this.access.requireRead(actor, proposalId);
-    // Read before the transaction begins: a large table takes longer than others should wait.
-    const table = readTargetTable(request);
+    const proposal = await this.access.requireRead(actor, proposalId);
+    // Read and computed before the transaction begins: a large table takes longer than others should wait.
+    const table = await readTargetTable(request);
+    const columns = await this.columnsOf(table, proposal);
     return this.idempotency.idempotent(
       { personId: actor.personId, key, route: `proposals/${proposalId}/targets/import`, body: request },
-      () => this.store(actor, proposalId, request, table),
+      () => this.store(actor, proposalId, request, table, columns),
     );
   }
 
@@ -79,6 +89,7 @@ export class TargetImportsService {
     proposalId: string,
     request: ImportRequest,
     table: TargetTable,
+    prepared: PreparedColumns,
   ): Promise<ImportResult> {
     const proposal = await this.access.requireTargetsForChange(actor, proposalId);
     if (table.tableErrors.length > 0) {
@@ -86,7 +97,10 @@ export class TargetImportsService {
     }
     const places = await this.readModel.listPlaces(proposalId);
     const skipped = request.options.skipDuplicates ? duplicatesOf(table, places) : new Set<TableRow>();
-    const targets = table.rows.flatMap((row) => (row.target === undefined || skipped.has(row) ? [] : [row.target]));
+    const kept = table.rows.flatMap((row) =>
+      row.target === undefined || skipped.has(row) ? [] : [{ row, target: row.target }],
+    );
+    const targets = kept.map(({ target }) => target);
     requireRoom(places.length + targets.length);
     const result: ImportResult = {
       importedCount: targets.length,
@@ -95,19 +109,16 @@ export class TargetImportsService {
       targetCount: places.length + targets.length,
     };
     if (targets.length === 0) return result;
-    const computed = computeTargetColumns(
-      targets,
-      chooseCosmology(proposal.cosmology),
-      await this.skies.ofSemester(proposal.semesterId),
-    );
+    // Somebody may have changed the cosmology in between.
+    const isPrepared = canonicalJson(prepared.cosmology) === canonicalJson(proposal.cosmology);
+    const { byRow } = isPrepared ? prepared : await this.columnsOf(table, proposal);
     const lastPosition = await this.queries.lastPosition(proposalId);
-    const rows = targets.flatMap((target, index) => {
-      const columns = computed[index];
-      return columns === undefined ? [] : [{ ...target, position: lastPosition + 1 + index, computed: columns }];
+    const rows = kept.map(({ row, target }, index) => {
+      const computed = byRow.get(row);
+      if (computed === undefined) throw new Error('A ready row of a table got no columns.');
+      return { ...target, position: lastPosition + 1 + index, computed };
     });
-    for (let start = 0; start < rows.length; start += BATCH_SIZE) {
-      await this.queries.insertMany(proposalId, rows.slice(start, start + BATCH_SIZE));
-    }
+    await inBatches(rows, BATCH_SIZE, (batch) => this.queries.insertMany(proposalId, batch));
     await this.recomputation.refreshDuplicates(proposalId);
     await this.history.record({
       personId: actor.personId,
@@ -125,6 +136,24 @@ export class TargetImportsService {
     });
     await this.access.touch(proposalId);
     return result;
+  }
+
+  private async columnsOf(
+    table: TargetTable,
+    { cosmology, semesterId }: Pick<ProposalForMember, 'cosmology' | 'semesterId'>,
+  ): Promise<PreparedColumns> {
+    const ready = table.rows.flatMap((row) => (row.target === undefined ? [] : [{ row, target: row.target }]));
+    const computed = await computeTargetColumns(
+      ready.map(({ target }) => target),
+      chooseCosmology(cosmology),
+      await this.skies.ofSemester(semesterId),
+    );
+    return {
+      cosmology,
+      byRow: new Map(
+        ready.flatMap(({ row }, index) => (computed[index] === undefined ? [] : [[row, computed[index]]])),
+      ),
+    };
   }
 }
 

@@ -5,6 +5,7 @@ import { and, asc, eq, ilike, inArray, or, type SQL, sql } from 'drizzle-orm';
 import { observations } from '../../database/schema/observations.js';
 import { targets } from '../../database/schema/targets.js';
 import { DatabaseService } from '../../database/transaction.js';
+import { inBatches } from '../../engine/slices.js';
 import { containing, orderOf, pageWindow } from '../../platform/pagination.js';
 import { toTarget } from './targets.mapper.js';
 
@@ -17,7 +18,11 @@ export interface StoredTargetInputs {
   redshift: number;
   light: Light | null;
   extent: Extent;
+  version: number;
 }
+
+/** Whole targets that are read at once: together with what is computed of them some kilobytes each. */
+const READ_BATCH_SIZE = 250;
 
 export interface TargetPlace {
   targetId: string;
@@ -80,11 +85,22 @@ export class TargetsReadModel {
   }
 
   async listAll(proposalId: string): Promise<Target[]> {
-    const rows = await this.select(proposalId, eq(targets.proposalId, proposalId)).orderBy(
-      asc(targets.position),
-      asc(targets.id),
-    );
-    return rows.map(toTarget);
+    const ids = await this.database
+      .current()
+      .select({ targetId: targets.id })
+      .from(targets)
+      .where(eq(targets.proposalId, proposalId))
+      .orderBy(asc(targets.position), asc(targets.id));
+    const all: Target[] = [];
+    await inBatches(ids, READ_BATCH_SIZE, async (batch) => {
+      const wanted = batch.map(({ targetId }) => targetId);
+      const rows = await this.select(proposalId, and(eq(targets.proposalId, proposalId), isOneOf(wanted))).orderBy(
+        asc(targets.position),
+        asc(targets.id),
+      );
+      all.push(...rows.map(toTarget));
+    });
+    return all;
   }
 
   /** Inputs of some targets, or of all, in the order of the list; those that are not there are left out. */
@@ -99,6 +115,7 @@ export class TargetsReadModel {
         redshift: targets.redshift,
         light: targets.light,
         extent: targets.extent,
+        version: targets.version,
       })
       .from(targets)
       .where(and(eq(targets.proposalId, proposalId), targetIds === 'all' ? undefined : isOneOf(targetIds)))

@@ -32,6 +32,8 @@ import { TargetsReadModel } from './targets.read-model.js';
 
 /** Redshifts that the axis of cosmic time is marked with. */
 const TICK_REDSHIFTS = [0, 0.5, 1, 2, 3, 4, 5, 6, 8, 10, 15, 20, 30];
+/** Ages that it is marked with, as far as the universe is older. */
+const TICK_AGES_GYR = [0.3, 0.5, 1, 2, 4, 6, 8, 10];
 
 @Injectable()
 export class TargetsService {
@@ -63,10 +65,15 @@ export class TargetsService {
     const ticks = distanceRows(model, TICK_REDSHIFTS).flatMap(({ redshift, ageGyr }) =>
       ageGyr === undefined ? [] : [{ redshift, ageGyr }],
     );
+    const ageTodayGyr = ticks[0]?.ageGyr ?? model.ageGyr(0);
     return {
       points: await this.readModel.cosmicTimePoints(proposalId),
       ticks,
-      ageTodayGyr: ticks[0]?.ageGyr ?? model.ageGyr(0),
+      ageTicks: TICK_AGES_GYR.filter((ageGyr) => ageGyr < ageTodayGyr).map((ageGyr) => ({
+        ageGyr,
+        redshift: model.redshiftAtAgeGyr(ageGyr),
+      })),
+      ageTodayGyr,
     };
   }
 
@@ -170,7 +177,7 @@ export class TargetsService {
 
   private async compute(proposal: ProposalForMember, values: TargetInput) {
     const sky = await this.skies.ofSemester(proposal.semesterId);
-    const [computed] = computeTargetColumns([values], chooseCosmology(proposal.cosmology), sky);
+    const [computed] = await computeTargetColumns([values], chooseCosmology(proposal.cosmology), sky);
     if (computed === undefined) throw new Error('A target got no columns.');
     return computed;
   }
