@@ -517,6 +517,37 @@ describe('input that cannot be computed with is refused by the path of its field
         },
       },
     ],
+    // Distances of next to nothing make a source brighter, and larger, than can be computed with.
+    [
+      'target.redshift',
+      {
+        target: {
+          redshift: 1e-300,
+          light: { kind: 'absoluteMagnitude', absoluteMagnitudeAb: -20, restWavelengthNm: 150 },
+          extent: { kind: 'point' },
+        },
+      },
+    ],
+    [
+      'target.redshift',
+      {
+        target: {
+          ...anInput().target,
+          redshift: 9e-7,
+          extent: { kind: 'sersic', index: 1, halfLightRadiusKpc: 1e-4 },
+        },
+      },
+    ],
+    [
+      'target.extent.halfLightRadiusKpc',
+      {
+        target: {
+          ...anInput().target,
+          redshift: 1e-6,
+          extent: { kind: 'sersic', index: 1, halfLightRadiusKpc: 100 },
+        },
+      },
+    ],
     [
       'target.light.kind',
       {

@@ -32,7 +32,7 @@ import type {
   NoiseShares,
   SignalToNoisePer,
 } from './types.js';
-import { validateInput } from './validate.js';
+import { validateAngleOfKpc, validateInput } from './validate.js';
 
 /** A source below this part of the sky is at the mercy of how well the sky is known. */
 const FAR_BELOW_SKY = 1e-3;
@@ -169,9 +169,11 @@ function imageOf({ target }: EstimateInput, distanceOf: () => TargetDistance): I
     case 'uniform':
       return { kind: 'uniform', areaArcsec2: extent.areaArcsec2 ?? 1 };
     case 'sersic': {
+      const { halfLightRadiusArcsec, halfLightRadiusKpc = NaN } = extent;
       const radiusArcsec =
-        extent.halfLightRadiusArcsec ??
-        ((extent.halfLightRadiusKpc ?? NaN) / distanceOf().kpcPerArcsec) * Math.sqrt(target.magnification ?? 1);
+        halfLightRadiusArcsec ??
+        (halfLightRadiusKpc / distanceOf().kpcPerArcsec) * Math.sqrt(target.magnification ?? 1);
+      if (halfLightRadiusArcsec === undefined) validateAngleOfKpc(halfLightRadiusKpc, radiusArcsec);
       return {
         kind: 'sersic',
         index: extent.index,

@@ -181,7 +181,7 @@ export interface UniformExtent {
 export type Extent = PointExtent | SersicExtent | UniformExtent;
 
 export interface Target {
-  /** Cosmological redshift, ≥ 0; above 0 where a distance or a kpc size is needed. */
+  /** Cosmological redshift, ≥ 0; at least 1e-6 where a distance or a kpc size is needed. */
   redshift: number;
   light: TargetLight;
   extent: Extent;

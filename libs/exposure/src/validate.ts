@@ -26,6 +26,11 @@ function whole(field: string, value: number, lowest: number, highest: number): v
   inRange(field, value, lowest, highest);
 }
 
+/** Below this (a distance of some 4 kpc) a redshift says nothing about distance: any motion is larger. */
+const LOWEST_REDSHIFT_WITH_DISTANCE = 1e-6;
+/** Half-light radii beyond this are typing errors. */
+const LARGEST_HALF_LIGHT_RADIUS_ARCSEC = 3600;
+
 /** The faintest and brightest magnitudes that are taken seriously; keeps every later power of ten finite. */
 const MAGNITUDES = [-50, 60] as const;
 const SECONDS = [1e-6, 1e7] as const;
@@ -75,13 +80,24 @@ function validateTarget(target: Target): void {
     throw new OutOfDomainError('target.light.kind', light.kind, 'an observed surface brightness for a uniform extent');
   }
   const needsDistance = isIntrinsic || (extent.kind === 'sersic' && extent.halfLightRadiusKpc !== undefined);
-  if (needsDistance && target.redshift === 0) {
+  if (needsDistance && target.redshift < LOWEST_REDSHIFT_WITH_DISTANCE) {
     throw new OutOfDomainError(
       'target.redshift',
       target.redshift,
-      'above 0 where a luminosity or a size in kpc is given',
+      `at least ${LOWEST_REDSHIFT_WITH_DISTANCE} where a luminosity or a size in kpc is given`,
     );
   }
+}
+
+/**
+ * Refuses a size in kpc whose angle at the distance found is beyond what an angle may be.
+ *
+ * @throws {OutOfDomainError}
+ */
+export function validateAngleOfKpc(sizeKpc: number, angleArcsec: number): void {
+  if (angleArcsec <= LARGEST_HALF_LIGHT_RADIUS_ARCSEC) return;
+  const allowed = `small enough to span at most ${LARGEST_HALF_LIGHT_RADIUS_ARCSEC} arcsec at the distance of the target`;
+  throw new OutOfDomainError('target.extent.halfLightRadiusKpc', sizeKpc, allowed);
 }
 
 function validateLight(light: TargetLight): void {
@@ -131,7 +147,7 @@ function validateExtent(extent: Extent): void {
         );
       }
       if (halfLightRadiusArcsec !== undefined) {
-        inRange(`${at}.halfLightRadiusArcsec`, halfLightRadiusArcsec, 1e-5, 3600, 'arcsec');
+        inRange(`${at}.halfLightRadiusArcsec`, halfLightRadiusArcsec, 1e-5, LARGEST_HALF_LIGHT_RADIUS_ARCSEC, 'arcsec');
       }
       if (halfLightRadiusKpc !== undefined) inRange(`${at}.halfLightRadiusKpc`, halfLightRadiusKpc, 1e-4, 1e3, 'kpc');
       inRange(`${at}.index`, index, SERSIC_INDEX_RANGE.lowest, SERSIC_INDEX_RANGE.highest);
