@@ -136,6 +136,10 @@ describe('parsing a position', () => {
   it('divides unsigned coordinates in the middle', () => {
     expect(parsePosition('150.5 2.25')).toEqual({ ok: true, position: { raDeg: 150.5, decDeg: 2.25 } });
     expect(parsePosition('10 00 00 02 30 00')).toEqual({ ok: true, position: { raDeg: 150, decDeg: 2.5 } });
+    // The sign of an exponent is not that of the declination.
+    expect(parsePosition('5e-1 -2e-3')).toEqual({ ok: true, position: { raDeg: 0.5, decDeg: -0.002 } });
+    expect(parsePosition('5.e-1 +2')).toEqual({ ok: true, position: { raDeg: 0.5, decDeg: 2 } });
+    expect(codeOf(parsePosition('-5 +2'))).toBe('negative-right-ascension');
   });
 
   it('refuses what is not two coordinates and passes on the reason of a bad half', () => {

@@ -285,8 +285,9 @@ function divide(plain: string): [string, string] | undefined {
   const parts = plain.split(/\s*[,;]\s*/);
   if (parts.length === 2) return [parts[0] ?? '', parts[1] ?? ''];
   if (parts.length > 2) return undefined;
-  const sign = plain.slice(1).search(/(?<!\de)[+-]/);
-  if (sign !== -1) return [plain.slice(0, sign + 1).trim(), plain.slice(sign + 1).trim()];
+  // Neither the sign of the right ascension, which is refused later, nor that of an exponent.
+  const sign = plain.search(/(?<!^|[\d.]e)[+-]/);
+  if (sign !== -1) return [plain.slice(0, sign).trim(), plain.slice(sign).trim()];
   const words = plain.split(/\s+/);
   if (words.length % 2 !== 0 || words.length === 0) return undefined;
   const middle = words.length / 2;
