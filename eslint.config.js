@@ -44,6 +44,9 @@ export default tseslint.config(
       globals: {
         process: 'readonly',
         console: 'readonly',
+        crypto: 'readonly',
+        fetch: 'readonly',
+        performance: 'readonly',
         setTimeout: 'readonly',
         URL: 'readonly',
         Buffer: 'readonly',

@@ -43,6 +43,16 @@ if (unknown.length > 0) {
   process.exit(1);
 }
 
+// A server that is started here outlives an interrupted run unless it is told.
+let stopCluster = () => {};
+for (const signal of ['SIGINT', 'SIGTERM']) {
+  process.on(signal, () => {
+    stopCluster();
+    rmSync(countsFolder, { recursive: true, force: true });
+    process.exit(1);
+  });
+}
+
 const results = [];
 for (const gate of gates) {
   if (wanted.length > 0 && !wanted.includes(gate.name)) continue;
@@ -90,9 +100,11 @@ async function runOnServer(gate) {
       note: 'not run: PostgreSQL (initdb, pg_ctl, postgres) is not installed',
     };
   }
+  stopCluster = () => cluster.stop();
   try {
     return await run(gate, { FAINTWARD_TEST_DATABASE_URL: cluster.url });
   } finally {
+    stopCluster = () => {};
     cluster.stop();
   }
 }

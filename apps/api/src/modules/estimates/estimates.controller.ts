@@ -1,14 +1,18 @@
 import { CosmologyPresetList } from '@faintward/contracts/cosmology';
 import { DistancesRequest, DistancesResponse } from '@faintward/contracts/distances';
 import { Estimate, EstimateRequest } from '@faintward/contracts/estimates';
-import { Body, Controller, Get, HttpCode, Post } from '@nestjs/common';
+import { Body, Controller, Get, HttpCode, Post, type StreamableFile } from '@nestjs/common';
 import { ApiOkResponse, ApiTags } from '@nestjs/swagger';
 import type { z } from 'zod';
 import { Public } from '../../platform/access.js';
 import { Answers } from '../../platform/answers.js';
 import { BodyLimit } from '../../platform/http.js';
 import { RateLimit } from '../../platform/rate-limits.js';
+import { rowsInPieces } from '../../platform/rows-in-pieces.js';
 import { EstimatesService } from './estimates.service.js';
+
+/** Above this an answer is written in pieces. */
+const MANY_ROWS = 2000;
 
 @ApiTags('calculators')
 @Controller()
@@ -30,8 +34,11 @@ export class EstimatesController {
   @BodyLimit(4)
   @HttpCode(200)
   @ApiOkResponse({ standardSchema: DistancesResponse })
-  computeDistances(@Body({ schema: DistancesRequest }) request: DistancesRequest): DistancesResponse {
-    return this.estimates.computeDistances(request);
+  async computeDistances(
+    @Body({ schema: DistancesRequest }) request: DistancesRequest,
+  ): Promise<DistancesResponse | StreamableFile> {
+    const answer = await this.estimates.computeDistances(request);
+    return answer.rows.length > MANY_ROWS ? rowsInPieces(answer) : answer;
   }
 
   @Post('estimates')

@@ -18,7 +18,7 @@ export class EstimatesService {
     return { rows: listCosmologyPresets() };
   }
 
-  computeDistances(request: DistancesRequest): DistancesResponse {
+  computeDistances(request: DistancesRequest): Promise<DistancesResponse> {
     return computeDistances(request);
   }
 
