@@ -11,7 +11,7 @@ export const observationColumns: TableColumn<Observation>[] = [
   {
     field: 'targetName',
     headerName: 'Target',
-    width: 150,
+    width: 176,
     renderCell: ({ row }) => <Clipped strong>{row.targetName}</Clipped>,
   },
   {
@@ -70,7 +70,7 @@ export const observationColumns: TableColumn<Observation>[] = [
   {
     field: 'notices',
     headerName: 'Notices',
-    minWidth: 190,
+    minWidth: 168,
     flex: 1,
     computed: true,
     sortable: false,
