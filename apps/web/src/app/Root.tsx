@@ -83,9 +83,16 @@ export function sectionsOf(me: Me | null | undefined): ShellSection[] {
   return [
     { label: 'Proposals', to: paths.proposals.to() },
     ...(me.panels.length > 0 ? [{ label: 'Reviews', to: paths.reviews.to() }] : []),
-    ...chaired.slice(0, 1).map((panel) => ({ label: 'Ranking', to: paths.ranking.to(panel.panelId) })),
+    ...rankingSection(chaired),
     { label: 'Instruments', to: paths.instruments.to() },
     ...(me.isStaff ? [{ label: 'Semesters', to: paths.semesters.to() }] : []),
     ...(me.isAdministrator ? [{ label: 'Administration', to: paths.administration.to() }] : []),
   ];
+}
+
+/** One panel: straight to its ranking. Several: to the list that names them, by semester. */
+function rankingSection(chaired: Me['panels']): ShellSection[] {
+  const [first, second] = chaired;
+  if (!first) return [];
+  return [{ label: 'Ranking', to: second ? paths.panels.to() : paths.ranking.to(first.panelId) }];
 }

@@ -34,8 +34,18 @@ export const paths = {
   review: { pattern: '/reviews/:proposalId', to: (proposalId: string) => `/reviews/${proposalId}` },
   panel: { pattern: '/panels/:panelId', to: (panelId: string) => `/panels/${panelId}` },
   ranking: { pattern: '/panels/:panelId/ranking', to: (panelId: string) => `/panels/${panelId}/ranking` },
+  panels: fixed('/panels'),
   instruments: fixed('/instruments'),
+  newConfiguration: {
+    pattern: '/instruments/modes/:modeId/new-configuration',
+    to: (modeId: string) => `/instruments/modes/${modeId}/new-configuration`,
+  },
   semesters: fixed('/semesters'),
+  newSemester: fixed('/semesters/new'),
+  semesterEdit: {
+    pattern: '/semesters/:semesterId/edit',
+    to: (semesterId: string) => `/semesters/${semesterId}/edit`,
+  },
   semester: { pattern: '/semesters/:semesterId', to: (semesterId: string) => `/semesters/${semesterId}` },
   administration: fixed('/administration'),
   administrationPeople: fixed('/administration/people'),

@@ -52,6 +52,7 @@ export const routes: RouteObject[] = [
               // Committee.
               { path: paths.reviews.pattern, lazy: () => import('../routes/reviews.route') },
               { path: paths.review.pattern, lazy: () => import('../routes/review.route') },
+              { path: paths.panels.pattern, lazy: () => import('../routes/panels.route') },
               { path: paths.panel.pattern, lazy: () => import('../routes/panel.route') },
               { path: paths.ranking.pattern, lazy: () => import('../routes/ranking.route') },
             ],
@@ -60,6 +61,9 @@ export const routes: RouteObject[] = [
             element: <RequirePerson may={(me) => me.isStaff} />,
             children: [
               { path: paths.semesters.pattern, lazy: () => import('../routes/semesters.route') },
+              { path: paths.newSemester.pattern, lazy: () => import('../routes/new-semester.route') },
+              { path: paths.semesterEdit.pattern, lazy: () => import('../routes/semester-edit.route') },
+              { path: paths.newConfiguration.pattern, lazy: () => import('../routes/new-configuration.route') },
               { path: paths.semester.pattern, lazy: () => import('../routes/semester.route') },
             ],
           },

@@ -5,6 +5,8 @@ import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { Link as RouterLink } from 'react-router-dom';
+import { paths } from '../app/paths';
 import { ModeHistory } from '../features/facilities/components/ModeHistory';
 import { ModeSheet } from '../features/facilities/components/ModeSheet';
 import { formatNumber } from '../lib/format';
@@ -64,7 +66,7 @@ export function Component() {
 
 function ModeEntry({ mode }: { mode: Mode }) {
   const [open, setOpen] = useState(false);
-  const signedIn = Boolean(useQuery(sessionQueries.me()).data);
+  const me = useQuery(sessionQueries.me()).data;
   return (
     <Box
       component="details"
@@ -87,7 +89,18 @@ function ModeEntry({ mode }: { mode: Mode }) {
       {open && (
         <Box sx={{ pb: 2, pl: 2 }}>
           <ModeSheet configuration={mode.configuration} />
-          {signedIn && <HistoryOf modeId={mode.modeId} />}
+          {me?.isStaff && (
+            <Button
+              size="small"
+              component={RouterLink}
+              to={paths.newConfiguration.to(mode.modeId)}
+              aria-label={`New configuration of ${mode.name}`}
+              sx={{ mt: 2, mr: 1 }}
+            >
+              New configuration
+            </Button>
+          )}
+          {me && <HistoryOf modeId={mode.modeId} />}
         </Box>
       )}
     </Box>
@@ -97,12 +110,12 @@ function ModeEntry({ mode }: { mode: Mode }) {
 function HistoryOf({ modeId }: { modeId: string }) {
   const [shown, setShown] = useState(false);
   return (
-    <Box sx={{ mt: 2 }}>
-      <Button size="small" onClick={() => setShown(!shown)} aria-expanded={shown}>
+    <>
+      <Button size="small" variant="text" sx={{ mt: 2 }} onClick={() => setShown(!shown)} aria-expanded={shown}>
         {shown ? 'Hide the versions' : 'Versions'}
       </Button>
       {shown && <LoadedHistory modeId={modeId} />}
-    </Box>
+    </>
   );
 }
 

@@ -1,12 +1,14 @@
+import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useQuery } from '@tanstack/react-query';
-import { useParams } from 'react-router-dom';
+import { Link as RouterLink, useParams } from 'react-router-dom';
 import { paths } from '../app/paths';
 import { semesterQueries } from '../features/semesters/api/semesters';
 import { SemesterFacts, stageWords } from '../features/semesters/components/SemesterFacts';
 import { Loaded } from '../ui/PageStates';
 import { PageFrame } from '../ui/PageFrame';
+import { PlainText } from '../ui/PlainText';
 import { Panel } from '../ui/Panel';
 
 export function Component() {
@@ -16,6 +18,11 @@ export function Component() {
     <PageFrame
       title={query.data?.name ?? 'Semester'}
       eyebrow={query.data ? stageWords[query.data.stage] : undefined}
+      actions={
+        <Button component={RouterLink} to={paths.semesterEdit.to(semesterId)}>
+          Change
+        </Button>
+      }
       breadcrumbs={[{ label: 'Semesters', to: paths.semesters.to() }]}
     >
       <Loaded query={query} what="The semester">
@@ -25,9 +32,7 @@ export function Component() {
               <SemesterFacts semester={semester} />
             </Panel>
             <Panel title="Call">
-              <Typography variant="reading" component="p" sx={{ whiteSpace: 'pre-line', maxWidth: 700 }}>
-                {semester.callText}
-              </Typography>
+              <PlainText text={semester.callText} />
             </Panel>
             <Panel title="Criteria and their scale">
               {semester.criteria.map((criterion) => (

@@ -13,7 +13,14 @@ import { Panel } from '../ui/Panel';
 export function Component() {
   const query = useQuery(semesterQueries.list());
   return (
-    <PageFrame title="Semesters">
+    <PageFrame
+      title="Semesters"
+      actions={
+        <Button variant="contained" component={RouterLink} to={paths.newSemester.to()}>
+          Set up a semester
+        </Button>
+      }
+    >
       <Loaded query={query} what="The semesters">
         {({ rows }) =>
           rows.length === 0 ? (
@@ -28,9 +35,24 @@ export function Component() {
                   title={semester.name}
                   note={stageWords[semester.stage]}
                   actions={
-                    <Button size="small" component={RouterLink} to={paths.semester.to(semester.semesterId)}>
-                      Open
-                    </Button>
+                    <Stack direction="row" sx={{ gap: 1 }}>
+                      <Button
+                        size="small"
+                        component={RouterLink}
+                        to={paths.semester.to(semester.semesterId)}
+                        aria-label={`Open ${semester.name}`}
+                      >
+                        Open
+                      </Button>
+                      <Button
+                        size="small"
+                        component={RouterLink}
+                        to={paths.semesterEdit.to(semester.semesterId)}
+                        aria-label={`Change ${semester.name}`}
+                      >
+                        Change
+                      </Button>
+                    </Stack>
                   }
                 >
                   <SemesterFacts semester={semester} />

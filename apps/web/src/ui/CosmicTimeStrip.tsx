@@ -13,8 +13,10 @@ import { useWidth } from './plot/useWidth';
 export interface CosmicTimeStripProps {
   /** Ages come from the server, in the proposal's cosmology. */
   points: readonly { targetId: string; name: string; redshift: number; ageGyr: number; hours: number | null }[];
-  /** Redshifts to mark, each with the age it belongs to. */
+  /** Redshifts to mark above the line, each with the age it belongs to. */
   ticks: readonly { redshift: number; ageGyr: number }[];
+  /** Round ages to mark below the line, each with its redshift. */
+  ageTicks: readonly { redshift: number; ageGyr: number }[];
   ageTodayGyr: number;
   title?: string;
 }
@@ -26,6 +28,7 @@ export interface CosmicTimeStripProps {
 export function CosmicTimeStrip({
   points,
   ticks,
+  ageTicks,
   ageTodayGyr,
   title = 'Where the light set out',
 }: CosmicTimeStripProps) {
@@ -46,17 +49,20 @@ export function CosmicTimeStrip({
       ? left + (point.ageGyr / ageTodayGyr) * (right - left)
       : right - (Math.log1p(point.redshift) / Math.log1p(maxRedshift)) * (right - left);
 
-  const shownTicks = useMemo(() => {
-    // From today backwards, leaving out what would touch its neighbour.
-    const shown: { redshift: number; ageGyr: number; x: number }[] = [];
-    for (const tick of ticks.toSorted((a, b) => a.redshift - b.redshift)) {
-      const x = place(tick);
-      const previous = shown.at(-1);
-      if (x >= left - 1 && (!previous || previous.x - x >= 40)) shown.push({ ...tick, x });
-    }
-    return shown;
+  const [redshiftMarks, ageMarks] = useMemo(() => {
+    const spaced = (list: typeof ticks) => {
+      // From today backwards, leaving out what would touch its neighbour.
+      const shown: { redshift: number; ageGyr: number; x: number }[] = [];
+      for (const tick of list.toSorted((a, b) => a.redshift - b.redshift)) {
+        const x = place(tick);
+        const previous = shown.at(-1);
+        if (x >= left - 1 && (!previous || previous.x - x >= 40)) shown.push({ ...tick, x });
+      }
+      return shown;
+    };
+    return [spaced(ticks), spaced([{ redshift: 0, ageGyr: ageTodayGyr }, ...ageTicks])];
     // eslint-disable-next-line react-hooks/exhaustive-deps -- `place` is made of exactly these
-  }, [ticks, width, evenInTime, maxRedshift, ageTodayGyr]);
+  }, [ticks, ageTicks, width, evenInTime, maxRedshift, ageTodayGyr]);
 
   const maxHours = Math.max(0, ...points.map((point) => point.hours ?? 0));
   const radius = (hours: number | null) => (maxHours > 0 ? 4 + 9 * Math.sqrt((hours ?? 0) / maxHours) : 5);
@@ -95,17 +101,24 @@ export function CosmicTimeStrip({
         style={{ display: 'block', overflow: 'visible' }}
       >
         <line x1={left} x2={right} y1={y} y2={y} stroke={colour.line} strokeWidth="2" />
-        {shownTicks.map((tick) => (
-          <g key={tick.redshift} fontSize="12" fill={colour.inkSoft} textAnchor="middle">
-            <line x1={tick.x} x2={tick.x} y1={y - 6} y2={y + 6} stroke={colour.inkSoft} />
-            <text x={tick.x} y={y - 17}>
-              {tick.redshift}
-            </text>
-            <text x={tick.x} y={y + 32}>
-              {tick.redshift === 0 ? 'today' : formatNumber(tick.ageGyr, { significant: 2 })}
-            </text>
-          </g>
-        ))}
+        <g fontSize="12" fill={colour.inkSoft} textAnchor="middle">
+          {redshiftMarks.map((tick) => (
+            <g key={tick.redshift}>
+              <line x1={tick.x} x2={tick.x} y1={y - 7} y2={y} stroke={colour.inkSoft} />
+              <text x={tick.x} y={y - 17}>
+                {tick.redshift}
+              </text>
+            </g>
+          ))}
+          {ageMarks.map((tick) => (
+            <g key={tick.ageGyr}>
+              <line x1={tick.x} x2={tick.x} y1={y} y2={y + 7} stroke={colour.inkSoft} />
+              <text x={tick.x} y={y + 32}>
+                {tick.redshift === 0 ? 'today' : tick.ageGyr}
+              </text>
+            </g>
+          ))}
+        </g>
         <text x={right + 14} y={y - 17} fontSize="12" fill={colour.inkSoft}>
           z
         </text>

@@ -198,6 +198,7 @@ it('cosmic time places targets and gives the numbers behind them', async () => {
         { redshift: 0, ageGyr: 13.79 },
         { redshift: 6, ageGyr: 0.93 },
       ]}
+      ageTicks={[{ redshift: 5.73, ageGyr: 1 }]}
       ageTodayGyr={13.79}
     />,
   );

@@ -2,6 +2,7 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useForm, type FieldPath, type FieldValues, type UseFormProps, type UseFormReturn } from 'react-hook-form';
 import type { z } from 'zod';
 import { ApiError } from '../../lib/api';
+import './messages';
 
 /** react-hook-form with the contract's schema. Fields are checked when left, and again while being mended. */
 export function useZodForm<Input extends FieldValues, Output>(

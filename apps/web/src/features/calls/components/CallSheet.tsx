@@ -4,6 +4,7 @@ import Typography from '@mui/material/Typography';
 import type { ReactNode } from 'react';
 import { formatNumber } from '../../../lib/format';
 import { colour } from '../../../theme/theme';
+import { PlainText } from '../../../ui/PlainText';
 import { Countdown, TimeDisplay } from '../../../ui/TimeDisplay';
 
 const moonClasses = ['dark', 'grey', 'bright'] as const;
@@ -40,9 +41,9 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
         Deadline <TimeDisplay instant={call.deadlineAt} siteTimeZone={call.siteTimeZone} />
       </Typography>
       {call.callText && (
-        <Typography variant="reading" component="p" sx={{ mt: 1.5, whiteSpace: 'pre-line', maxWidth: 640 }}>
-          {call.callText}
-        </Typography>
+        <Box sx={{ mt: 1.5 }}>
+          <PlainText text={call.callText} />
+        </Box>
       )}
       <Box
         component="table"

@@ -1,7 +1,7 @@
 import type { ModeConfigurationVersion } from '@faintward/contracts/facilities';
 import Box from '@mui/material/Box';
 import { TimeDisplay } from '../../../ui/TimeDisplay';
-import { configurationLines } from './ModeSheet';
+import { differencesOf } from '../configurationFields';
 
 /** Versions of a mode's configuration, newest first, each with what it changed. */
 export function ModeHistory({ versions }: { versions: readonly ModeConfigurationVersion[] }) {
@@ -10,10 +10,7 @@ export function ModeHistory({ versions }: { versions: readonly ModeConfiguration
     <Box component="ol" sx={{ listStyle: 'none', p: 0, m: 0 }}>
       {sorted.map((version, index) => {
         const before = sorted[index + 1];
-        const earlier = new Map(before ? configurationLines(before.configuration) : []);
-        const changes = before
-          ? configurationLines(version.configuration).filter(([label, value]) => earlier.get(label) !== value)
-          : [];
+        const changes = before ? differencesOf(before.configuration, version.configuration) : [];
         return (
           <Box
             component="li"
@@ -23,9 +20,9 @@ export function ModeHistory({ versions }: { versions: readonly ModeConfiguration
             <strong>Configuration {version.version}</strong>, <TimeDisplay instant={version.createdAt} short />
             {version.createdByName ? `, ${version.createdByName}` : ''}
             {version.note && <Box sx={{ color: 'text.secondary' }}>{version.note}</Box>}
-            {changes.map(([label, value]) => (
-              <Box key={label}>
-                {label}: {earlier.get(label) ?? 'not stated'} → {value}
+            {changes.map((change) => (
+              <Box key={change.label}>
+                {change.label}: {change.before} → {change.after}
               </Box>
             ))}
           </Box>

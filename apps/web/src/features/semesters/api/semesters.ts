@@ -1,5 +1,5 @@
-import { Semester, SemesterList } from '@faintward/contracts/semesters';
-import { queryOptions } from '@tanstack/react-query';
+import { Semester, SemesterList, type SemesterInput, type SemesterPatch } from '@faintward/contracts/semesters';
+import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { api } from '../../../lib/api';
 
 export const semesterQueries = {
@@ -15,3 +15,23 @@ export const semesterQueries = {
       queryFn: ({ signal }) => api({ path: `/semesters/${semesterId}`, schema: Semester, signal }),
     }),
 };
+
+/** Stores a new semester, or the changes of one; the calls on the front page follow. */
+export function useSaveSemester() {
+  const queryClient = useQueryClient();
+  const stored = () =>
+    Promise.all([
+      queryClient.invalidateQueries({ queryKey: semesterQueries.all() }),
+      queryClient.invalidateQueries({ queryKey: ['calls'] }),
+    ]);
+  const create = useMutation({
+    mutationFn: (body: SemesterInput) => api({ method: 'POST', path: '/semesters', body, schema: Semester }),
+    onSuccess: stored,
+  });
+  const change = useMutation({
+    mutationFn: ({ semesterId, version, patch }: { semesterId: string; version: number; patch: SemesterPatch }) =>
+      api({ method: 'PATCH', path: `/semesters/${semesterId}`, body: patch, ifMatch: version, schema: Semester }),
+    onSuccess: stored,
+  });
+  return { create, change };
+}
