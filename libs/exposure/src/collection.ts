@@ -43,6 +43,8 @@ interface Geometry {
   skyArcsec2LogWidthPerPixel: number;
   /** Fraction of the source's light in its brightest pixel; of a patch: pixel area over 1 arcsec². */
   peakFraction: number;
+  /** The same for the continuum under a line, which is flat along the dispersion; elsewhere equal to `peakFraction`. */
+  continuumPeakFraction: number;
   /** Resolution elements in the sum, over which a continuum under a line adds up. */
   elementCount: number;
 }
@@ -100,8 +102,8 @@ export function collect(
     mode.throughput *
     geometry.skyArcsec2LogWidthPerPixel;
   const dark = mode.detector.darkElectronsPerSecond;
-  const peakSource =
-    electrons(beforeApertureMag) * zeroPerLogWidth * range.logWidth * geometry.peakFraction * (1 + continuumOverLine);
+  const peakShare = geometry.peakFraction + geometry.continuumPeakFraction * continuumOverLine;
+  const peakSource = electrons(beforeApertureMag) * zeroPerLogWidth * range.logWidth * peakShare;
   const { pixelCount } = geometry.aperture;
   return {
     aperture: geometry.aperture,
@@ -191,6 +193,7 @@ function imageGeometry(
     goalShare,
     skyArcsec2LogWidthPerPixel: pixelArea * range.logWidth,
     peakFraction,
+    continuumPeakFraction: peakFraction,
     elementCount: 1,
   };
 }
@@ -249,9 +252,10 @@ function slitGeometry(
       });
     }
   }
+  const flatAlongDispersion = Math.min(1, 1 / pixelsPerResolutionElement);
   const peakAlongDispersion = isLine
     ? gaussianSlitFraction(1 / (pixelsPerResolutionElement * elementCount))
-    : Math.min(1, 1 / pixelsPerResolutionElement);
+    : flatAlongDispersion;
   const goalShare = slitGoalShare(per, elementCount, pixelsPerResolutionElement, areaArcsec2);
   return {
     aperture: {
@@ -266,6 +270,7 @@ function slitGeometry(
     goalShare,
     skyArcsec2LogWidthPerPixel: (slitWidthArcsec * pixelArcsec) / pixelsPerResolutionElement / resolvingPower,
     peakFraction: peakAlongSlit * peakAlongDispersion,
+    continuumPeakFraction: (peakAlongSlit * flatAlongDispersion) / elementCount,
     elementCount,
   };
 }

@@ -1,7 +1,7 @@
 import type { Constant } from '@faintward/photometry';
 
 /** Changes whenever the same input could give another answer. Stored beside every number. */
-export const ENGINE_VERSION = '1.0.0';
+export const ENGINE_VERSION = '1.0.1';
 
 /** Radius of best S/N against a background, for a Gaussian image, in units of its FWHM: 1 + 2c x² = e^(c x²), c = 4 ln 2. */
 export const OPTIMUM_RADIUS_OVER_FWHM = 0.673_172_911_275_977_8;

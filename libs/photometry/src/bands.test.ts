@@ -24,6 +24,20 @@ describe('bands', () => {
     expect(vegaFromAbMagnitude(21.85, 'Ks')).toBeCloseTo(20, 12);
   });
 
+  it.each([
+    // Blanton & Roweis 2007, AJ 133, 734; U, R and I from memory.
+    ['U', 0.79],
+    ['B', -0.09],
+    ['V', 0.02],
+    ['R', 0.21],
+    ['I', 0.45],
+    ['J', 0.91],
+    ['H', 1.39],
+    ['Ks', 1.85],
+  ] as const)('%s is %d mag fainter in AB than in Vega', (band, offset) => {
+    expect(abFromVegaMagnitude(0, band)).toBe(offset);
+  });
+
   it('have no Vega offset where magnitudes are AB anyway', () => {
     expect(abFromVegaMagnitude(20, 'g')).toBeUndefined();
   });
