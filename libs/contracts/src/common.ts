@@ -28,8 +28,11 @@ export function prose(maxLength: number) {
     .refine((text) => !hasControlCharacters(text, '\n\r\t'), { error: 'Control characters are not allowed here.' });
 }
 
-/** PostgreSQL text cannot hold NUL, and other control characters only ever arrive by accident. */
+const loneSurrogate = /\p{Surrogate}/u;
+
+/** PostgreSQL text cannot hold NUL or half a character, and other control characters only ever arrive by accident. */
 function hasControlCharacters(text: string, allowed: string): boolean {
+  if (loneSurrogate.test(text)) return true;
   for (const character of text) {
     const code = character.codePointAt(0) ?? 0;
     if ((code < 32 || code === 127) && !allowed.includes(character)) return true;
