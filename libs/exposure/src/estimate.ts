@@ -200,13 +200,13 @@ function planSeries(
   if (saturatesAtSeconds < minimumExposureSeconds) {
     return {
       code: 'saturatesAtMinimumExposure',
-      message: `The brightest pixel fills in ${saturatesAtSeconds.toPrecision(3)} s; the shortest exposure is ${minimumExposureSeconds} s.`,
+      message: `The brightest pixel fills in ${inWords(saturatesAtSeconds)} s; the shortest exposure is ${minimumExposureSeconds} s.`,
     };
   }
   if (goal.exposureSeconds !== undefined && goal.exposureSeconds > saturatesAtSeconds) {
     return {
       code: 'exposureSaturates',
-      message: `The brightest pixel fills in ${saturatesAtSeconds.toPrecision(3)} s: ask for shorter exposures than ${goal.exposureSeconds} s.`,
+      message: `The brightest pixel fills in ${inWords(saturatesAtSeconds)} s: ask for shorter exposures than ${goal.exposureSeconds} s.`,
     };
   }
   if (goal.kind === 'exposureTime') {
@@ -225,11 +225,11 @@ function planSeries(
   const most = input.limits?.maximumExposureCount ?? MAXIMUM_EXPOSURE_COUNT.value;
   if (series.exposureCount > most) {
     const needed = Number.isFinite(series.exposureCount)
-      ? series.exposureCount.toPrecision(3)
+      ? inWords(series.exposureCount)
       : 'more than can be counted';
     return {
       code: 'tooManyExposures',
-      message: `Exposures needed: ${needed}, of ${series.exposureSeconds.toPrecision(3)} s each; at most ${most} are allowed.`,
+      message: `Exposures needed: ${needed}, of ${inWords(series.exposureSeconds)} s each; at most ${most} are allowed.`,
     };
   }
   return series;
@@ -247,7 +247,7 @@ function warnOfSeries(
   if (exposureCount > 1 && readNoiseSeconds !== null && exposureSeconds < readNoiseSeconds) {
     warnings.push({
       code: 'readNoiseLimited',
-      message: `Exposures shorter than ${readNoiseSeconds.toPrecision(2)} s lose S/N to read noise.`,
+      message: `Exposures shorter than ${inWords(readNoiseSeconds, 2)} s lose S/N to read noise.`,
     });
   }
   const saturatesAtSeconds = boundOf('saturation');
@@ -284,5 +284,10 @@ function largestShare(shares: NoiseShares): NoiseKind {
 }
 
 function hours(seconds: number): string {
-  return (seconds / 3600).toPrecision(3);
+  return inWords(seconds / 3600);
+}
+
+/** A number for a sentence: few digits and, unlike `toPrecision`, never an exponent: 1100 instead of 1.1e+3. */
+function inWords(value: number, significantDigits = 3): string {
+  return String(Number(value.toPrecision(significantDigits)));
 }
