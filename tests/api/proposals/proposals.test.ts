@@ -1,5 +1,6 @@
-import { eq } from 'drizzle-orm';
+import { eq, sql } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { changes } from '../../../apps/api/src/database/schema/history.js';
 import { proposals } from '../../../apps/api/src/database/schema/proposals.js';
 import { semesters } from '../../../apps/api/src/database/schema/semesters.js';
 import { countWords } from '../../../apps/api/src/modules/proposals/case-sections.js';
@@ -215,10 +216,106 @@ describe('the case', () => {
     await draft.pi.put(`${draft.base}/case/poetry`).set('If-Match', '"1"').send({ body: 'x' }).expect(404);
   });
 
+  it('keeps one person’s saves of a section within ten minutes as one change, with the text that was there first', async () => {
+    const draft = await aDraft(app);
+    const { agent: other } = await aTeamMember(app, draft, 'editsEverything');
+    let version = 1;
+    const save = async (agent: typeof other, body: string, sectionId = 'science') => {
+      const isScience = sectionId === 'science';
+      await agent
+        .put(`${draft.base}/case/${sectionId}`)
+        .set('If-Match', `"${isScience ? version : 1}"`)
+        .send({ body })
+        .expect(200);
+      if (isScience) version += 1;
+    };
+    const bodies = async () => {
+      const { body } = await draft.pi.get(`${draft.base}/history?pageSize=50`).expect(200);
+      return (body.rows as { subject: string; subjectName: string; changes: { field: string }[] }[])
+        .filter(({ subject }) => subject === 'caseSection')
+        .map(({ subjectName, changes }) => ({ subjectName, ...changes.find(({ field }) => field === 'body') }))
+        .reverse();
+    };
+    await save(draft.pi, 'One');
+    await save(draft.pi, 'Other section', 'technical');
+    await save(draft.pi, 'One two');
+    await save(draft.pi, 'One two three');
+    expect(await bodies()).toMatchObject([
+      { subjectName: 'Scientific case', before: '', after: 'One two three' },
+      { subjectName: 'Technical case', before: '', after: 'Other section' },
+    ]);
+    await save(other, 'One two three four');
+    await save(draft.pi, 'Five');
+    expect((await bodies()).slice(2)).toMatchObject([
+      { before: 'One two three', after: 'One two three four' },
+      { before: 'One two three four', after: 'Five' },
+    ]);
+    // An hour later it is another change.
+    await app.db
+      .update(changes)
+      .set({ at: sql`${changes.at} - interval '1 hour'` })
+      .where(eq(changes.scopeId, draft.proposalId));
+    await save(draft.pi, 'Six');
+    expect((await bodies()).at(-1)).toMatchObject({ before: 'Five', after: 'Six' });
+  });
+
+  it('begins another change after a submission', async () => {
+    const ready = await aReadyDraft(app);
+    await ready.pi.post(`${ready.base}/submissions`).expect(201);
+    await ready.pi
+      .put(`${ready.base}/case/science`)
+      .set('If-Match', '"2"')
+      .send({ body: 'Because of darkness.' })
+      .expect(200);
+    const { body } = await ready.pi.get(`${ready.base}/history?pageSize=50`).expect(200);
+    const section = (body.rows as { subjectName: string }[]).filter(
+      ({ subjectName }) => subjectName === 'Scientific case',
+    );
+    expect(section).toHaveLength(2);
+  });
+
   it('counts words as people do', () => {
     expect(countWords('')).toBe(0);
     expect(countWords('  one\n two\tthree — four  ')).toBe(4);
     expect(countWords('z ≈ 7.1')).toBe(2);
+  });
+});
+
+describe('a change of the cosmology', () => {
+  it('takes up what others change while it computes: every number is of one cosmology', async () => {
+    const draft = await aDraft(app);
+    const targets = [];
+    for (let index = 0; index < 8; index += 1) {
+      targets.push(await aTarget(draft, { name: `T${index}`, rightAscensionDeg: 10 * index }));
+    }
+    await planAll(app, draft);
+    const { body: before } = await draft.pi.get(draft.base).expect(200);
+    const [changed, ...edits] = await Promise.all([
+      draft.pi.patch(draft.base).set('If-Match', `"${before.version}"`).send({ cosmology: 'wmap9' }),
+      ...targets.map(({ targetId, version }, index) =>
+        draft.pi
+          .patch(`${draft.base}/targets/${targetId}`)
+          .set('If-Match', `"${version}"`)
+          .send({ redshift: 4 + index / 10 }),
+      ),
+      draft.pi.post(`${draft.base}/targets/import`).send({ text: 'name,ra,dec,z,brightness\nNew,200,-30,2,22 AB (r)' }),
+    ]);
+    expect(changed?.status).toBe(200);
+    // An edit that came after the change of all rows is told so.
+    expect(edits.filter(({ status }) => status !== 200 && status !== 412)).toEqual([]);
+    const { body: list } = await draft.pi.get(`${draft.base}/targets`).expect(200);
+    const redshifts = list.rows.map(({ redshift }: { redshift: number }) => redshift);
+    const { body: distances } = await draft.pi
+      .post('/api/v1/distances')
+      .send({ cosmology: 'wmap9', redshifts })
+      .expect(200);
+    expect(
+      list.rows.map(({ computed }: { computed: { luminosityDistanceMpc: number } }) => computed.luminosityDistanceMpc),
+    ).toEqual(distances.rows.map((row: { luminosityDistanceMpc: number }) => row.luminosityDistanceMpc));
+    const { body: observations } = await draft.pi.get(`${draft.base}/observations`).expect(200);
+    expect(
+      observations.rows.map(({ estimate }: { estimate: { cosmologyId: string } }) => estimate.cosmologyId),
+    ).toEqual(new Array(targets.length).fill('wmap9'));
   });
 });
 

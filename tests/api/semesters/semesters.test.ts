@@ -214,6 +214,12 @@ describe('semesters', () => {
       .send({ criteria: [MERIT] })
       .expect(409);
     expect(body.code).toBe('wrong-state');
+    const moved = await staff
+      .patch(path)
+      .set('If-Match', '"2"')
+      .send({ deadlineAt: inDays(20).toISOString() })
+      .expect(409);
+    expect(moved.body.fieldErrors[0].path).toBe('deadlineAt');
     // The same criteria again are no change.
     await staff
       .patch(path)

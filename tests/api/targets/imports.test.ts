@@ -89,6 +89,67 @@ describe('the preview of an import', () => {
   });
 });
 
+describe('what the header of a column states', () => {
+  const columnOf = async (draft: Draft, text: string, options: object = {}) => {
+    await load(draft, text, options).expect(200);
+    return (await list(draft)).rows as { rightAscensionDeg: number; declinationDeg: number; brightnessText: string }[];
+  };
+
+  it.each([
+    ['RA [h]', '10.5', 157.5],
+    ['ra_hours', '10.5', 157.5],
+    ['RA (h)', '10:30:00', 157.5],
+    ['RA [deg]', '10.5', 10.5],
+    ['ra', '10.5', 10.5],
+    ['RA [h]', '157.5d', 157.5],
+  ])('reads under "%s" a right ascension of %s as %d degrees', async (header, cell, degrees) => {
+    const draft = await aDraft(app);
+    const [row] = await columnOf(draft, `name,${header},dec,z\nA,${cell},-20,2`);
+    expect(row?.rightAscensionDeg).toBeCloseTo(degrees, 10);
+  });
+
+  it('refuses 25 hours at the cell, and warns where degrees are written like hours', async () => {
+    const draft = await aDraft(app);
+    const hours = await preview(draft, 'name,RA [h],dec,z\nA,25,-20,2').expect(200);
+    expect(hours.body.rows[0].cells[1].error).toMatch(/24 hours/);
+    const degrees = await preview(draft, 'name,RA (deg),dec,z\nA,10:30:00,-20,2').expect(200);
+    expect(degrees.body.rows[0].cells[1].warning).toMatch(/hours, minutes and seconds/);
+  });
+
+  it.each([
+    ['name,RA (rad),dec,z', 'rad'],
+    ['name,ra,Dec (arcmin),z', 'arcmin'],
+    ['name,ra,dec [h],z', 'h'],
+    ['name,ra,dec,z [km/s]', 'km/s'],
+  ])('refuses a table "%s" whose unit cannot be kept to', async (header, unit) => {
+    const draft = await aDraft(app);
+    const roles = ['name', 'rightAscension', 'declination', 'redshift'];
+    const { body } = await load(draft, `${header}\nA,1.5,0.3,2`, { roles }).expect(422);
+    expect(body.fieldErrors[0]).toMatchObject({ path: 'options.roles', message: expect.stringContaining(` ${unit};`) });
+    expect((await list(draft)).rowCount).toBe(0);
+  });
+
+  it.each([
+    ['J (Vega)', '23.00 Vega (J)'],
+    ['J_vega', '23.00 Vega (J)'],
+    ['mag_J', '23.00 AB (J)'],
+    ['Kmag', '23.00 AB (Ks)'],
+    ['mag', '23.00 AB (V)'],
+    ['R', '23.00 AB (R)'],
+    ['r', '23.00 AB (r)'],
+  ])('takes the bare number under "%s" for %s, and says so where it was not asked for', async (header, text) => {
+    const draft = await aDraft(app);
+    const table = `name,ra,dec,z,${header}\nA,10,-20,2,23\nB,11,-20,2,22 AB (H)`;
+    const roles = ['name', 'rightAscension', 'declination', 'redshift', 'brightness'];
+    const { body } = await preview(draft, table, { roles }).expect(200);
+    expect(body.rows[0].cells[4].warning !== undefined).toBe(header !== 'mag');
+    expect(body.rows[1].cells[4].warning).toBeUndefined();
+    const [bare, full] = await columnOf(draft, table, { roles });
+    expect(bare?.brightnessText).toBe(text);
+    expect(full?.brightnessText).toBe('22.00 AB (H)');
+  });
+});
+
 describe('an import', () => {
   it('takes the ready rows, says how many it left out, and is one entry of the history', async () => {
     const draft = await aDraft(app);

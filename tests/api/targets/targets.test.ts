@@ -209,6 +209,28 @@ describe('the list of targets', () => {
     expect(Math.abs(body.ageTodayGyr - 13.787)).toBeLessThan(0.02);
     expect(body.points).toHaveLength(1);
     expect(body.ticks[0]).toMatchObject({ redshift: 0, ageGyr: body.ageTodayGyr });
+    // Of the same model: 1 Gyr lies between the redshifts 5 and 6, 10 Gyr between 0 and 0.5.
+    expect(body.ageTicks.map(({ ageGyr }: { ageGyr: number }) => ageGyr)).toEqual([0.3, 0.5, 1, 2, 4, 6, 8, 10]);
+    const redshiftAt = (age: number) =>
+      body.ageTicks.find(({ ageGyr }: { ageGyr: number }) => ageGyr === age).redshift as number;
+    const { body: distances } = await own.pi
+      .post('/api/v1/distances')
+      .send({ redshifts: [0.3, 1, 10].map(redshiftAt) })
+      .expect(200);
+    const ages = distances.rows.map(({ ageGyr }: { ageGyr: number }) => ageGyr);
+    for (const [index, age] of [0.3, 1, 10].entries()) expect(ages[index] / age).toBeCloseTo(1, 8);
+  });
+
+  it('marks no age that a young universe has not reached', async () => {
+    const own = await aDraft(app);
+    await own.pi
+      .patch(own.base)
+      .set('If-Match', '"1"')
+      // Einstein–de Sitter: two thirds of the Hubble time, 977.79 / 100 × 2 / 3 = 6.52 Gyr.
+      .send({ cosmology: { hubbleConstantKmSMpc: 100, omegaMatter: 1, omegaDarkEnergy: 0, cmbTemperatureK: 0 } })
+      .expect(200);
+    const { body } = await own.pi.get(`${own.base}/targets/cosmic-time`).expect(200);
+    expect(body.ageTicks.at(-1).ageGyr).toBe(6);
   });
 });
 
