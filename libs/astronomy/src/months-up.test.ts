@@ -295,3 +295,23 @@ describe('months up', () => {
     expect(() => planMonthsUp(south, at('never', '2027-10-01T00:00:00Z'))).toThrow(ArgumentOutOfRange);
   });
 });
+
+it('a month is stood for by the middle one of its nights', () => {
+  const options = {
+    altitudeLimitDeg: 30,
+    startUtc: new Date('2027-02-01T00:00Z'),
+    endUtc: new Date('2027-05-01T00:00Z'),
+  };
+  const { months } = monthsUp({ raDeg: 150, decDeg: 2 }, south, options);
+  expect(months.map(({ eveningDate }) => eveningDate)).toEqual(['2027-02-14', '2027-03-16', '2027-04-15']);
+});
+
+it('what never sets is up through all of a polar night, also where 24 hours are more than a turn of the sky', () => {
+  const pole: ObservingSite = { latitudeDeg: 90, longitudeDegEast: 0 };
+  const plan = planMonthsUp(pole, oneNight('2026-12-21', pole, 10));
+  for (let raDeg = 0; raDeg < 360; raDeg += 0.25) {
+    const [month] = monthsUpWithPlan({ raDeg, decDeg: 60 }, plan).months;
+    expect(month?.darkHours).toBe(24);
+    expect(month?.hoursUp, `at ${raDeg}`).toBeCloseTo(24, 9);
+  }
+});

@@ -3,6 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   angularSeparationDeg,
+  ephemerisDateFromJulianDate,
   greenwichApparentSiderealTimeDeg,
   greenwichMeanSiderealTimeDeg,
   julianDateFromModified,
@@ -123,4 +124,9 @@ describe('angles', () => {
     expect(normaliseDegrees(-1e-20)).toBe(0);
     expect(Object.is(normaliseDegrees(-360), 0)).toBe(true);
   });
+});
+
+it('terrestrial time is 37 leap seconds and 32.184 s ahead of UTC', () => {
+  // IERS Bulletin C 52 (TAI − UTC = 37 s since 2017) and the definition of TT.
+  expect((ephemerisDateFromJulianDate(2_461_041.5) - 2_461_041.5) * 86_400).toBeCloseTo(37 + 32.184, 3);
 });

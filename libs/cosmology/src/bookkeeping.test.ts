@@ -51,6 +51,10 @@ describe('redshifts of moving sources', () => {
     // (5/ln 10) · 300/(c z), the limit of small z.
     expect(distanceModulusScatterMag(model, 0.01, 300)).toBeCloseTo(0.217, 2);
     expect(distanceModulusScatterMag(model, 0.1, 300)).toBeCloseTo(0.0217, 2);
+    // Where (1+z) matters: a velocity v in the source's frame shifts the observed redshift by (1+z) v/c.
+    const shift = (1 + 3) * (300 / 299_792.458);
+    const [near, far] = [model.distanceModulusMag(3 - shift), model.distanceModulusMag(3 + shift)];
+    expect(distanceModulusScatterMag(model, 3, 300)).toBeCloseTo((far! - near!) / 2, 8);
     expect(distanceModulusScatterMag(model, 0, 300)).toBeUndefined();
     expect(() => distanceModulusScatterMag(model, 1, -1)).toThrow(OutOfDomainError);
   });

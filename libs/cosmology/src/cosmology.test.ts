@@ -480,6 +480,16 @@ describe('parameters', () => {
     expect(short.omegaNeutrinos).toBe(full.omegaNeutrinos);
   });
 
+  it('count every neutrino of the same mass', () => {
+    const hot = { ...base, cmbTemperatureK: 2.7255, effectiveNeutrinoCount: 3 };
+    const of = (masses: number[]): number => createCosmology({ ...hot, neutrinoMassesEv: masses }).omegaNeutrinos;
+    // A third of the effective number each, so that the densities of single species add up.
+    expect(relative(of([0.4, 0.4, 0.4]), 3 * of([0.4, 0, 0]) - 2 * of([0, 0, 0]))).toBeLessThan(1e-14);
+    expect(relative(of([0.4, 0.4, 0.1]), 2 * of([0.4, 0, 0]) + of([0.1, 0, 0]) - 2 * of([0, 0, 0]))).toBeLessThan(
+      1e-14,
+    );
+  });
+
   it('cannot be changed afterwards', () => {
     const masses = [0.1];
     const model = createCosmology({

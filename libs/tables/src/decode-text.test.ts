@@ -31,6 +31,9 @@ describe('decoding a table file', () => {
     ['a zipped spreadsheet', [0x50, 0x4b, 0x03, 0x04, 0x14], 'spreadsheet-file'],
     ['an old spreadsheet', [0xd0, 0xcf, 0x11, 0xe0, 0xa1], 'spreadsheet-file'],
     ['a PDF', [...utf8('%PDF-1.7')], 'binary'],
+    // RFC 1952 and the PNG specification, section 5.2.
+    ['a gzip file', [0x1f, 0x8b, 0x08, 0x41], 'binary'],
+    ['a PNG picture', [0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a], 'binary'],
     ['NUL bytes', [0x41, 0x00, 0x42], 'binary'],
     ['half a UTF-16 character', [0xff, 0xfe, 0x41], 'encoding'],
   ])('refuses %s', (_, bytes, code) => {

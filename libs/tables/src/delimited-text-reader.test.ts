@@ -67,6 +67,14 @@ describe('reading a table', () => {
     expect(readDelimitedText('\ufeffname,z\nA,1').columns).toEqual(['name', 'z']);
   });
 
+  it('keeps to semicolons where a row is short and every name has a comma', () => {
+    const rows = Array.from({ length: 8 }, (_, i) => `A, part ${i};${10 + i}.5;-2.5`);
+    const table = readDelimitedText(['name, part;ra;dec', ...rows, 'A, part 9;20.5'].join('\n'));
+    expect(table.delimiter).toBe(';');
+    expect(table.columns).toEqual(['name, part', 'ra', 'dec']);
+    expect(table.issues.map(({ code }) => code)).toEqual(['short-row']);
+  });
+
   it('reads quoted cells with delimiters, doubled quotes and line breaks, and counts rows as a spreadsheet does', () => {
     const table = readDelimitedText('name,notes\nA,"bright, ""red"" and\nextended"\nB,plain\n');
     expect(table.rows).toEqual([
