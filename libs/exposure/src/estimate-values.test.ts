@@ -167,12 +167,14 @@ it('a magnitude averaged over a spectrograph’s range, with a slope, averages t
   const mode = aSpectroscopyMode({ wavelengthLowNm: 550, wavelengthHighNm: 1000, resolvingPower: 5000 });
   const slopeBeta = -0.4;
   const light = { kind: 'apparentMagnitude', magnitudeAb: 22, slopeBeta } as const;
+  const magnitudeAt = (wavelengthNm: number): number =>
+    feasible(anInput({ target: { redshift: 0, light, extent: point }, mode, wavelengthNm })).apparentMagnitudeAb;
   const steps = 400;
   let flux = 0;
   for (let i = 0; i < steps; i++) {
     const wavelengthNm = 550 * (1000 / 550) ** ((i + 0.5) / steps);
-    const answer = feasible(anInput({ target: { redshift: 0, light, extent: point }, mode, wavelengthNm }));
-    flux += 10 ** (-0.4 * (answer.apparentMagnitudeAb - 22)) / steps;
+    flux += 10 ** (-0.4 * (magnitudeAt(wavelengthNm) - 22)) / steps;
   }
   expect(flux).toBeCloseTo(1, 5);
+  expect(magnitudeAt(900) - magnitudeAt(600)).toBeCloseTo(-2.5 * (slopeBeta + 2) * Math.log10(900 / 600), 9);
 });
