@@ -40,9 +40,11 @@ export function Component() {
       {
         field: 'panelNames',
         headerName: 'Panels',
-        width: 180,
+        flex: 1.2,
+        minWidth: 180,
         sortable: false,
-        valueFormatter: (value: string[]) => value.join(', '),
+        // A panel has one name in every semester.
+        valueFormatter: (value: string[]) => [...new Set(value)].join(', '),
       },
       role('isStaff', 'Staff'),
       role('isAdministrator', 'Administrator'),

@@ -30,8 +30,9 @@ export function Component() {
   const announce = useNotices();
   const telescopes = useQuery(facilityQueries.telescopes());
   const modes = useMemo(() => offeredModes(telescopes.data?.rows ?? []), [telescopes.data]);
-  // Without a choice the first mode that is offered stands, so that the page answers at once.
-  const mode = modes.some((one) => one.id === typed.mode) ? typed.mode : (modes[0]?.id ?? '');
+  // Without a choice a mode stands that suits the source the page opens with, so that it answers at once.
+  const first = modes.find((one) => one.mode.configuration.bandId === 'J') ?? modes[0];
+  const mode = modes.some((one) => one.id === typed.mode) ? typed.mode : (first?.id ?? '');
   const isUnknownMode = typed.mode !== '' && modes.length > 0 && mode !== typed.mode;
   const sketch = useMemo(() => ({ ...typed, mode }), [typed, mode]);
   const settled = useDebounced(sketch, 400);

@@ -6,6 +6,7 @@ import { useQuery } from '@tanstack/react-query';
 import { proposalQueries } from '../features/proposals/api/proposals';
 import { useProposal } from '../features/proposals/components/useProposal';
 import { useTableParams } from '../lib/useTableParams';
+import { changeLines } from '../ui/changeWords';
 import { EmptyState } from '../ui/EmptyState';
 import { Loaded } from '../ui/PageStates';
 import { Panel } from '../ui/Panel';
@@ -66,18 +67,14 @@ function Entry({ entry }: { entry: ProposalChange }) {
       <Box>{entry.personName ?? 'the system'}</Box>
       <Box sx={{ minWidth: 0, overflowWrap: 'anywhere' }}>
         {entry.subjectName || entry.subject} {entry.action}
-        {entry.changes.slice(0, 8).map((one) => (
-          <Typography key={one.field} variant="body2" color="textSecondary">
-            {one.field}: {describe(one.before)} → {describe(one.after)}
-          </Typography>
-        ))}
+        {changeLines(entry.changes)
+          .slice(0, 8)
+          .map((one) => (
+            <Typography key={one.label} variant="body2" color="textSecondary">
+              {one.label}: {one.before === '—' ? one.after : `${one.before} → ${one.after}`}
+            </Typography>
+          ))}
       </Box>
     </Box>
   );
-}
-
-function describe(value: unknown): string {
-  if (value == null || value === '') return '—';
-  const text = typeof value === 'string' ? value : JSON.stringify(value);
-  return text.length > 160 ? `${text.slice(0, 160)}…` : text;
 }

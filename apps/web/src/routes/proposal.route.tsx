@@ -1,5 +1,6 @@
 import type { Proposal, ProposalSection } from '@faintward/contracts/proposals';
 import Button from '@mui/material/Button';
+import { formatNumber } from '../lib/format';
 import { useQuery } from '@tanstack/react-query';
 import { Link as RouterLink, Outlet, useLocation, useParams } from 'react-router-dom';
 import { paths } from '../app/paths';
@@ -123,13 +124,13 @@ function StateNote({ proposal }: { proposal: Proposal }) {
       return (
         <Note tone="good">
           {proposal.award
-            ? `Awarded ${proposal.award.hours} h, ${proposal.award.moonClass} time, ${proposal.award.standing}.${proposal.award.reason ? ` ${proposal.award.reason}` : ''}`
+            ? `Awarded ${formatNumber(proposal.award.hours, { decimals: 1 })} h, ${proposal.award.moonClass} time, ${proposal.award.standing}.${proposal.award.reason ? ` ${proposal.award.reason}` : ''}`
             : 'Awarded.'}
         </Note>
       );
     case 'declined':
-      return <Note tone="warning">Declined.{proposal.award?.reason ? ` ${proposal.award.reason}` : ''}</Note>;
+      return <Note>Declined.{proposal.award?.reason ? ` ${proposal.award.reason}` : ''}</Note>;
     case 'withdrawn':
-      return <Note tone="warning">Withdrawn. The committee does not see it.</Note>;
+      return <Note>Withdrawn. The committee does not see it.</Note>;
   }
 }

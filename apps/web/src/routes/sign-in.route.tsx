@@ -76,10 +76,10 @@ export function Component() {
                 Sign in
               </Button>
               <Stack direction="row" sx={{ justifyContent: 'space-between', flexWrap: 'wrap', gap: 1 }}>
-                <Link component={RouterLink} to={paths.forgottenPassword.to()}>
+                <Link underline="always" component={RouterLink} to={paths.forgottenPassword.to()}>
                   Forgotten password
                 </Link>
-                <Link component={RouterLink} to={paths.signUp.to()}>
+                <Link underline="always" component={RouterLink} to={paths.signUp.to()}>
                   Sign up
                 </Link>
               </Stack>
@@ -92,7 +92,7 @@ export function Component() {
             note={
               <>
                 Invented people of an invented observatory, one click away. Mail to them ends in the{' '}
-                <Link component={RouterLink} to={paths.mailbox.to()}>
+                <Link underline="always" component={RouterLink} to={paths.mailbox.to()}>
                   mailbox
                 </Link>
                 .

@@ -78,7 +78,7 @@ export function Component() {
             </Button>
             <span>
               Signed up already?{' '}
-              <Link component={RouterLink} to={paths.signIn.to()}>
+              <Link underline="always" component={RouterLink} to={paths.signIn.to()}>
                 Sign in
               </Link>
             </span>

@@ -94,37 +94,49 @@ export function LightBudget({
           tableLayout: 'fixed',
           borderCollapse: 'collapse',
           fontSize: '0.8125rem',
-          '& td, & th': { p: 0, height: rowHeight, whiteSpace: 'nowrap' },
+          '& td, & th': { p: 0, whiteSpace: 'nowrap' },
           '& th': { fontWeight: 400, textAlign: 'left' },
           '& thead th, & td': { textAlign: 'right', pl: 1.5 },
-          '& thead th': { color: 'text.secondary', height: 22 },
-          '& .bars': { pl: { xs: 1, sm: 2 }, textAlign: 'left', overflow: 'hidden' },
-          '& .step': { width: { xs: 50, sm: 64 } },
-          '& .total': { width: { xs: 58, sm: 76 } },
+          '& thead th': { color: 'text.secondary' },
+          '& .bars': { pl: { xs: 0, sm: 2 }, textAlign: 'left', overflow: 'hidden' },
+          '& .step': { width: { xs: 'auto', sm: 64 } },
+          '& .total': { width: { xs: 'auto', sm: 76 } },
+          // On a phone the bar stands below its name and numbers, as wide as the sheet.
+          '& tr': {
+            display: { xs: 'grid', sm: 'table-row' },
+            gridTemplateColumns: 'minmax(0, 1fr) 62px 62px',
+            pt: { xs: 0.75, sm: 0 },
+          },
+          '& td, & thead th, & tbody th': { height: { xs: 'auto', sm: rowHeight } },
+          '& th:first-of-type': { gridArea: '1 / 1' },
+          '& .step, & .total': { gridRow: 1 },
+          '& td.bars': { gridArea: '2 / 1 / 3 / -1' },
         }}
+        role="table"
       >
-        <thead>
-          <tr>
+        <thead role="rowgroup">
+          <tr role="row">
             <Box
               component="th"
               scope="col"
-              sx={{ textAlign: 'left !important', pl: '0 !important', width: { xs: '40%', sm: '36%' } }}
+              role="columnheader"
+              sx={{ textAlign: 'left !important', pl: '0 !important', width: { xs: 'auto', sm: '36%' } }}
             >
               from the source to the detector
             </Box>
             <td className="bars" aria-hidden="true">
               <div ref={box} />
             </td>
-            <th scope="col" className="step">
+            <th scope="col" role="columnheader" className="step">
               step
             </th>
-            <th scope="col" className="total">
+            <th scope="col" role="columnheader" className="total">
               total
               <span style={visuallyHidden}>, AB magnitude</span>
             </th>
           </tr>
         </thead>
-        <tbody>
+        <tbody role="rowgroup">
           {steps.map((step, index) => {
             const from = index === 0 ? step.totalMag : steps[index - 1]!.totalMag;
             const low = at(Math.min(from, step.totalMag));
@@ -132,8 +144,13 @@ export function LightBudget({
             const isBroken = breakAfter === index - 1 && index > 0;
             const middle = 0.21 * (width - 8) + 4;
             return (
-              <tr key={step.id}>
-                <Box component="th" scope="row" sx={{ whiteSpace: 'normal !important', lineHeight: 1.25 }}>
+              <tr key={step.id} role="row">
+                <Box
+                  component="th"
+                  scope="row"
+                  role="rowheader"
+                  sx={{ whiteSpace: 'normal !important', lineHeight: 1.25 }}
+                >
                   {step.formula || step.source ? (
                     <Explained
                       explanation={{
@@ -189,8 +206,12 @@ export function LightBudget({
                     )}
                   </svg>
                 </td>
-                <td>{index === 0 ? '' : formatNumber(step.deltaMag, { decimals: 2, signed: true })}</td>
-                <td style={{ fontWeight: 600 }}>{formatNumber(step.totalMag, { decimals: 2 })}</td>
+                <td role="cell" className="step">
+                  {index === 0 ? '' : formatNumber(step.deltaMag, { decimals: 2, signed: true })}
+                </td>
+                <td role="cell" className="total" style={{ fontWeight: 600 }}>
+                  {formatNumber(step.totalMag, { decimals: 2 })}
+                </td>
               </tr>
             );
           })}

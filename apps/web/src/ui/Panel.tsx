@@ -25,11 +25,18 @@ export function Panel({ title, note, actions, children, flush = false, sx }: Pan
       sx={[
         { bgcolor: 'background.paper', border: 1, borderColor: 'divider', borderRadius: '6px', minWidth: 0 },
         { p: flush ? 0 : padding },
+        // Tables run to the edge, their text stands under the heading.
+        flush
+          ? {
+              '& .MuiTableCell-root:first-of-type': { pl: padding },
+              '& .MuiTableCell-root:last-of-type': { pr: padding },
+            }
+          : {},
         ...(Array.isArray(sx) ? sx : [sx]),
       ]}
     >
       {(title || actions) && (
-        <Box sx={{ display: 'flex', gap: 2, alignItems: 'flex-start', mb: flush ? 0 : 1.5, p: flush ? padding : 0 }}>
+        <Box sx={{ display: 'flex', gap: 2, alignItems: 'flex-start', mb: flush ? 0 : 2, p: flush ? padding : 0 }}>
           <Box sx={{ flex: 1, minWidth: 0 }}>
             {title && (
               <Typography variant="h3" component="h2" id={id}>

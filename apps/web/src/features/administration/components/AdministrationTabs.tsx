@@ -1,7 +1,7 @@
-import Tab from '@mui/material/Tab';
-import Tabs from '@mui/material/Tabs';
-import { Link as RouterLink, useLocation } from 'react-router-dom';
+import Box from '@mui/material/Box';
+import { NavLink } from 'react-router-dom';
 import { paths } from '../../../app/paths';
+import { colour } from '../../../theme/theme';
 
 const pages = [
   { label: 'People and roles', to: paths.administrationPeople.to() },
@@ -11,30 +11,30 @@ const pages = [
 
 /** The pages of the administration, as links: each has its own address. */
 export function AdministrationTabs() {
-  const { pathname } = useLocation();
   return (
-    <nav aria-label="Administration">
-      <Tabs
-        value={pathname}
-        role="none"
-        variant="scrollable"
-        sx={{ mb: 2.5, borderBottom: 1, borderColor: 'divider' }}
-        slotProps={{ list: { role: 'list' } }}
-      >
-        {pages.map((page) => (
-          <Tab
-            key={page.to}
-            value={page.to}
-            label={page.label}
-            component={RouterLink}
-            to={page.to}
-            role="link"
-            aria-current={page.to === pathname ? 'page' : undefined}
-            aria-selected={undefined}
-            tabIndex={0}
-          />
-        ))}
-      </Tabs>
-    </nav>
+    <Box
+      component="nav"
+      aria-label="Administration"
+      sx={{ display: 'flex', overflowX: 'auto', gap: 3, mb: 2.5, borderBottom: 1, borderColor: 'divider' }}
+    >
+      {pages.map((page) => (
+        <Box
+          key={page.to}
+          component={NavLink}
+          to={page.to}
+          sx={{
+            py: 1.5,
+            color: 'text.secondary',
+            textDecoration: 'none',
+            whiteSpace: 'nowrap',
+            '&:hover': { color: 'text.primary' },
+            '&:focus-visible': { outlineOffset: -3 },
+            '&[aria-current]': { color: 'text.primary', fontWeight: 600, boxShadow: `inset 0 -2px 0 ${colour.accent}` },
+          }}
+        >
+          {page.label}
+        </Box>
+      ))}
+    </Box>
   );
 }

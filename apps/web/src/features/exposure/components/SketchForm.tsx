@@ -32,11 +32,11 @@ export function SketchForm(props: SketchFormProps) {
           name="cosmology"
           label="Cosmology"
           options={[
-            ['planck18', 'planck18'],
-            ['planck15', 'planck15'],
-            ['wmap9', 'wmap9'],
-            ['conv70', '70 / 0.3'],
-            ['ladder73', '73, local ladder'],
+            ['planck18', 'Planck 2018'],
+            ['planck15', 'Planck 2015'],
+            ['wmap9', 'WMAP nine-year'],
+            ['conv70', 'conventional 70 / 0.3'],
+            ['ladder73', 'distance ladder, H₀ 73'],
           ]}
         />
         <Choice
@@ -82,7 +82,7 @@ export function SketchForm(props: SketchFormProps) {
             <Field {...props} name="width" label="Velocity width" unit="km/s" />
           </>
         ) : (
-          <Field {...props} name="slope" label="Slope β" hint="f_λ ∝ λ^β; −2 is flat in AB" />
+          <Field {...props} name="slope" label="Slope β" hint="flux per wavelength ∝ λᵝ; −2 is flat in AB" />
         )}
         <Field {...props} name="magnification" label="Lensing magnification" hint="empty: none" />
         <Choice
@@ -210,7 +210,7 @@ export function SketchForm(props: SketchFormProps) {
 function Group({ title, children }: { title: string; children: ReactNode }) {
   return (
     <Box component="fieldset" sx={{ border: 0, p: 0, m: 0, minWidth: 0 }}>
-      <Typography component="legend" variant="h4" sx={{ p: 0, mb: 1.25 }}>
+      <Typography component="legend" variant="h4" sx={{ p: 0, mb: 1.75 }}>
         {title}
       </Typography>
       <Box sx={{ display: 'grid', gap: 1.75, gridTemplateColumns: 'repeat(auto-fill, minmax(140px, 1fr))' }}>

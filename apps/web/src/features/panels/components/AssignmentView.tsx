@@ -162,7 +162,7 @@ function ProposalsPanel({ panel }: { panel: PanelData }) {
                 </Typography>{' '}
                 <strong>{proposal.title}</strong>
                 <Typography variant="body2" color="textSecondary">
-                  {hoursText(proposal.requestedHours)} h
+                  {hoursText(proposal.requestedHours, ' h')}
                 </Typography>
               </Box>
               <Stack direction="row" sx={{ gap: 0.75, flexWrap: 'wrap' }}>

@@ -48,7 +48,7 @@ export function AwardDialog({ panelId, row, onClose }: { panelId: string; row: R
           <Typography sx={{ mb: 2 }}>
             {row.title}
             <Typography component="span" color="textSecondary" sx={{ display: 'block' }}>
-              asked for {hoursText(row.requestedHours)} h
+              asked for {hoursText(row.requestedHours, ' h')}
             </Typography>
           </Typography>
           <Stack
@@ -57,7 +57,14 @@ export function AwardDialog({ panelId, row, onClose }: { panelId: string; row: R
             sx={{ border: 0, p: 0, m: 0, gap: 2 }}
           >
             <Box sx={{ display: 'grid', gridTemplateColumns: { xs: '1fr', sm: '1fr 1fr 1fr' }, gap: 2 }}>
-              <NumberField control={form.control} name="hours" label="Hours" unit="h" autoFocus />
+              <NumberField
+                control={form.control}
+                name="hours"
+                label="Hours"
+                unit="h"
+                helperText="0 declines the proposal"
+                autoFocus
+              />
               <SelectField
                 control={form.control}
                 name="moonClass"

@@ -95,9 +95,10 @@ export function CumulatedHours({ row, available }: { row: RankingRow; available:
   );
 }
 
-export function hoursText(hours: HoursByMoonClass): string {
+/** "13.7 dark, 2.0 grey"; with the unit " h" where no table head says it. */
+export function hoursText(hours: HoursByMoonClass, unit: '' | ' h' = ''): string {
   const parts = classes
     .filter((moonClass) => hours[moonClass] > 0)
-    .map((moonClass) => `${formatNumber(hours[moonClass], { decimals: 1 })} ${moonClass}`);
-  return parts.length > 0 ? parts.join(', ') : '0';
+    .map((moonClass) => `${formatNumber(hours[moonClass], { decimals: 1 })}${unit} ${moonClass}`);
+  return parts.length > 0 ? parts.join(', ') : `0${unit}`;
 }

@@ -130,7 +130,19 @@ export function RankingGrid({ ranking }: { ranking: Ranking }) {
               ? 'cut-below'
               : '',
           sx: {
-            '& .cut-below': { boxShadow: 'inset 0 -3px 0 var(--fw-palette-faintward-accent)' },
+            // Drawn over the cells, whose own ground would hide it.
+            '& .cut-below': { position: 'relative' },
+            '& .cut-below::after': {
+              content: '""',
+              position: 'absolute',
+              left: 0,
+              right: 0,
+              bottom: -1,
+              height: '3px',
+              bgcolor: 'faintward.accent',
+              zIndex: 1,
+              pointerEvents: 'none',
+            },
             '& .MuiDataGrid-cell': { display: 'flex', alignItems: 'center' },
           },
         }}
@@ -144,6 +156,6 @@ export function RankingGrid({ ranking }: { ranking: Ranking }) {
 
 function awardText(row: RankingRow): string {
   if (!row.award) return '';
-  if (row.award.hours === 0) return 'no hours';
+  if (row.award.hours === 0) return 'declined';
   return `${formatNumber(row.award.hours, { decimals: 1 })} h ${row.award.moonClass}, ${row.award.standing}`;
 }

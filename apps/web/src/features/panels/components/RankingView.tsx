@@ -134,8 +134,8 @@ function ReviewersPanel({ ranking }: { ranking: Ranking }) {
                 explanation={{
                   title: 'Leniency',
                   meaning:
-                    "The reviewer's mean minus the mean of all scores of the panel. Reviewers read different proposals, so part of it may be what they were given.",
-                  formula: 'mean of own scores − mean of all scores',
+                    'How much higher this reviewer scores than the others do the same proposals: the offset in a model that gives each proposal a quality and each reviewer an offset. Unknown where too few proposals are shared to tell.',
+                  formula: 'score = quality of the proposal + leniency of the reviewer, fitted by least squares',
                 }}
               >
                 Leniency

@@ -130,7 +130,7 @@ export function CaseSectionEditor({
         maxRows={28}
         fullWidth
         error={isOver}
-        helperText={`${formatNumber(words)} of ${formatNumber(section.wordLimit)} words${isOver ? ': too long to submit' : ''}`}
+        helperText={`${formatNumber(words, { decimals: 0 })} of ${formatNumber(section.wordLimit, { decimals: 0 })} words${isOver ? ': too long to submit' : ''}`}
         slotProps={{
           htmlInput: { 'aria-label': section.title, 'aria-describedby': `${id}-guidance`, style: { lineHeight: 1.55 } },
         }}

@@ -98,7 +98,7 @@ function Entry({ row }: { row: ReadingListEntry }) {
         {stateWords[row.state]}
       </Typography>
       <Box sx={{ textAlign: 'right', fontVariantNumeric: 'tabular-nums', display: { xs: 'none', md: 'block' } }}>
-        {row.overallScore === null ? '—' : formatNumber(row.overallScore, { decimals: 1 })}
+        {row.overallScore === null ? '—' : `${formatNumber(row.overallScore, { decimals: 1 })} of 10`}
       </Box>
     </Box>
   );

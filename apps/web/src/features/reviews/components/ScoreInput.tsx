@@ -80,7 +80,12 @@ export function ScoreInput({
             marks={marks}
             disabled={disabled}
             aria-label={`${criterion.title}: score on the scale`}
-            sx={{ opacity: score === undefined ? 0.5 : 1, py: 1 }}
+            // Without a score the thumb is pale; the scale stays readable.
+            sx={{
+              py: 1,
+              '& .MuiSlider-thumb, & .MuiSlider-track, & .MuiSlider-rail': score === undefined ? { opacity: 0.4 } : {},
+              '& .MuiSlider-markLabel': { color: 'text.secondary' },
+            }}
           />
         </Box>
       </Stack>

@@ -117,7 +117,9 @@ function TargetsTable({ targets, observations }: { targets: readonly Target[]; o
                   <TableCell align="right">
                     {index === 0 && formatNumber(target.computed.luminosityDistanceMpc, { decimals: 0 })}
                   </TableCell>
-                  <TableCell>{observation ? `${observation.instrumentName}, ${observation.modeName}` : '—'}</TableCell>
+                  <TableCell sx={{ whiteSpace: 'nowrap' }}>
+                    {observation ? `${observation.instrumentName}, ${observation.modeName}` : '—'}
+                  </TableCell>
                   <TableCell align="right">
                     {observation?.estimate?.outcome === 'feasible'
                       ? formatNumber(observation.estimate.signalToNoise, { decimals: 1 })

@@ -82,7 +82,7 @@ export function CriteriaEditor({ form }: { form: UseFormReturn<SemesterFormInput
             </Box>
             <Box
               sx={{
-                pt: 1.5,
+                pt: 2,
                 display: 'grid',
                 gridTemplateColumns: { xs: 'minmax(0, 1fr)', md: 'repeat(3, minmax(0, 1fr))' },
                 gap: 1.5,

@@ -45,12 +45,10 @@ export function HoursEditor({
         const name = nameOf(field.telescopeId);
         return (
           <Box
-            component="fieldset"
+            role="group"
+            aria-label={name}
             key={field.id}
             sx={{
-              border: 0,
-              p: 0,
-              m: 0,
               minWidth: 0,
               display: 'grid',
               gridTemplateColumns: {
@@ -61,9 +59,6 @@ export function HoursEditor({
               alignItems: 'center',
             }}
           >
-            <Box component="legend" sx={{ position: 'absolute', width: 1, height: 1, overflow: 'hidden' }}>
-              {name}
-            </Box>
             <Typography aria-hidden="true" sx={{ fontWeight: 600, gridColumn: { xs: '1 / -1', md: 'auto' } }}>
               {name}
             </Typography>

@@ -47,7 +47,8 @@ export function SemesterFacts({ semester }: { semester: Semester }) {
         )}
         {semester.decidedAt ? (
           <>
-            , decided <TimeDisplay instant={semester.decidedAt} siteTimeZone={semester.siteTimeZone} />
+            <br />
+            decided <TimeDisplay instant={semester.decidedAt} siteTimeZone={semester.siteTimeZone} />
           </>
         ) : (
           ''
@@ -69,7 +70,10 @@ export function SemesterFacts({ semester }: { semester: Semester }) {
       <dd>
         {semester.criteria.map((criterion) => (
           <div key={criterion.criterionId}>
-            {criterion.title}, weight {formatNumber(criterion.weight, { significant: 2 })}
+            {criterion.title}{' '}
+            <Box component="span" sx={{ color: 'text.secondary' }}>
+              · weight {criterion.weight}
+            </Box>
           </div>
         ))}
       </dd>
