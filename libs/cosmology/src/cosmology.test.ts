@@ -468,6 +468,13 @@ describe('parameters', () => {
     expect(() => deSitter.redshiftAtAgeGyr(5)).toThrow(NoSolutionError);
   });
 
+  it.each([-1.2, -3.29, -5])('with fading dark energy alone, w = %d, never began', (w0) => {
+    const phantom = createCosmology({ ...base, omegaMatter: 0, w0 });
+    expect(phantom.ageGyr(0)).toBe(Infinity);
+    expect(phantom.redshiftAtLookbackTimeGyr(phantom.lookbackTimeGyr(2))).toBeCloseTo(2, 9);
+    expect(distanceRows(phantom, [2])[0]?.ageGyr).toBeUndefined();
+  });
+
   it('with dark energy alone of w = −0.9 have the age 2/(3(1+w)) Hubble times', () => {
     const model = createCosmology({ ...base, omegaMatter: 0, w0: -0.9 });
     expect(relative(model.ageGyr(0), model.hubbleTimeGyr * (2 / 0.3))).toBeLessThan(1e-12);

@@ -260,7 +260,7 @@ export class Cosmology {
     return this.hubbleTimeGyr * timeBetween(this.#expansion, 0, Math.log1p(checkRedshift(redshift)));
   }
 
-  /** Time from the big bang to that redshift, Gyr; Infinity in a model without a beginning (empty but for a Λ). */
+  /** Time from the big bang to that redshift, Gyr; Infinity in a model without a beginning (empty but for a Λ or fading dark energy). */
   ageGyr(redshift: number): number {
     return this.hubbleTimeGyr * timeSinceBigBang(this.#expansion, Math.log1p(checkRedshift(redshift)));
   }

@@ -36,6 +36,11 @@ export function timeBetween(expansion: Expansion, x1: number, x2: number): numbe
 const LAST_LOG = 170;
 /** A rate that still grows slower than this with ln(1 + z) will not make the age finite. */
 const SLOWEST_GROWTH = 1e-9;
+/**
+ * A rate below this is that of dark energy which fades into the past with nothing behind it: the least density that counts
+ * would keep the rate higher. The expansion never began, and squares of such a rate soon lose their digits.
+ */
+const NEVER_BEGAN_RATE = 1e-50;
 
 /**
  * Time from the big bang to x = ln(1 + z), in units of the Hubble time; Infinity if there was no beginning.
@@ -49,6 +54,7 @@ export function timeSinceBigBang(expansion: Expansion, start: number): number {
   let change = Number.NaN;
   let rate = expansion.rate(Math.exp(start));
   for (let x = start; x + 1 < LAST_LOG; x++) {
+    if (rate < NEVER_BEGAN_RATE) return Infinity;
     const slopeBefore = slope;
     const changeBefore = change;
     total += timeBetween(expansion, x, x + 1);
