@@ -18,8 +18,8 @@ export default defineConfig({
   outputDir: '../../test-results',
   workers: 1,
   forbidOnly: true,
-  timeout: 240_000,
-  expect: { timeout: 15_000 },
+  timeout: 600_000,
+  expect: { timeout: 45_000 },
   reporter: [['list'], ['./counts-reporter.ts']],
   use: {
     baseURL: `http://127.0.0.1:${port}`,
@@ -45,6 +45,7 @@ export default defineConfig({
     cwd: '../..',
     env: { PORT: String(port), DATA_DIR: 'memory://', DEMO: 'on', RATE_LIMITS: 'off' },
     url: `http://127.0.0.1:${port}/api/v1/health/ready`,
+    reuseExistingServer: process.env['E2E_REUSE'] === '1',
     timeout: 180_000,
     stdout: 'ignore',
     stderr: 'pipe',

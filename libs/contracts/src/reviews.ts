@@ -68,6 +68,10 @@ export const Review = z
   .meta({ id: 'Review' });
 export type Review = z.infer<typeof Review>;
 
+/** What saving answers: all but the proposal's content, which does not change under a reviewer's hands and may be large. */
+export const SavedReview = Review.omit({ content: true }).meta({ id: 'SavedReview' });
+export type SavedReview = z.infer<typeof SavedReview>;
+
 export const ReviewInput = z
   .object({
     answers: z.record(z.string().max(40), ScoreAnswer.nullable()),

@@ -58,7 +58,7 @@ function NewProposalForm({ calls }: { calls: readonly { value: string; label: st
   return (
     <form onSubmit={(event) => void submit(event)} noValidate>
       <LeaveGuard when={form.formState.isDirty} what="The title" />
-      <Stack component="fieldset" disabled={create.isPending} sx={{ border: 0, p: 0, m: 0, gap: 2.5 }}>
+      <Stack component="fieldset" disabled={create.isPending} sx={{ border: 0, p: 0, m: 0, minWidth: 0, gap: 2.5 }}>
         <SelectField control={form.control} name="semesterId" label="Call" options={calls} fullWidth />
         <TextField
           control={form.control}

@@ -1,5 +1,5 @@
 import { Acknowledgement, Id } from '@faintward/contracts/common';
-import { ConflictDeclaration, ReadingList, Review, ReviewInput } from '@faintward/contracts/reviews';
+import { ConflictDeclaration, ReadingList, Review, ReviewInput, SavedReview } from '@faintward/contracts/reviews';
 import { Body, Controller, Get, Param, Post, Put } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
 import type { z } from 'zod';
@@ -30,13 +30,13 @@ export class ReviewsController {
 
   @Put('reviews/:proposalId')
   @Requires('review.write')
-  @Answers(Review)
+  @Answers(SavedReview)
   save(
     @CurrentPerson() actor: Actor,
     @Param('proposalId', { schema: Id }) proposalId: string,
     @IfMatch() version: number,
     @Body({ schema: ReviewInput }) input: ReviewInput,
-  ): Promise<Review> {
+  ): Promise<SavedReview> {
     return this.reviews.save(actor, proposalId, version, input);
   }
 

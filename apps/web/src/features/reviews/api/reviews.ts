@@ -1,5 +1,11 @@
 import { Acknowledgement } from '@faintward/contracts/common';
-import { ReadingList, Review, type ConflictDeclaration, type ReviewInput } from '@faintward/contracts/reviews';
+import {
+  ReadingList,
+  Review,
+  SavedReview,
+  type ConflictDeclaration,
+  type ReviewInput,
+} from '@faintward/contracts/reviews';
 import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { api } from '../../../lib/api';
 
@@ -23,9 +29,9 @@ export function useSaveReview(proposalId: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: ({ version, input }: { version: number; input: ReviewInput }) =>
-      api({ method: 'PUT', path: `/reviews/${proposalId}`, body: input, ifMatch: version, schema: Review }),
-    onSuccess: (review) => {
-      client.setQueryData(reviewQueries.detail(proposalId).queryKey, review);
+      api({ method: 'PUT', path: `/reviews/${proposalId}`, body: input, ifMatch: version, schema: SavedReview }),
+    onSuccess: (saved) => {
+      client.setQueryData(reviewQueries.detail(proposalId).queryKey, (old) => (old ? { ...old, ...saved } : old));
       return client.invalidateQueries({ queryKey: reviewQueries.readingList().queryKey });
     },
   });

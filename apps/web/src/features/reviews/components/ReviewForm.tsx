@@ -26,7 +26,11 @@ interface Typed {
 export function ReviewForm({ review }: { review: Review }) {
   const save = useSaveReview(review.proposalId);
   const version = useRef(review.version);
-  const [typed, setTyped] = useState<Typed>(review);
+  const [typed, setTyped] = useState<Typed>({
+    answers: review.answers,
+    commentToPrincipal: review.commentToPrincipal,
+    confidentialComment: review.confidentialComment,
+  });
   const autosave = useAutosave<ReviewInput>({
     delayMs: 700,
     save: async (input) => {
