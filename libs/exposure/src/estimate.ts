@@ -224,9 +224,7 @@ function planSeries(
   );
   const most = input.limits?.maximumExposureCount ?? MAXIMUM_EXPOSURE_COUNT.value;
   if (series.exposureCount > most) {
-    const needed = Number.isFinite(series.exposureCount)
-      ? inWords(series.exposureCount)
-      : 'more than can be counted';
+    const needed = Number.isFinite(series.exposureCount) ? inWords(series.exposureCount) : 'more than can be counted';
     return {
       code: 'tooManyExposures',
       message: `Exposures needed: ${needed}, of ${inWords(series.exposureSeconds)} s each; at most ${most} are allowed.`,
