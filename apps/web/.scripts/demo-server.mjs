@@ -77,7 +77,7 @@ export async function openPage(page, address) {
   await page.goto(address, { waitUntil: 'networkidle', timeout: 60_000 });
   await page.waitForFunction(
     () =>
-      !globalThis.document.querySelector('main [aria-busy=true]') &&
+      !globalThis.document.querySelector('main [aria-busy=true], main .MuiSkeleton-root') &&
       !/^(One moment)?$/.test(globalThis.document.querySelector('h1')?.textContent ?? '') &&
       globalThis.document.fonts.status === 'loaded',
     undefined,
