@@ -32,7 +32,8 @@ export default defineConfig({
           include: ['apps/web/src/**/*.test.{ts,tsx}'],
           environment: 'jsdom',
           setupFiles: ['apps/web/src/testing/setup.ts'],
-          testTimeout: 20_000,
+          // Generous, because a loaded machine is no failure.
+          testTimeout: 90_000,
         },
       },
     ],

@@ -1,7 +1,10 @@
 import { SESSION_HINT_COOKIE } from '@faintward/contracts/accounts';
 import '@testing-library/jest-dom/vitest';
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterEach, beforeEach, vi } from 'vitest';
+
+// How long a find waits: a loaded machine is no failure.
+configure({ asyncUtilTimeout: 20_000 });
 
 beforeEach(() => {
   // No test reaches a network: each says what the server answers, and an unexpected request fails.
