@@ -18,7 +18,7 @@ export default defineConfig({
   outputDir: '../../test-results',
   workers: 1,
   forbidOnly: true,
-  timeout: 600_000,
+  timeout: 1_500_000,
   expect: { timeout: 45_000 },
   reporter: [['list'], ['./counts-reporter.ts']],
   use: {
