@@ -118,7 +118,7 @@ export const screenPaths = {
 
 export const chromium = {
   executablePath: process.env.CHROMIUM ?? (existsSync('/usr/bin/chromium') ? '/usr/bin/chromium' : undefined),
-  args: ['--no-sandbox', '--disable-gpu', '--disable-background-networking'],
+  args: ['--no-sandbox', '--disable-gpu', '--disable-dev-shm-usage', '--disable-background-networking'],
 };
 
 function run(command, parameters) {
