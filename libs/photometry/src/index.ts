@@ -88,3 +88,5 @@ export {
   sersicEnclosedFraction,
 } from './sersic.js';
 export { lensingMag } from './lensing.js';
+export { createInoue2014, createMadau1995, forestNodesNm } from './intergalactic.js';
+export type { IntergalacticMedium, IntergalacticTable, NodeTransmission } from './intergalactic.js';
