@@ -90,3 +90,30 @@ export {
 export { lensingMag } from './lensing.js';
 export { createInoue2014, createMadau1995, forestNodesNm } from './intergalactic.js';
 export type { IntergalacticMedium, IntergalacticTable, NodeTransmission } from './intergalactic.js';
+export {
+  REST_GRID_HIGH_NM,
+  REST_GRID_LOW_NM,
+  REST_GRID_STEP,
+  isBelow,
+  limitAt,
+  restGrid,
+  sampleOn,
+  type Side,
+} from './rest-grid.js';
+export {
+  BOLTZMANN_CONSTANT,
+  NARROW_LINE_WIDTH_KM_S,
+  SOURCE_TEMPLATE_FILE_NAMES,
+  restSpectrum,
+  sourceTemplates,
+  supernovaPhaseMag,
+} from './source-spectra.js';
+export type {
+  ReferenceFile,
+  RestLine,
+  RestSpectrum,
+  SourceKind,
+  SourceTemplateFiles,
+  SourceTemplates,
+  SpectrumCaution,
+} from './source-spectra.js';
