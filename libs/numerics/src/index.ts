@@ -9,3 +9,6 @@ export { intervalOf, linearInterpolant, monotoneCubicInterpolant } from './inter
 export type { Interpolant } from './interpolation.js';
 export { chebyshevFit, chebyshevIntegral, chebyshevValue } from './chebyshev.js';
 export type { ChebyshevSeries } from './chebyshev.js';
+export { normalCdf, normalDensity, normalQuantile } from './normal.js';
+export { latinHypercube, randomStream, splitmix64, xoshiro128StarStar } from './random.js';
+export type { RandomStream } from './random.js';

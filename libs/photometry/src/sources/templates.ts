@@ -10,7 +10,7 @@ export interface ReferenceFile<Data> {
     readonly licence: string;
     readonly units: string;
     readonly provenance: Provenance;
-    readonly notes: readonly string[];
+    readonly notes: string;
   };
   readonly data: Data;
 }
