@@ -9,5 +9,6 @@ export * from './people.js';
 export * from './proposals.js';
 export * from './reviews.js';
 export * from './semesters.js';
+export * from './spectra.js';
 export * from './submissions.js';
 export * from './targets.js';

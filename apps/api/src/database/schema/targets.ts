@@ -1,4 +1,4 @@
-import type { Extent, Light, TargetComputed } from '@faintward/contracts';
+import type { Extent, Light, RedshiftKind, RedshiftUncertainty, TargetComputed } from '@faintward/contracts';
 import { doublePrecision, index, integer, jsonb, pgTable, text, uuid } from 'drizzle-orm/pg-core';
 import { createdAt, primaryId, updatedAt, version } from './columns.js';
 import { proposals } from './proposals.js';
@@ -16,7 +16,8 @@ export const targets = pgTable(
     rightAscensionDeg: doublePrecision('right_ascension_deg').notNull(),
     declinationDeg: doublePrecision('declination_deg').notNull(),
     redshift: doublePrecision('redshift').notNull(),
-    redshiftSigma: doublePrecision('redshift_sigma'),
+    redshiftUncertainty: jsonb('redshift_uncertainty').$type<RedshiftUncertainty>(),
+    redshiftKind: text('redshift_kind').$type<RedshiftKind>().notNull().default('spectroscopic'),
     light: jsonb('light').$type<Light>(),
     extent: jsonb('extent').$type<Extent>().notNull(),
     notes: text('notes').notNull().default(''),
