@@ -6,7 +6,6 @@ import { ApiError } from '../lib/api';
 import { renderPart } from '../testing/renderRoute';
 import { CosmicTimeStrip } from './CosmicTimeStrip';
 import { DataTable, type DataTableProps, type TableColumn } from './DataTable';
-import { budgetPositions, LightBudget } from './LightBudget';
 import { Loaded, type QueryState } from './PageStates';
 import { Quantity } from './Quantity';
 import { RedshiftValue } from './RedshiftValue';
@@ -141,33 +140,6 @@ describe('numbers', () => {
   it('a redshift stands beside its square, with its uncertainty', () => {
     const { container } = renderPart(<RedshiftValue redshift={7.1234} uncertainty={0.02} decimals={2} />);
     expect(container).toHaveTextContent('7.12± 0.02');
-  });
-});
-
-describe('the light budget', () => {
-  const steps = [
-    { id: 'a', title: 'Absolute magnitude', deltaMag: -21, totalMag: -21 },
-    { id: 'b', title: 'Distance modulus', deltaMag: 49.28, totalMag: 28.28, formula: 'μ', source: 'Hogg' },
-    { id: 'c', title: 'Band shift', deltaMag: -2.27, totalMag: 26.01 },
-  ];
-  it('breaks the axis inside the one long step and keeps the order of totals on both sides', () => {
-    const { share, breakAfter } = budgetPositions([-21, 28.28, 26.01, 26.03]);
-    expect(breakAfter).toBe(0);
-    expect(share(-21)).toBeLessThan(0.2);
-    expect(share(26.01)).toBeGreaterThan(0.2);
-    expect(share(26.01)).toBeLessThan(share(26.03));
-    expect(share(26.03)).toBeLessThan(share(28.28));
-    expect(share(28.28)).toBeLessThanOrEqual(1);
-  });
-  it('does not break without a long step', () => {
-    expect(budgetPositions([24, 24.2, 25.5]).breakAfter).toBeUndefined();
-  });
-  it('is a table: signed steps, running totals, each step open to its source', async () => {
-    renderPart(<LightBudget steps={steps} />);
-    expect(screen.getByRole('row', { name: /Distance modulus \+49\.28 28\.28/ })).toBeVisible();
-    expect(screen.getByRole('row', { name: /Band shift −2\.27 26\.01/ })).toBeVisible();
-    await userEvent.click(screen.getByRole('button', { name: 'Distance modulus' }));
-    expect(await screen.findByRole('dialog')).toHaveTextContent('Source: Hogg');
   });
 });
 

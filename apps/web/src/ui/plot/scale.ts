@@ -35,7 +35,7 @@ export function logTicks(low: number, high: number, count: number): number[] {
 }
 
 /**
- * A linear or logarithmic axis. Values outside the domain are carried on; a logarithmic axis puts values ≤ 0 at NaN,
+ * A linear or logarithmic axis, turned round where the domain descends. Values outside the domain are carried on; a logarithmic axis puts values ≤ 0 at NaN,
  * which the plot leaves out.
  */
 export function makeScale(
@@ -49,7 +49,7 @@ export function makeScale(
   const span = transform(domain[1]) - low || 1;
   const scale = (value: number) => range[0] + ((transform(value) - low) / span) * (range[1] - range[0]);
   return Object.assign(scale, {
-    ticks: (kind === 'log' ? logTicks : linearTicks)(domain[0], domain[1], tickCount),
+    ticks: (kind === 'log' ? logTicks : linearTicks)(Math.min(...domain), Math.max(...domain), tickCount),
     domain,
   });
 }
