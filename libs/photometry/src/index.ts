@@ -117,3 +117,48 @@ export type {
   SourceTemplates,
   SpectrumCaution,
 } from './source-spectra.js';
+
+export { boxCurve, curveValueAt, sampledCurve } from './sampled-curve.js';
+export type { SampledCurve } from './sampled-curve.js';
+export {
+  abMagnitudeAt,
+  abMagnitudeOfPhotons,
+  fluxPerNmOfAbMagnitude,
+  fluxPerNmToJy,
+  linePhotonIntegral,
+  photonIntegral,
+  photonsOfAbMagnitude,
+  responseOf,
+  responseShare,
+  syntheticAbMagnitude,
+} from './synthetic.js';
+export type { Response } from './synthetic.js';
+export { Ledger, ledgerInput } from './ledger.js';
+export type { LedgerInput, LedgerStage, LedgerStep, StepText } from './ledger.js';
+export type * from './source-light.js';
+export { LIGHT_STEPS } from './light-steps.js';
+export type { LightStepId } from './light-steps.js';
+export { arrivingLight } from './arriving-light.js';
+export type { ArrivingLight } from './arriving-light.js';
+export { ArrivingContinuum, DARK_TRANSMISSION } from './arriving-continuum.js';
+export type { LightCaution } from './arriving-continuum.js';
+export { ArrivingLine } from './arriving-line.js';
+export { drawnSpectrum } from './arriving-spectrum.js';
+export type { DrawnSpectrum } from './arriving-spectrum.js';
+export { quantileOf, sampleLight } from './light-uncertainty.js';
+export type { LightSamples, LightSampling } from './light-uncertainty.js';
+export {
+  DUST_LAWS,
+  TOTAL_TO_SELECTIVE_RANGE,
+  TRUE_PER_SFD_COLOUR_EXCESS,
+  attenuationMag,
+  attenuationOnNodes,
+  attenuationPerVisual,
+  defaultTotalToSelective,
+  galacticAttenuationMag,
+  isDustLawValidAt,
+  trueColourExcess,
+} from './dust.js';
+export type { ColourExcessScale, DustLaw, DustLawDescription } from './dust.js';
+export { HIGHEST_REDSHIFT, redshiftDistribution } from './redshift-distribution.js';
+export type { RedshiftDistribution, RedshiftPeak, RedshiftUncertainty } from './redshift-distribution.js';
