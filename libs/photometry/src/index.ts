@@ -104,6 +104,7 @@ export {
   BOLTZMANN_CONSTANT,
   NARROW_LINE_WIDTH_KM_S,
   SOURCE_TEMPLATE_FILE_NAMES,
+  powerLawSpectrum,
   restSpectrum,
   sourceTemplates,
   supernovaPhaseMag,
@@ -124,7 +125,8 @@ export {
   abMagnitudeAt,
   abMagnitudeOfPhotons,
   fluxPerNmOfAbMagnitude,
-  fluxPerNmToJy,
+  frequencyIntegral,
+  janskyOfFrequency,
   linePhotonIntegral,
   photonIntegral,
   photonsOfAbMagnitude,
@@ -162,3 +164,23 @@ export {
 export type { ColourExcessScale, DustLaw, DustLawDescription } from './dust.js';
 export { HIGHEST_REDSHIFT, redshiftDistribution } from './redshift-distribution.js';
 export type { RedshiftDistribution, RedshiftPeak, RedshiftUncertainty } from './redshift-distribution.js';
+export { typicalValuesAt } from './suggestions.js';
+export type { SuggestionOptions, TypicalValue, TypicalValueId } from './suggestions.js';
+export {
+  TYPICAL_VALUES_FILE_NAME,
+  brighterThanPerMpc3,
+  supernovaIaPeakMagnitude,
+  typicalSizeKpc,
+  typicalUvMagnitude,
+  typicalUvSlope,
+} from './typical-values.js';
+export type {
+  DerivedWith,
+  SizeDependence,
+  SizeRelationId,
+  TypicalUvMagnitude,
+  TypicalValues,
+  TypicalValuesFile,
+} from './typical-values.js';
+export { halfLightRadiusAfterSeeing, imageRegime } from './seeing-size.js';
+export type { ImageRegime } from './seeing-size.js';
