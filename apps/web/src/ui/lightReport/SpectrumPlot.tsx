@@ -1,0 +1,184 @@
+import type { BandId } from '@faintward/contracts/light';
+import type { BandLight, LightReport, LightSpectrum, ObservedLine } from '@faintward/contracts/light-report';
+import Box from '@mui/material/Box';
+import ToggleButton from '@mui/material/ToggleButton';
+import ToggleButtonGroup from '@mui/material/ToggleButtonGroup';
+import { useMemo, useState } from 'react';
+import { formatNumber } from '../../lib/format';
+import { PlotFigure, type PlotTable } from '../plot/PlotFigure';
+import { makeScale } from '../plot/scale';
+import { useWidth } from '../plot/useWidth';
+import { BandSpans } from './BandSpans';
+import { SpectrumDrawing, spectrumMargin } from './SpectrumDrawing';
+import { clipCurve, fluxUnit, wavelengthRange, type RangeId } from './spectrum';
+
+export interface SpectrumPlotProps {
+  spectrum: LightSpectrum;
+  bands: readonly BandLight[];
+  lines: readonly ObservedLine[];
+  atmosphere: LightReport['atmosphere'];
+  /** The band of the ledger. */
+  bandId: BandId | null;
+  onBandChange: (bandId: BandId) => void;
+}
+
+/** The light as it arrives above the atmosphere, with bands, lines and what the atmosphere lets through. */
+export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBandChange }: SpectrumPlotProps) {
+  const [box, width] = useWidth(760);
+  const [rangeId, setRangeId] = useState<RangeId>('all');
+  const [quantity, setQuantity] = useState<'flux' | 'magnitude'>('flux');
+  const [kind, setKind] = useState<'log' | 'linear'>('log');
+
+  const shownRange: RangeId = rangeId === 'band' && bandId === null ? 'all' : rangeId;
+  const range = useMemo(
+    () => wavelengthRange(shownRange, spectrum, bands, atmosphere, bandId),
+    [shownRange, spectrum, bands, atmosphere, bandId],
+  );
+  const arriving = useMemo(() => clipCurve(spectrum.wavelengthsNm, spectrum.fluxDensitiesJy, range), [spectrum, range]);
+  const unabsorbed = useMemo(
+    () => clipCurve(spectrum.wavelengthsNm, spectrum.unabsorbedFluxDensitiesJy, range),
+    [spectrum, range],
+  );
+  const x = useMemo(
+    () => makeScale(kind, range, [spectrumMargin.left, width - spectrumMargin.right], 5),
+    [kind, range, width],
+  );
+  const description = `${spectrum.label}, ${micron(range[0])} to ${micron(range[1])} µm observed: ${bandsInWords(bands)}`;
+
+  return (
+    <PlotFigure
+      title="Spectrum above the atmosphere"
+      note={
+        <>
+          {spectrum.label}. Choose a band to put it into the light budget.
+          {(range[0] < spectrum.validLowNm || range[1] > spectrum.validHighNm) &&
+            ` Nothing is drawn outside ${micron(spectrum.validLowNm)} to ${micron(spectrum.validHighNm)} µm, where this spectrum says nothing.`}
+        </>
+      }
+      description={description}
+      table={tableOf(spectrum)}
+      fileName="spectrum.csv"
+      box={box}
+      actions={
+        <>
+          <Switch
+            label="Wavelengths shown"
+            value={shownRange}
+            onChange={setRangeId}
+            options={[
+              ['all', 'All'],
+              ['optical', 'Optical'],
+              ['nearInfrared', 'Near infrared'],
+              ...(bandId ? [['band', `Around ${bandId}`] as const] : []),
+            ]}
+          />
+          <Switch
+            label="Flux axis"
+            value={quantity}
+            onChange={setQuantity}
+            options={[
+              ['flux', 'flux'],
+              ['magnitude', 'AB'],
+            ]}
+          />
+          <Switch
+            label="Wavelength axis"
+            value={kind}
+            onChange={setKind}
+            options={[
+              ['log', 'log λ'],
+              ['linear', 'linear λ'],
+            ]}
+          />
+        </>
+      }
+    >
+      <Box sx={{ position: 'relative' }}>
+        <BandSpans
+          bands={bands}
+          at={x}
+          left={spectrumMargin.left}
+          right={width - spectrumMargin.right}
+          chosen={bandId}
+          onChoose={onBandChange}
+        />
+        <SpectrumDrawing
+          width={width}
+          x={x}
+          kind={kind}
+          range={range}
+          quantity={quantity}
+          arriving={arriving}
+          unabsorbed={unabsorbed}
+          band={bands.find((one) => one.bandId === bandId)}
+          lines={lines}
+          atmosphere={atmosphere}
+          description={description}
+        />
+      </Box>
+    </PlotFigure>
+  );
+}
+
+/** A choice of one among few, beside a picture. */
+export function Switch<Value extends string>({
+  label,
+  value,
+  options,
+  onChange,
+}: {
+  label: string;
+  value: Value;
+  options: readonly (readonly [Value, string])[];
+  onChange: (value: Value) => void;
+}) {
+  return (
+    <ToggleButtonGroup
+      exclusive
+      size="small"
+      aria-label={label}
+      value={value}
+      onChange={(_event, next: Value | null) => next !== null && onChange(next)}
+      sx={{ '& .MuiToggleButton-root': { textTransform: 'none', py: 0.25, px: 1.25, fontSize: '0.8125rem' } }}
+    >
+      {options.map(([option, text]) => (
+        <ToggleButton key={option} value={option}>
+          {text}
+        </ToggleButton>
+      ))}
+    </ToggleButtonGroup>
+  );
+}
+
+function micron(nm: number): string {
+  return formatNumber(nm / 1000, { significant: 3 });
+}
+
+function bandsInWords(bands: readonly BandLight[]): string {
+  const dark = bands.filter((band) => band.magnitudeAb === null);
+  const bright = bands.filter((band) => band.magnitudeAb !== null);
+  const brightest = bright.toSorted((a, b) => a.magnitudeAb! - b.magnitudeAb!)[0];
+  return [
+    brightest
+      ? `brightest in ${brightest.label}, ${formatNumber(brightest.magnitudeAb, { decimals: 2 })} AB`
+      : 'no band receives light',
+    dark.length > 0 && brightest ? `no light in ${dark.map((band) => band.label).join(', ')}` : '',
+  ]
+    .filter(Boolean)
+    .join('; ');
+}
+
+function tableOf(spectrum: LightSpectrum): PlotTable {
+  const { unit, perJy } = fluxUnit(
+    spectrum.unabsorbedFluxDensitiesJy.reduce((largest, value) => Math.max(largest, value), 0),
+  );
+  return {
+    header: ['Wavelength, vacuum (nm)', `Arriving (${unit})`, `Without absorption (${unit})`],
+    fileHeader: ['wavelength_vacuum_nm', `arriving_${unit}`, `unabsorbed_${unit}`],
+    rows: spectrum.wavelengthsNm.map((wavelength, index) => [
+      wavelength,
+      (spectrum.fluxDensitiesJy[index] ?? 0) * perJy,
+      (spectrum.unabsorbedFluxDensitiesJy[index] ?? 0) * perJy,
+    ]),
+  };
+}
