@@ -83,8 +83,6 @@ export const EstimateRequest = z
         .max(30),
       light: Light,
       extent: Extent.default({ kind: 'point' }),
-      /** Lensing magnification of the total flux. */
-      magnification: z.number().gt(0).max(1e4).optional(),
     }),
     setup: Setup,
     goal: Goal,
@@ -114,6 +112,7 @@ export type LightStep = z.infer<typeof LightStep>;
 
 const estimateBasics = {
   engineVersion: z.string(),
+  referenceDataVersion: z.string(),
   inputHash: z.string(),
   cosmologyId: z.string(),
   steps: z.array(LightStep),

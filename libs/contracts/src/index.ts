@@ -6,6 +6,7 @@ export * from './errors.js';
 export * from './estimates.js';
 export * from './facilities.js';
 export * from './light.js';
+export * from './light-report.js';
 export * from './observations.js';
 export * from './people.js';
 export * from './permissions.js';

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { Id, Instant, ListQuery, Notice, Version, line, pageOf, prose } from './common.js';
-import { BandId, Extent, Light, MagnitudeSystem } from './light.js';
+import { BandId, Extent, Light, MagnitudeSystem, RedshiftKind, RedshiftUncertainty } from './light.js';
 
 /** Most targets one proposal may hold. */
 export const MAX_TARGET_COUNT = 20_000;
@@ -24,7 +24,8 @@ export const TargetInput = z
       .min(-90, { error: 'Declination runs from −90° to +90°.' })
       .max(90, { error: 'Declination runs from −90° to +90°.' }),
     redshift,
-    redshiftSigma: z.number().min(0).max(10).nullable(),
+    redshiftUncertainty: RedshiftUncertainty.nullable(),
+    redshiftKind: RedshiftKind,
     light: Light.nullable(),
     extent: Extent,
     notes: prose(2000),
@@ -40,7 +41,8 @@ export const TargetCells = z
     rightAscension: z.string().max(200),
     declination: z.string().max(200),
     redshift: z.string().max(100),
-    redshiftSigma: z.string().max(100),
+    /** `0.02`, `+0.05 -0.03`, or empty. */
+    redshiftUncertainty: z.string().max(100),
     /** With its unit, typed freely: `24.1 mag`, `12 uJy`, `2e-17 erg/s/cm^2`; a bare number is an AB magnitude in the chosen band. */
     brightness: z.string().max(200),
     notes: z.string().max(2000),
@@ -70,6 +72,11 @@ export const TargetComputed = z
     apparentMagnitudeAb: z.number().nullable(),
     magnitudeLabel: z.string().nullable(),
     absoluteMagnitudeAb: z.number().nullable(),
+    /** Above the atmosphere; null in a band without light, absent from a light that is a line or a surface. */
+    bandMagnitudesAb: z.partialRecord(BandId, z.number().nullable()),
+    /** Of a light that is a line. */
+    lineObservedWavelengthNm: z.number().nullable(),
+    lineFluxErgSCm2: z.number().nullable(),
     halfLightRadiusArcsec: z.number().nullable(),
     surfaceBrightnessAbMagPerArcsec2: z.number().nullable(),
     /** Months in which the target is up long enough: "Oct–Jan", "never", "all semester". */
@@ -78,6 +85,7 @@ export const TargetComputed = z
     notices: z.array(Notice),
     cosmologyId: z.string(),
     engineVersion: z.string(),
+    referenceDataVersion: z.string(),
     inputHash: z.string(),
   })
   .meta({ id: 'TargetComputed' });
@@ -94,7 +102,10 @@ export const Target = z
     rightAscensionText: z.string(),
     declinationText: z.string(),
     redshift: z.number(),
-    redshiftSigma: z.number().nullable(),
+    redshiftUncertainty: RedshiftUncertainty.nullable(),
+    /** As the grid shows and takes it: `0.02`, `+0.05 −0.03`, `p(z), 2 peaks`. */
+    redshiftUncertaintyText: z.string(),
+    redshiftKind: RedshiftKind,
     light: Light.nullable(),
     /** The brightness as the grid shows and takes it: "24.10 AB (J)". */
     brightnessText: z.string(),
@@ -162,7 +173,7 @@ export const ImportRole = z.enum([
   'rightAscension',
   'declination',
   'redshift',
-  'redshiftSigma',
+  'redshiftUncertainty',
   'brightness',
   'notes',
   'ignore',

@@ -1,8 +1,8 @@
 /** From the light above the atmosphere to electrons per second: what the aperture holds and what falls beside it. */
-import { AB_ZERO_PHOTONS_PER_M2_S, lensingMag, resolutionFwhmKmS } from '@faintward/photometry';
+import { AB_ZERO_PHOTONS_PER_M2_S, ledgerInput, resolutionFwhmKmS } from '@faintward/photometry';
 import { collectingAreaM2 } from './ccd-equation.js';
 import { OPTIMUM_RADIUS_OVER_FWHM, THIN_CLOUD } from './constants.js';
-import { stepInput, type LightBudget } from './light-budget.js';
+import type { LightBudget } from './light-budget.js';
 import { gaussianEncircledFraction, gaussianPeakPixelFraction, gaussianSlitFraction } from './point-spread.js';
 import {
   bestApertureRadiusArcsec,
@@ -10,7 +10,7 @@ import {
   halfLightRadiusAfterSeeing,
   peakPixelFractionAfterSeeing,
 } from './sersic-image.js';
-import type { CountedRange } from './source-light.js';
+import type { CountedRange } from './counted-range.js';
 import type {
   Aperture,
   ElectronRates,
@@ -19,7 +19,6 @@ import type {
   ImagingMode,
   SignalToNoisePer,
   SlitSpectroscopyMode,
-  Target,
 } from './types.js';
 
 /** The shape of the source on the sky, once its distance is known. */
@@ -52,27 +51,29 @@ interface Geometry {
 /**
  * Adds the steps from the top of the atmosphere to electrons, and counts them.
  *
+ * @param continuumMag  AB magnitude above the atmosphere of what is seen under a line; undefined without a continuum
  * @param fwhmArcsec  delivered FWHM of a point source
  */
 export function collect(
   budget: LightBudget,
   input: EstimateInput,
   range: CountedRange,
+  continuumMag: number | undefined,
   image: Image,
   fwhmArcsec: number,
   per: SignalToNoisePer,
   warnings: EstimateWarning[],
 ): Collection {
-  const { mode, conditions, telescope, target } = input;
+  const { mode, conditions, telescope } = input;
   const aboveAtmosphereMag = budget.totalMag;
   const extinctionMag = mode.extinctionMagPerAirmass * conditions.airmass;
-  budget.add('atmospheric-extinction', extinctionMag, [
-    stepInput('extinctionMagPerAirmass', mode.extinctionMagPerAirmass, 'mag'),
-    stepInput('airmass', conditions.airmass),
+  budget.step('atmospheric-extinction', extinctionMag, [
+    ledgerInput('extinctionMagPerAirmass', mode.extinctionMagPerAirmass, 'mag'),
+    ledgerInput('airmass', conditions.airmass),
   ]);
   const cloudMag = conditions.transparency === 'thinCloud' ? THIN_CLOUD.value : 0;
-  if (cloudMag > 0) budget.add('thin-cloud', cloudMag, [stepInput('attenuation', cloudMag, 'mag')]);
-  budget.addFraction('throughput', mode.throughput, [stepInput('throughput', mode.throughput)]);
+  if (cloudMag > 0) budget.step('thin-cloud', cloudMag, [ledgerInput('attenuation', cloudMag, 'mag')]);
+  budget.addFraction('throughput', mode.throughput, [ledgerInput('throughput', mode.throughput)]);
   const beforeApertureMag = budget.totalMag;
 
   const geometry =
@@ -80,20 +81,19 @@ export function collect(
       ? imageGeometry(budget, input, mode, range, image, fwhmArcsec, per, warnings)
       : slitGeometry(budget, input, mode, image, fwhmArcsec, per, warnings);
   if (geometry.goalShare !== 1) {
-    budget.addFraction('goal-share', geometry.goalShare, [stepInput('share', geometry.goalShare)]);
+    budget.addFraction('goal-share', geometry.goalShare, [ledgerInput('share', geometry.goalShare)]);
   }
   const apertureMagnitudeAb = budget.totalMag;
 
   const areaM2 = collectingAreaM2(telescope.diameterM, telescope.obstructionDiameterM);
   const zeroPerLogWidth = AB_ZERO_PHOTONS_PER_M2_S * areaM2;
-  budget.addFraction('collecting', zeroPerLogWidth * range.logWidth, [
-    stepInput('collectingAreaM2', areaM2, 'm²'),
-    stepInput('logWidth', range.logWidth),
+  budget.addFraction('collecting', zeroPerLogWidth * range.response.logIntegral, [
+    ledgerInput('collectingAreaM2', areaM2, 'm²'),
+    ledgerInput('logWidth', range.response.logIntegral),
   ]);
 
   const sourceElectronsPerSecond = electrons(budget.totalMag);
   // The continuum goes the same way as the line; only where it starts and how many elements it fills differ.
-  const continuumMag = continuumMagnitudeOf(target);
   const continuumOverLine =
     continuumMag === undefined ? 0 : electrons(continuumMag - aboveAtmosphereMag) * geometry.elementCount;
   const skyPerPixel =
@@ -103,7 +103,7 @@ export function collect(
     geometry.skyArcsec2LogWidthPerPixel;
   const dark = mode.detector.darkElectronsPerSecond;
   const peakShare = geometry.peakFraction + geometry.continuumPeakFraction * continuumOverLine;
-  const peakSource = electrons(beforeApertureMag) * zeroPerLogWidth * range.logWidth * peakShare;
+  const peakSource = electrons(beforeApertureMag) * zeroPerLogWidth * range.response.logIntegral * peakShare;
   const { pixelCount } = geometry.aperture;
   return {
     aperture: geometry.aperture,
@@ -117,14 +117,6 @@ export function collect(
       peakElectronsPerSecondPerPixel: peakSource + skyPerPixel + dark,
     },
   };
-}
-
-/** AB magnitude of the continuum under a line above the atmosphere; undefined when there is no line or no continuum. */
-function continuumMagnitudeOf({ light, magnification, extent }: Target): number | undefined {
-  if (light.kind !== 'lineFlux' && light.kind !== 'lineLuminosity') return undefined;
-  if (light.continuumMagnitudeAb === undefined) return undefined;
-  const isLensed = magnification !== undefined && extent.kind !== 'uniform';
-  return light.continuumMagnitudeAb + (isLensed ? lensingMag(magnification) : 0);
 }
 
 function electrons(magnitude: number): number {
@@ -150,7 +142,7 @@ function imageGeometry(
   if (image.kind === 'uniform') {
     areaArcsec2 = image.areaArcsec2;
     peakFraction = pixelArea;
-    budget.addFraction('solid-angle', areaArcsec2, [stepInput('areaArcsec2', areaArcsec2, 'arcsec²')]);
+    budget.addFraction('solid-angle', areaArcsec2, [ledgerInput('areaArcsec2', areaArcsec2, 'arcsec²')]);
   } else {
     if (image.kind === 'point') {
       radiusArcsec = input.apertureRadiusArcsec ?? OPTIMUM_RADIUS_OVER_FWHM * fwhmArcsec;
@@ -165,9 +157,9 @@ function imageGeometry(
     }
     areaArcsec2 = Math.PI * radiusArcsec * radiusArcsec;
     budget.addFraction('aperture', enclosedFraction, [
-      stepInput('radiusArcsec', radiusArcsec, 'arcsec'),
-      stepInput('fwhmArcsec', fwhmArcsec, 'arcsec'),
-      stepInput('enclosedFraction', enclosedFraction),
+      ledgerInput('radiusArcsec', radiusArcsec, 'arcsec'),
+      ledgerInput('fwhmArcsec', fwhmArcsec, 'arcsec'),
+      ledgerInput('enclosedFraction', enclosedFraction),
     ]);
     if (radiusArcsec < pixelArcsec) {
       warnings.push({
@@ -191,7 +183,7 @@ function imageGeometry(
       pixelCount: (areaArcsec2 / pixelArea) * goalShare,
     },
     goalShare,
-    skyArcsec2LogWidthPerPixel: pixelArea * range.logWidth,
+    skyArcsec2LogWidthPerPixel: pixelArea * range.response.logIntegral,
     peakFraction,
     continuumPeakFraction: peakFraction,
     elementCount: 1,
@@ -215,8 +207,8 @@ function slitGeometry(
 ): Geometry {
   const { slitWidthArcsec, extractionLengthFwhm, pixelsPerResolutionElement, resolvingPower } = mode;
   const { light } = input.target;
-  const isLine = light.kind === 'lineFlux' || light.kind === 'lineLuminosity';
-  const elementCount = isLine ? Math.hypot(1, light.intrinsicWidthKmS / resolutionFwhmKmS(resolvingPower)) : 1;
+  const elementCount =
+    light.kind === 'line' ? Math.hypot(1, light.velocityWidthKmS / resolutionFwhmKmS(resolvingPower)) : 1;
   const imageFwhmArcsec =
     image.kind === 'sersic' ? 2 * halfLightRadiusAfterSeeing(image.circularisedRadiusArcsec, fwhmArcsec) : fwhmArcsec;
   const lengthArcsec = extractionLengthFwhm * imageFwhmArcsec;
@@ -227,17 +219,17 @@ function slitGeometry(
   let enclosedFraction = 1;
   let peakAlongSlit: number;
   if (image.kind === 'uniform') {
-    budget.addFraction('solid-angle', areaArcsec2, [stepInput('areaArcsec2', areaArcsec2, 'arcsec²')]);
+    budget.addFraction('solid-angle', areaArcsec2, [ledgerInput('areaArcsec2', areaArcsec2, 'arcsec²')]);
     peakAlongSlit = slitWidthArcsec * pixelArcsec;
   } else {
     const slitFraction = gaussianSlitFraction(slitWidthArcsec / imageFwhmArcsec);
     const extractedFraction = gaussianSlitFraction(extractionLengthFwhm);
     enclosedFraction = slitFraction * extractedFraction;
     budget.addFraction('slit', slitFraction, [
-      stepInput('slitWidthArcsec', slitWidthArcsec, 'arcsec'),
-      stepInput('imageFwhmArcsec', imageFwhmArcsec, 'arcsec'),
+      ledgerInput('slitWidthArcsec', slitWidthArcsec, 'arcsec'),
+      ledgerInput('imageFwhmArcsec', imageFwhmArcsec, 'arcsec'),
     ]);
-    budget.addFraction('extraction', extractedFraction, [stepInput('lengthArcsec', lengthArcsec, 'arcsec')]);
+    budget.addFraction('extraction', extractedFraction, [ledgerInput('lengthArcsec', lengthArcsec, 'arcsec')]);
     peakAlongSlit = slitFraction * gaussianSlitFraction(pixelArcsec / imageFwhmArcsec);
     if (slitWidthArcsec < fwhmArcsec) {
       warnings.push({
@@ -253,9 +245,8 @@ function slitGeometry(
     }
   }
   const flatAlongDispersion = Math.min(1, 1 / pixelsPerResolutionElement);
-  const peakAlongDispersion = isLine
-    ? gaussianSlitFraction(1 / (pixelsPerResolutionElement * elementCount))
-    : flatAlongDispersion;
+  const peakAlongDispersion =
+    light.kind === 'line' ? gaussianSlitFraction(1 / (pixelsPerResolutionElement * elementCount)) : flatAlongDispersion;
   const goalShare = slitGoalShare(per, elementCount, pixelsPerResolutionElement, areaArcsec2);
   return {
     aperture: {

@@ -1,7 +1,7 @@
 import type { Constant } from '@faintward/photometry';
 
 /** Changes whenever the same input could give another answer. Stored beside every number. */
-export const ENGINE_VERSION = '1.0.1';
+export const ENGINE_VERSION = '2.0.0';
 
 /** Radius of best S/N against a background, for a Gaussian image, in units of its FWHM: 1 + 2c x² = e^(c x²), c = 4 ln 2. */
 export const OPTIMUM_RADIUS_OVER_FWHM = 0.673_172_911_275_977_8;
@@ -79,16 +79,6 @@ export const KOLMOGOROV_FWHM_COEFFICIENT: Constant = {
   value: 0.976,
   unit: '',
   reference: 'Fried 1966, JOSA 56, 1372; Roddier 1981, Progress in Optics 19, 281 (cited from memory)',
-};
-
-/** Above this redshift the light between the Lyman limit and Lyα is treated as absent. */
-export const OPAQUE_FOREST_REDSHIFT: Constant = {
-  name: 'redshift from which the Lyα forest is treated as opaque',
-  symbol: '',
-  value: 6,
-  unit: '',
-  reference:
-    'first approximation: the mean transmission between Lyβ and Lyα falls below a tenth near z = 6 (Fan et al. 2006, AJ 132, 117; cited from memory)',
 };
 
 export const ARCSEC_PER_RADIAN = 648_000 / Math.PI;

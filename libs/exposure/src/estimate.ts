@@ -1,4 +1,4 @@
-import { circularisedRadius, meanEffectiveSurfaceBrightness } from '@faintward/photometry';
+import { arrivingLight, circularisedRadius, meanEffectiveSurfaceBrightness } from '@faintward/photometry';
 import { noiseVariance, signalToNoise } from './ccd-equation.js';
 import { collect, type Collection, type Image } from './collection.js';
 import {
@@ -20,7 +20,7 @@ import {
 } from './exposure-series.js';
 import { LightBudget } from './light-budget.js';
 import { TESTED_OUTER_SCALE_RATIO, deliveredSeeing } from './seeing.js';
-import { addSourceSteps, countedRange } from './source-light.js';
+import { countedRange } from './counted-range.js';
 import type {
   Estimate,
   EstimateInput,
@@ -46,8 +46,7 @@ const LONG_REQUEST_NIGHTS = 3;
  * From a target to exposures: how bright it arrives, how many electrons that makes, how long it takes.
  *
  * Pure: the same input and {@link ENGINE_VERSION} give the same answer. Apart from steps, formulas are named at their
- * functions. What the first form leaves out is said by warnings: intergalactic absorption between the Lyman limit and Lyα
- * below z = 6, Galactic dust, the sky's dependence on airmass and lunar distance, lines in the sky's spectrum.
+ * functions. Left out: the sky's dependence on airmass and lunar distance, lines in the sky's spectrum.
  *
  * What cannot be reached is an answer (`outcome: 'infeasible'` with a reason), never NaN or Infinity.
  *
@@ -90,13 +89,16 @@ export function estimate(input: EstimateInput): Estimate {
 
   let distance: TargetDistance | undefined;
   const distanceOf = (): TargetDistance => (distance ??= targetDistance(input.cosmology, target.redshift));
-  const noLight = addSourceSteps(budget, target, distanceOf, mode, range, warnings);
+  const arriving = arrivingLight(target.light, target.redshift, input.cosmology, target.extent.kind === 'uniform');
+  const noLight = arriving.addSteps(budget, range.response);
   if (noLight !== undefined) return infeasible(noLight, null);
+  warnings.push(...arriving.cautions(range.response));
   const apparentMagnitudeAb = budget.totalMag;
+  const continuumMag = arriving.kind === 'line' ? arriving.continuumMagnitudeAb() : undefined;
 
   const image = imageOf(input, distanceOf);
   const per = perOf(goal);
-  const collection = collect(budget, input, range, image, fwhmArcsec, per, warnings);
+  const collection = collect(budget, input, range, continuumMag, image, fwhmArcsec, per, warnings);
   const { rates, aperture } = collection;
   const budgetOf = noiseBudgetOf(rates, aperture, mode);
   const systematicErrorFraction = mode.systematicErrorFraction ?? 0;
@@ -172,7 +174,7 @@ function imageOf({ target }: EstimateInput, distanceOf: () => TargetDistance): I
       const { halfLightRadiusArcsec, halfLightRadiusKpc = NaN } = extent;
       const radiusArcsec =
         halfLightRadiusArcsec ??
-        (halfLightRadiusKpc / distanceOf().kpcPerArcsec) * Math.sqrt(target.magnification ?? 1);
+        (halfLightRadiusKpc / distanceOf().kpcPerArcsec) * Math.sqrt(target.light.magnification);
       if (halfLightRadiusArcsec === undefined) validateAngleOfKpc(halfLightRadiusKpc, radiusArcsec);
       return {
         kind: 'sersic',

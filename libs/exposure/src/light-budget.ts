@@ -1,70 +1,8 @@
-import type { LightStep, StepId, StepInput, StepStage } from './types.js';
+import { Ledger, type LedgerInput, type StepText } from '@faintward/photometry';
+import type { StepId } from './types.js';
 
-interface StepText {
-  stage: StepStage;
-  title: string;
-  formula: string;
-  source: string;
-}
-
-const HOGG_2002 = 'Hogg, Baldry, Blanton & Eisenstein 2002, astro-ph/0210394';
-
-/** What every step is, wherever it occurs. The numbers are added by the pipeline. */
+/** What each step from the top of the atmosphere to the detector is. The numbers are added by the pipeline. */
 export const STEP_TEXTS: Readonly<Record<StepId, StepText>> = {
-  'apparent-magnitude': {
-    stage: 'source',
-    title: 'Apparent magnitude as given',
-    formula: 'm',
-    source: 'the investigator',
-  },
-  'absolute-magnitude': {
-    stage: 'source',
-    title: 'Absolute magnitude as given',
-    formula: 'M, at 10 pc',
-    source: 'the investigator',
-  },
-  'line-flux': {
-    stage: 'source',
-    title: 'Line flux, as the AB magnitude with as many photons',
-    formula: '−2.5 log10[F λ / (h c) / (N_AB=0 · Δln λ)]',
-    source: 'definition of the AB system',
-  },
-  'line-luminosity': {
-    stage: 'source',
-    title: 'Line luminosity, as the AB magnitude with as many photons at 10 pc',
-    formula: '−2.5 log10[L / (4π (10 pc)²) · λ / (h c) / (N_AB=0 · Δln λ)]',
-    source: 'definition of the AB system',
-  },
-  'distance-modulus': {
-    stage: 'space',
-    title: 'Distance modulus',
-    formula: '5 log10(D_L / 10 pc)',
-    source: 'Hogg 1999, astro-ph/9905116, section 9',
-  },
-  'redshift-bandwidth': {
-    stage: 'space',
-    title: 'Stretched bandwidth',
-    formula: '−2.5 log10(1 + z)',
-    source: HOGG_2002,
-  },
-  'spectral-slope': {
-    stage: 'space',
-    title: 'Spectrum between the given wavelength and the band',
-    formula: '−2.5 log10[∫ (λ/λ₀)^(2+β) d ln λ / ∫ d ln λ]',
-    source: HOGG_2002,
-  },
-  'hydrogen-absorption': {
-    stage: 'space',
-    title: 'Part of the band taken by hydrogen',
-    formula: 'no light below λ_cut (1 + z)',
-    source: 'first approximation: Lyman limit at any redshift, Lyα from z = 6 on',
-  },
-  lensing: {
-    stage: 'space',
-    title: 'Lensing magnification',
-    formula: '−2.5 log10 μ',
-    source: 'definition of magnification',
-  },
   'atmospheric-extinction': {
     stage: 'atmosphere',
     title: 'Atmospheric extinction',
@@ -121,32 +59,14 @@ export const STEP_TEXTS: Readonly<Record<StepId, StepText>> = {
   },
 };
 
-/** Adds up the light budget. The total is the sum of the steps in order, to the last bit. */
-export class LightBudget {
-  readonly steps: LightStep[] = [];
-  totalMag = 0;
-
-  add(id: StepId, deltaMag: number, inputs: StepInput[]): void {
-    this.totalMag += deltaMag;
-    const text = STEP_TEXTS[id];
-    this.steps.push({
-      id,
-      stage: text.stage,
-      title: text.title,
-      deltaMag,
-      totalMag: this.totalMag,
-      formula: text.formula,
-      inputs,
-      source: text.source,
-    });
+/** A light budget that goes on from the top of the atmosphere to the detector. */
+export class LightBudget extends Ledger {
+  step(id: StepId, deltaMag: number, inputs: LedgerInput[]): void {
+    this.add(id, STEP_TEXTS[id], deltaMag, inputs);
   }
 
   /** A step that lets a fraction through. */
-  addFraction(id: StepId, fraction: number, inputs: StepInput[]): void {
-    this.add(id, -2.5 * Math.log10(fraction), inputs);
+  addFraction(id: StepId, fraction: number, inputs: LedgerInput[]): void {
+    this.step(id, -2.5 * Math.log10(fraction), inputs);
   }
-}
-
-export function stepInput(name: string, value: number, unit = ''): StepInput {
-  return { name, value, unit };
 }

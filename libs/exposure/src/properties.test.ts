@@ -13,7 +13,7 @@ import {
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { estimate, limitingMagnitude, readNoiseBoundSeconds, signalToNoise } from './index.js';
-import { aSpectroscopyMode, anImagingMode, anInput } from './testing.js';
+import { aSpectroscopyMode, anImagingMode, anInput, lightOf, type PlainLight } from './testing.js';
 import type { Conditions, EstimateInput, FeasibleEstimate, ImagingMode, Target } from './types.js';
 
 const cosmology = createCosmology('planck18');
@@ -27,7 +27,7 @@ function seconds(input: EstimateInput): number {
   return feasible(input).openShutterSeconds;
 }
 function point(magnitudeAb: number): Target {
-  return { redshift: 0, light: { kind: 'apparentMagnitude', magnitudeAb }, extent: { kind: 'point' } };
+  return { redshift: 0, light: lightOf({ kind: 'apparentMagnitude', magnitudeAb }), extent: { kind: 'point' } };
 }
 function goal(value: number): EstimateInput['goal'] {
   return { kind: 'signalToNoise', value, per: 'aperture' };
@@ -125,7 +125,8 @@ describe('limited by the sky', () => {
   });
 
   it('a magnification of μ saves μ²', () => {
-    const ratio = seconds(sky()) / seconds({ ...sky(), target: { ...point(24), magnification: 3 } });
+    const ratio =
+      seconds(sky()) / seconds({ ...sky(), target: { ...point(24), light: { ...point(24).light, magnification: 3 } } });
     expectRatio(ratio, 9, SKY_TOLERANCE);
   });
 
@@ -147,7 +148,7 @@ describe('limited by the sky', () => {
         ...anInput(),
         target: {
           redshift: 0,
-          light: { kind: 'lineFlux', lineFluxErgSCm2: 1e-19, restWavelengthNm: 700, intrinsicWidthKmS },
+          light: lightOf({ kind: 'lineFlux', lineFluxErgSCm2: 1e-19, restWavelengthNm: 700, intrinsicWidthKmS }),
           extent: { kind: 'point' },
         },
         mode: aSpectroscopyMode({ skyAbMagPerArcsec2: uniformSky(15), detector: QUIET, resolvingPower: 50_000 }),
@@ -212,7 +213,12 @@ describe('whatever the limit', () => {
           anInput({
             target: {
               redshift,
-              light: { kind: 'absoluteMagnitude', absoluteMagnitudeAb: -22, restWavelengthNm: 300, slopeBeta: -2 },
+              light: lightOf({
+                kind: 'absoluteMagnitude',
+                absoluteMagnitudeAb: -22,
+                restWavelengthNm: 300,
+                slopeBeta: -2,
+              }),
               extent: { kind: 'sersic', halfLightRadiusKpc: 3, index: 1 },
             },
             goal: { kind: 'exposureTime', exposureSeconds: 100, exposureCount: 3 },
@@ -236,10 +242,10 @@ describe('whatever the limit', () => {
       1e-9,
     );
 
-    const line = (light: Target['light']): number =>
+    const line = (light: PlainLight): number =>
       seconds(
         anInput({
-          target: { redshift: 0.4, light, extent: { kind: 'point' } },
+          target: { redshift: 0.4, light: lightOf(light), extent: { kind: 'point' } },
           mode: aSpectroscopyMode(),
           goal: { kind: 'lineSignificance', sigma: 5 },
         }),
@@ -285,7 +291,7 @@ const anyInput: fc.Arbitrary<EstimateInput> = fc
   })
   .map((raw) => {
     const shape = { restWavelengthNm: 700 / (1 + raw.redshift), intrinsicWidthKmS: 100 * raw.radius };
-    const lights: Record<typeof raw.lightKind, Target['light']> = {
+    const lights: Record<typeof raw.lightKind, PlainLight> = {
       apparentMagnitude: { kind: 'apparentMagnitude', magnitudeAb: raw.magnitude },
       absoluteMagnitude: { kind: 'absoluteMagnitude', absoluteMagnitudeAb: raw.magnitude - 45, restWavelengthNm: 150 },
       lineFlux: { kind: 'lineFlux', lineFluxErgSCm2: 10 ** (-0.4 * raw.magnitude - 6), ...shape },
@@ -309,7 +315,7 @@ const anyInput: fc.Arbitrary<EstimateInput> = fc
       transparency: raw.isThinCloud ? 'thinCloud' : 'clear',
     };
     return anInput({
-      target: { redshift: raw.redshift, light: lights[raw.lightKind], extent: extents[raw.extentKind] },
+      target: { redshift: raw.redshift, light: lightOf(lights[raw.lightKind]), extent: extents[raw.extentKind] },
       mode: raw.isSpectrum ? aSpectroscopyMode(common) : anImagingMode(common),
       conditions,
       goal: goal(raw.wanted),
@@ -429,7 +435,7 @@ describe('any observation', () => {
               anInput({
                 target: {
                   redshift: z,
-                  light: { kind: 'absoluteMagnitude', absoluteMagnitudeAb, restWavelengthNm: 150 },
+                  light: lightOf({ kind: 'absoluteMagnitude', absoluteMagnitudeAb, restWavelengthNm: 150 }),
                   extent: { kind: 'point' },
                 },
               }),

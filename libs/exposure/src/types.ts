@@ -1,3 +1,5 @@
+import type { LedgerInput, LedgerStage, LedgerStep, NoLight, SourceLight } from '@faintward/photometry';
+
 /**
  * What an estimate is made from, and what it answers: plain data, so that it can be stored, hashed and sent.
  *
@@ -114,48 +116,6 @@ export type InstrumentMode = ImagingMode | SlitSpectroscopyMode;
 
 // ---------------------------------------------------------------------------------------------------- what is observed
 
-/** An AB magnitude as observed above the atmosphere. */
-export interface ApparentMagnitudeLight {
-  kind: 'apparentMagnitude';
-  /** Per arcsec² when the extent is `uniform`. */
-  magnitudeAb: number;
-  /** Observed wavelength the magnitude belongs to. Absent: it is the average over the mode's own band. */
-  wavelengthNm?: number;
-  /** β of f_λ ∝ λ^β, used to move from `wavelengthNm` to the band. Default −2 (flat f_ν). */
-  slopeBeta?: number;
-}
-
-/** An AB absolute magnitude at a rest wavelength, with a power-law spectrum through it. */
-export interface AbsoluteMagnitudeLight {
-  kind: 'absoluteMagnitude';
-  /** In the cosmology of the estimate: magnitudes derived with another Hubble constant must be converted first. */
-  absoluteMagnitudeAb: number;
-  restWavelengthNm: number;
-  /** β of f_λ ∝ λ^β. Default −2 (flat f_ν). */
-  slopeBeta?: number;
-}
-
-interface LineBasics {
-  restWavelengthNm: number;
-  /** Intrinsic full width at half maximum. 0: unresolved at any resolving power. */
-  intrinsicWidthKmS: number;
-  /** AB magnitude of the continuum under the line; it adds noise, not signal. Absent: none. */
-  continuumMagnitudeAb?: number;
-}
-
-export interface LineFluxLight extends LineBasics {
-  kind: 'lineFlux';
-  /** Integrated flux, erg s⁻¹ cm⁻²; per arcsec² when the extent is `uniform`. */
-  lineFluxErgSCm2: number;
-}
-
-export interface LineLuminosityLight extends LineBasics {
-  kind: 'lineLuminosity';
-  lineLuminosityErgS: number;
-}
-
-export type TargetLight = ApparentMagnitudeLight | AbsoluteMagnitudeLight | LineFluxLight | LineLuminosityLight;
-
 export interface PointExtent {
   kind: 'point';
 }
@@ -183,10 +143,9 @@ export type Extent = PointExtent | SersicExtent | UniformExtent;
 export interface Target {
   /** Cosmological redshift, ≥ 0; at least 1e-6 where a distance or a kpc size is needed. */
   redshift: number;
-  light: TargetLight;
+  /** Per arcsec² when the extent is `uniform`. */
+  light: SourceLight;
   extent: Extent;
-  /** Lensing magnification of the total flux, > 0. Give the light unlensed, or leave this out. Default 1. */
-  magnification?: number;
 }
 
 export interface Conditions {
@@ -252,19 +211,13 @@ export interface EstimateInput {
 
 // ------------------------------------------------------------------------------------------------------------ the answer
 
-/** The part of the way a step belongs to. */
-export type StepStage = 'source' | 'space' | 'atmosphere' | 'instrument' | 'counting';
+/** A line of the light budget; those up to the top of the atmosphere are photometry's. */
+export type LightStep = LedgerStep;
+export type StepStage = LedgerStage;
+export type StepInput = LedgerInput;
 
+/** The steps from the top of the atmosphere to the detector. */
 export type StepId =
-  | 'apparent-magnitude'
-  | 'absolute-magnitude'
-  | 'line-flux'
-  | 'line-luminosity'
-  | 'distance-modulus'
-  | 'redshift-bandwidth'
-  | 'spectral-slope'
-  | 'hydrogen-absorption'
-  | 'lensing'
   | 'atmospheric-extinction'
   | 'thin-cloud'
   | 'throughput'
@@ -274,27 +227,6 @@ export type StepId =
   | 'solid-angle'
   | 'goal-share'
   | 'collecting';
-
-/** A quantity that a step used, with its unit ('' for a pure number). */
-export interface StepInput {
-  name: string;
-  value: number;
-  unit: string;
-}
-
-/** One line of the light budget. */
-export interface LightStep {
-  id: StepId;
-  stage: StepStage;
-  title: string;
-  /** What this step adds, in magnitudes: positive dims. The first step holds the starting magnitude. */
-  deltaMag: number;
-  /** Sum of all `deltaMag` up to and including this step, added in order. */
-  totalMag: number;
-  formula: string;
-  inputs: StepInput[];
-  source: string;
-}
 
 export interface Aperture {
   kind: 'circle' | 'slit' | 'patch';
@@ -352,8 +284,6 @@ export interface ExposureBound {
 }
 
 export type WarningCode =
-  | 'lymanAlphaInBand'
-  | 'bandPartlyAbsorbed'
   | 'sourceFarBelowSky'
   | 'readNoiseLimited'
   | 'fewExposures'
@@ -364,17 +294,16 @@ export type WarningCode =
   | 'undersampled'
   | 'outerScaleOutsideModel'
   | 'apertureSmallerThanPixel'
-  | 'powerLawExtrapolated'
   | 'longRequest';
 
 export interface EstimateWarning {
-  code: WarningCode;
+  /** Of this engine, or of the light: a spectrum's own cautions. */
+  code: WarningCode | (string & {});
   message: string;
 }
 
 export type InfeasibleCode =
-  | 'noFluxInBand'
-  | 'lineOutsideBand'
+  | NoLight['code']
   | 'wavelengthOutsideBand'
   | 'saturatesAtMinimumExposure'
   | 'exposureSaturates'

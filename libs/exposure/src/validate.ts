@@ -1,6 +1,6 @@
-import { OutOfDomainError, SERSIC_INDEX_RANGE } from '@faintward/photometry';
+import { OutOfDomainError, SERSIC_INDEX_RANGE, type SourceLight } from '@faintward/photometry';
 import { DITHER_MINIMUM_COUNT } from './constants.js';
-import type { EstimateInput, Extent, Goal, InstrumentMode, Target, TargetLight } from './types.js';
+import type { EstimateInput, Extent, Goal, InstrumentMode, Target } from './types.js';
 
 /** Refuses a number outside [lowest, highest]; NaN and infinities always. */
 function inRange(field: string, value: number, lowest: number, highest: number, unit = ''): void {
@@ -72,10 +72,9 @@ export function validateInput(input: EstimateInput): void {
 function validateTarget(target: Target): void {
   const { light, extent } = target;
   inRange('target.redshift', target.redshift, 0, 1100);
-  if (target.magnification !== undefined) inRange('target.magnification', target.magnification, 1e-6, 1e6);
   validateLight(light);
   validateExtent(extent);
-  const isIntrinsic = light.kind === 'absoluteMagnitude' || light.kind === 'lineLuminosity';
+  const isIntrinsic = light.frame === 'rest';
   if (extent.kind === 'uniform' && isIntrinsic) {
     throw new OutOfDomainError('target.light.kind', light.kind, 'an observed surface brightness for a uniform extent');
   }
@@ -100,32 +99,25 @@ export function validateAngleOfKpc(sizeKpc: number, angleArcsec: number): void {
   throw new OutOfDomainError('target.extent.halfLightRadiusKpc', sizeKpc, allowed);
 }
 
-function validateLight(light: TargetLight): void {
+function validateLight(light: SourceLight): void {
   const at = 'target.light';
-  switch (light.kind) {
-    case 'apparentMagnitude':
-      inRange(`${at}.magnitudeAb`, light.magnitudeAb, ...MAGNITUDES);
-      if (light.wavelengthNm !== undefined) inRange(`${at}.wavelengthNm`, light.wavelengthNm, 1, 1e7, 'nm');
-      if (light.slopeBeta !== undefined) inRange(`${at}.slopeBeta`, light.slopeBeta, -10, 10);
-      return;
-    case 'absoluteMagnitude':
-      inRange(`${at}.absoluteMagnitudeAb`, light.absoluteMagnitudeAb, ...MAGNITUDES);
-      inRange(`${at}.restWavelengthNm`, light.restWavelengthNm, 1, 1e7, 'nm');
-      if (light.slopeBeta !== undefined) inRange(`${at}.slopeBeta`, light.slopeBeta, -10, 10);
-      return;
-    case 'lineFlux':
-      inRange(`${at}.lineFluxErgSCm2`, light.lineFluxErgSCm2, 1e-30, 1, 'erg/s/cm²');
-      break;
-    case 'lineLuminosity':
-      inRange(`${at}.lineLuminosityErgS`, light.lineLuminosityErgS, 1e20, 1e60, 'erg/s');
-      break;
-    default:
-      unknownChoice(`${at}.kind`, light, 'apparentMagnitude, absoluteMagnitude, lineFlux or lineLuminosity');
+  oneOf(`${at}.kind`, light.kind, ['continuum', 'line']);
+  inRange(`${at}.magnification`, light.magnification, 1e-6, 1e6);
+  if (light.hostDust !== null) inRange(`${at}.hostDust.colourExcessMag`, light.hostDust.colourExcessMag, 0, 20, 'mag');
+  if (light.galacticDust !== null) {
+    inRange(`${at}.galacticDust.colourExcessMag`, light.galacticDust.colourExcessMag, 0, 20, 'mag');
   }
+  if (light.kind === 'continuum') {
+    inRange(`${at}.magnitude`, light.quoted.magnitude, ...MAGNITUDES);
+    return;
+  }
+  if (light.frame === 'observed') inRange(`${at}.amount`, light.quoted.amount, 1e-30, 1, 'erg/s/cm²');
+  else inRange(`${at}.amount`, light.quoted.amount, 1e20, 1e60, 'erg/s');
   inRange(`${at}.restWavelengthNm`, light.restWavelengthNm, 1, 1e7, 'nm');
-  inRange(`${at}.intrinsicWidthKmS`, light.intrinsicWidthKmS, 0, 1e5, 'km/s');
-  if (light.continuumMagnitudeAb !== undefined) {
-    inRange(`${at}.continuumMagnitudeAb`, light.continuumMagnitudeAb, ...MAGNITUDES);
+  inRange(`${at}.velocityWidthKmS`, light.velocityWidthKmS, 0, 1e5, 'km/s');
+  inRange(`${at}.escapeFraction`, light.escapeFraction, 1e-6, 1);
+  if (light.continuum.kind === 'magnitude') {
+    inRange(`${at}.continuum.magnitudeAb`, light.continuum.magnitudeAb, ...MAGNITUDES);
   }
 }
 
@@ -222,7 +214,7 @@ function validateGoal(goal: Goal, input: EstimateInput): void {
       break;
     case 'lineSignificance':
       inRange('goal.sigma', goal.sigma, 0.01, 1e5);
-      if (target.light.kind !== 'lineFlux' && target.light.kind !== 'lineLuminosity') {
+      if (target.light.kind !== 'line') {
         throw new OutOfDomainError(
           'goal.kind',
           goal.kind,

@@ -10,7 +10,7 @@ import { describe, expect, it } from 'vitest';
 import { noiseBudgetOf, realExposureCount } from './exposure-series.js';
 import { estimate, exposureCountFor, limitingMagnitude, openShutterSecondsFor } from './index.js';
 import { deliveredSeeing } from './seeing.js';
-import { aSite, anImagingMode, anInput } from './testing.js';
+import { aSite, anImagingMode, anInput, lightOf } from './testing.js';
 import type { EstimateInput, FeasibleEstimate, ImagingMode } from './types.js';
 
 /** The examples put AB = 0 at 3631 Jy, which is rounded: their magnitudes are this much off those of the 48.60 definition. */
@@ -52,7 +52,7 @@ describe('a point source of AB = 25 with an 8 m telescope', () => {
     anInput({
       target: {
         redshift: 0,
-        light: { kind: 'apparentMagnitude', magnitudeAb: fromRounded(25) },
+        light: lightOf({ kind: 'apparentMagnitude', magnitudeAb: fromRounded(25) }),
         extent: { kind: 'point' },
       },
       telescope: { diameterM: 8, obstructionDiameterM: 1.1 },
@@ -127,19 +127,19 @@ describe('a galaxy at z = 7 in the near infrared', () => {
     return {
       target: {
         redshift: 7,
-        light: {
+        light: lightOf({
           kind: 'absoluteMagnitude',
           absoluteMagnitudeAb: fromRounded(absoluteMagnitudeAb),
           restWavelengthNm: 150,
           slopeBeta: -2,
-        },
+          ...lensed,
+        }),
         // The example keeps the observed size when the source is lensed, so it is given as an angle.
         extent: {
           kind: 'sersic',
           index: 1,
           halfLightRadiusArcsec: radiusKpc(absoluteMagnitudeAb) / (cosmology.kpcPerArcsec(7) ?? NaN),
         },
-        ...lensed,
       },
       cosmology,
       site: aSite({ zenithSeeingArcsec: 0.8, outerScaleM: 25 }),

@@ -18,12 +18,26 @@ const SAME_NODE = 1e-9;
  *
  * @param jumpsNm       where a spectrum may jump: these nodes stand twice, for the value to the left and to the right
  * @param extraNodesNm  nodes to be met exactly, once; a jump at the same place stays a jump
- * @returns wavelengths in nm; jumps and nodes outside the grid are left out
+ * @returns wavelengths in nm, not to be written to; jumps and nodes outside the grid are left out
  * @throws {OutOfDomainError} naming the first wavelength that is not a number
  */
 export function restGrid(jumpsNm: readonly number[], extraNodesNm: ArrayLike<number> = []): Float64Array {
   const jumps = sortedInside('jumpsNm', jumpsNm);
   const extras = sortedInside('extraNodesNm', extraNodesNm);
+  if (extras.length > 0) return makeGrid(jumps, extras);
+  // What is worked out on the points of a spectrum is kept with them, so spectra with the same points share one array.
+  const key = jumps.join(' ');
+  const known = keptGrids.get(key);
+  if (known !== undefined) return known;
+  const made = makeGrid(jumps, extras);
+  if (keptGrids.size < MOST_KEPT_GRIDS) keptGrids.set(key, made);
+  return made;
+}
+
+const keptGrids = new Map<string, Float64Array>();
+const MOST_KEPT_GRIDS = 16;
+
+function makeGrid(jumps: readonly number[], extras: readonly number[]): Float64Array {
   const nodes: number[] = [];
   let [jump, extra] = [0, 0];
   for (let wavelengthNm = -Infinity; wavelengthNm < Infinity;) {

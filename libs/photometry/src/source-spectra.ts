@@ -9,6 +9,7 @@ import { starFormingSpectrum, type StarFormingSource } from './sources/star-form
 import { supernovaIaSpectrum, type SupernovaIaSource } from './sources/supernova.js';
 import type { SourceTemplates } from './sources/templates.js';
 
+export { powerLawSpectrum } from './sources/power-law.js';
 export { BOLTZMANN_CONSTANT } from './sources/blackbody.js';
 export { NARROW_LINE_WIDTH_KM_S } from './sources/rest-spectrum.js';
 export type { RestLine, RestSpectrum, SpectrumCaution } from './sources/rest-spectrum.js';

@@ -57,10 +57,7 @@ export function supernovaIaSpectrum(
  */
 export function supernovaPhaseMag(phaseDays: number, bResponse: SampledCurve, { supernovaIaHsiao }: Templates): number {
   const response = responseOf(bResponse);
-  const photons = (phase: number): number => {
-    const { wavelengthsNm, values } = curveAtPhase(supernovaIaHsiao, phase);
-    return photonIntegral(response, wavelengthsNm, values);
-  };
+  const photons = (phase: number): number => photonIntegral(response, curveAtPhase(supernovaIaHsiao, phase));
   return 2.5 * Math.log10(photons(0) / photons(phaseDays));
 }
 
