@@ -14,8 +14,10 @@ import { PanelsModule } from './modules/panels/panels.module.js';
 import { PeopleModule } from './modules/people/people.module.js';
 import { ProposalsModule } from './modules/proposals/proposals.module.js';
 import { RankingModule } from './modules/ranking/ranking.module.js';
+import { ReferenceDataModule } from './modules/reference-data/reference-data.module.js';
 import { ReviewsModule } from './modules/reviews/reviews.module.js';
 import { SemestersModule } from './modules/semesters/semesters.module.js';
+import { SpectraModule } from './modules/spectra/spectra.module.js';
 import { SubmissionsModule } from './modules/submissions/submissions.module.js';
 import { TargetsModule } from './modules/targets/targets.module.js';
 import { TeamModule } from './modules/team/team.module.js';
@@ -34,8 +36,10 @@ const SUBJECTS = [
   PeopleModule,
   ProposalsModule,
   RankingModule,
+  ReferenceDataModule,
   ReviewsModule,
   SemestersModule,
+  SpectraModule,
   SubmissionsModule,
   TargetsModule,
   TeamModule,

@@ -1,4 +1,5 @@
 import process from 'node:process';
+import { ReferenceFileError } from '@faintward/photometry/reference-files';
 import { InvalidConfiguration } from './config/config.js';
 import { DatabaseUnreadable } from './database/connection.js';
 import { DataFolderInUse } from './database/lock.js';
@@ -24,7 +25,9 @@ export async function runCommand(command: () => Promise<void>): Promise<void> {
 /** What an operator reads of a failure that is theirs to solve; anything else keeps its stack. */
 export function explain(error: unknown): string {
   if (
-    [InvalidConfiguration, DataFolderInUse, DatabaseUnreadable, CommandRefused].some((kind) => error instanceof kind)
+    [InvalidConfiguration, DataFolderInUse, DatabaseUnreadable, ReferenceFileError, CommandRefused].some(
+      (kind) => error instanceof kind,
+    )
   ) {
     return (error as Error).message;
   }

@@ -33,7 +33,7 @@ export {
   powerLawColourMag,
 } from './photons.js';
 export { BANDS, abFromVegaMagnitude, findBand, vegaFromAbMagnitude } from './bands.js';
-export type { Band, BandId, Provenance } from './bands.js';
+export type { BandId, Provenance } from './bands.js';
 export {
   apparentMagnitudeAtRestWavelength,
   apparentMagnitudeInSameBand,
@@ -113,6 +113,7 @@ export type {
   ReferenceFile,
   RestLine,
   RestSpectrum,
+  SampledSource,
   SourceKind,
   SourceTemplateFiles,
   SourceTemplates,
@@ -184,3 +185,9 @@ export type {
 } from './typical-values.js';
 export { halfLightRadiusAfterSeeing, imageRegime } from './seeing-size.js';
 export type { ImageRegime } from './seeing-size.js';
+export { BAND_IDS, abFromVegaIn, createBands, findBandIn, halfPowerEdgesNm, vegaFromAbIn } from './band-data.js';
+export type { Band, Bands, BandsTable } from './band-data.js';
+export { LINE_IDS, createLines } from './line-data.js';
+export type { LinesTable, ReferenceLine } from './line-data.js';
+export { ATMOSPHERE_HIGH_NM, ATMOSPHERE_LOW_NM, atmosphericRangeAt, createAtmosphere } from './atmosphere-data.js';
+export type { AtmosphereTable, AtmosphericRange } from './atmosphere-data.js';
