@@ -51,7 +51,7 @@ describe('guessing what columns mean', () => {
     ).toEqual({
       name: 'name',
       redshift: 'z',
-      redshiftSigma: 'z_err',
+      redshiftUncertainty: 'z_err',
       magnitude: 'mag',
       magnitudeSigma: 'mag_err',
       magnitudeBand: 'band',

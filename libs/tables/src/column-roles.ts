@@ -6,7 +6,7 @@ export type ColumnRole =
   | 'rightAscension'
   | 'declination'
   | 'redshift'
-  | 'redshiftSigma'
+  | 'redshiftUncertainty'
   | 'magnitude'
   | 'magnitudeSigma'
   | 'magnitudeBand'
@@ -105,7 +105,7 @@ const headerWords: Readonly<Record<ColumnRole, readonly string[]>> = {
     'spectroscopicredshift',
     'photometricredshift',
   ],
-  redshiftSigma: [
+  redshiftUncertainty: [
     'redshiftsigma',
     'redshifterror',
     'redshifterr',
@@ -378,7 +378,7 @@ function cellsFit(role: ColumnRole, cells: readonly string[]): Fit {
       return agreement(cells, (cell) => isSexagesimal(cell) || numberBetween(cell, -90, 90));
     case 'redshift':
       return agreement(cells, (cell) => numberBetween(cell, -0.1, 15));
-    case 'redshiftSigma':
+    case 'redshiftUncertainty':
       return agreement(cells, (cell) => numberBetween(cell, 0, 5));
     case 'magnitude':
       return agreement(cells, (cell) => numberBetween(cell, 8, 35));

@@ -1,4 +1,4 @@
-import { BandId, type MagnitudeSystem } from '@faintward/contracts/light';
+import { BandId, type MagnitudeSystem, type RedshiftKind } from '@faintward/contracts/light';
 import type { ImportRole } from '@faintward/contracts/targets';
 import { headerUnit } from '@faintward/tables';
 
@@ -64,4 +64,9 @@ export function headerBrightness(header: string): HeaderBrightness {
     if (band !== undefined) said.bandId ??= band === 'K' ? 'Ks' : BandId.parse(band);
   }
   return said;
+}
+
+/** Where the redshifts of a column come from, as its header says: `zphot`, `photo-z`, `redshift (photometric)`. */
+export function headerRedshiftKind(header: string): RedshiftKind {
+  return /phot/i.test(header) ? 'photometric' : 'spectroscopic';
 }

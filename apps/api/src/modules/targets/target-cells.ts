@@ -1,9 +1,10 @@
 import type { FieldError } from '@faintward/contracts/errors';
-import type { Light } from '@faintward/contracts/light';
+import type { Light, RedshiftUncertainty } from '@faintward/contracts/light';
 import { type TargetCells, TargetInput } from '@faintward/contracts/targets';
 import { parseDeclination, parsePosition, parseRightAscension } from '@faintward/astronomy';
 import { parseDecimal } from '@faintward/tables';
 import { type BrightnessDefaults, parseBrightness } from './brightness-text.js';
+import { parseRedshiftUncertainty } from './redshift-uncertainty-text.js';
 
 /** The fields of a target that cells can set. */
 export interface CellValues {
@@ -11,7 +12,7 @@ export interface CellValues {
   rightAscensionDeg?: number;
   declinationDeg?: number;
   redshift?: number;
-  redshiftSigma?: number | null;
+  redshiftUncertainty?: RedshiftUncertainty | null;
   light?: Light | null;
   notes?: string;
 }
@@ -22,10 +23,19 @@ export interface CellsReading {
   warnings: Partial<Record<keyof TargetCells, string>>;
 }
 
+/** What cells are read against. */
+export interface CellDefaults {
+  brightness: BrightnessDefaults;
+  /** The redshift given beside the cells, or stored: what an uncertainty is measured from when no cell says another. */
+  redshift?: number | undefined;
+  /** What an uncertainty cell replaces; absent for a new target. */
+  present?: { redshift: number; uncertainty: RedshiftUncertainty | null } | undefined;
+}
+
 const fields = TargetInput.shape;
 
 /** Reads texts as typed. A cell that cannot be used gets an error that says what would be right, and sets nothing. */
-export function readCells(cells: TargetCells, brightness: BrightnessDefaults): CellsReading {
+export function readCells(cells: TargetCells, { brightness, redshift: given, present }: CellDefaults): CellsReading {
   const reading: CellsReading = { values: {}, errors: {}, warnings: {} };
   const { values, errors, warnings } = reading;
   if (cells.name !== undefined) {
@@ -35,15 +45,18 @@ export function readCells(cells: TargetCells, brightness: BrightnessDefaults): C
   }
   readPosition(cells, reading);
   if (cells.redshift !== undefined) {
-    const redshift = readNumber(cells.redshift, fields.redshift, 'A redshift is needed, such as 7.12.');
+    const redshift = readRedshift(cells.redshift);
     if (typeof redshift === 'number') values.redshift = redshift;
     else errors.redshift = redshift.message;
   }
-  if (cells.redshiftSigma !== undefined) {
-    const text = cells.redshiftSigma.trim();
-    const sigma = text === '' ? null : readNumber(text.replace(/^(?:±|\+\/-|\+-)\s*/u, ''), fields.redshiftSigma, '');
-    if (sigma === null || typeof sigma === 'number') values.redshiftSigma = sigma;
-    else errors.redshiftSigma = sigma.message;
+  if (cells.redshiftUncertainty !== undefined) {
+    const redshift = cells.redshift === undefined ? given : values.redshift;
+    const parsed = parseRedshiftUncertainty(cells.redshiftUncertainty, { redshift, present });
+    if (!parsed.ok) errors.redshiftUncertainty = parsed.message;
+    else if (parsed.uncertainty !== undefined) {
+      values.redshiftUncertainty = parsed.uncertainty;
+      if (parsed.warning !== undefined) warnings.redshiftUncertainty = parsed.warning;
+    }
   }
   if (cells.brightness !== undefined) {
     const parsed = parseBrightness(cells.brightness, brightness);
@@ -85,14 +98,13 @@ function readPosition(cells: TargetCells, { values, errors }: CellsReading): voi
   }
 }
 
-type NumberSchema = typeof fields.redshift | typeof fields.redshiftSigma;
-
-function readNumber(text: string, schema: NumberSchema, emptyMessage: string): number | { message: string } {
+function readRedshift(text: string): number | { message: string } {
   const parsed = parseDecimal(text);
-  if (!parsed.ok) return { message: parsed.code === 'empty' && emptyMessage !== '' ? emptyMessage : parsed.message };
-  const checked = schema.safeParse(parsed.value);
-  if (checked.success) return checked.data ?? parsed.value;
-  return { message: checked.error.issues[0]?.message ?? 'Out of range.' };
+  if (!parsed.ok) {
+    return { message: parsed.code === 'empty' ? 'A redshift is needed, such as 7.12.' : parsed.message };
+  }
+  const checked = fields.redshift.safeParse(parsed.value);
+  return checked.success ? checked.data : { message: checked.error.issues[0]?.message ?? 'Out of range.' };
 }
 
 function messageOf(error: { issues: { message: string }[] }, emptyMessage: string, text: string): string {

@@ -8,6 +8,7 @@ import {
   type TargetCells,
   type TargetInput,
 } from '@faintward/contracts/targets';
+import type { RedshiftKind } from '@faintward/contracts/light';
 import { designationFromPosition } from '@faintward/astronomy';
 import {
   type ColumnRole,
@@ -19,7 +20,8 @@ import {
 import { lightFaults } from '../../engine/light.js';
 import { DomainError } from '../../platform/domain-error.js';
 import { mapInSlices } from '../../engine/slices.js';
-import { foreignUnitError, headerBrightness, withColumnUnit } from './column-units.js';
+import { foreignUnitError, headerBrightness, headerRedshiftKind, withColumnUnit } from './column-units.js';
+import { uncertaintyFaults } from './redshift-uncertainty-text.js';
 import { readCells } from './target-cells.js';
 
 type TargetRole = Exclude<ImportRole, 'ignore'>;
@@ -49,7 +51,7 @@ const ROLE_NAMES: Readonly<Record<TargetRole, string>> = {
   rightAscension: 'the right ascension',
   declination: 'the declination',
   redshift: 'the redshift',
-  redshiftSigma: 'the uncertainty of the redshift',
+  redshiftUncertainty: 'the uncertainty of the redshift',
   brightness: 'the brightness',
   notes: 'notes',
 };
@@ -63,6 +65,7 @@ interface Reading {
   brightness: BrightnessDefaults;
   /** Said at each brightness when the header and the person differ. */
   brightnessWarning: string | undefined;
+  redshiftKind: RedshiftKind;
 }
 
 /**
@@ -96,6 +99,7 @@ export async function readTargetTable({ text, options }: ImportRequest): Promise
     brightnessWarning: differs
       ? `Taken as ${brightness.bandId}, ${brightness.system}, as the header of the column says.`
       : undefined,
+    redshiftKind: headerRedshiftKind(headers[columnOf.get('redshift') ?? -1] ?? ''),
   };
   const cutRows = new Map(
     table.issues.filter(({ code }) => code === 'long-row').map(({ row, message }) => [row, message]),
@@ -130,7 +134,7 @@ const ROLE_OF_GUESS: Readonly<Partial<Record<ColumnRole, TargetRole>>> = {
   rightAscension: 'rightAscension',
   declination: 'declination',
   redshift: 'redshift',
-  redshiftSigma: 'redshiftSigma',
+  redshiftUncertainty: 'redshiftUncertainty',
   magnitude: 'brightness',
   notes: 'notes',
 };
@@ -173,7 +177,7 @@ function unitErrors(headers: readonly string[], roles: readonly ImportRole[]): s
 function readRow(
   texts: readonly string[],
   lineNumber: number,
-  { columnOf, headers, brightness, brightnessWarning }: Reading,
+  { columnOf, headers, brightness, brightnessWarning, redshiftKind }: Reading,
   cutMessage: string | undefined,
 ): TableRow {
   const cells: PreviewRow['cells'] = texts.map((text) => ({ text: shortened(text) }));
@@ -185,7 +189,12 @@ function readRow(
     headers[columnOf.get('rightAscension') ?? -1] ?? '',
   );
   if (given.rightAscension !== undefined) given.rightAscension = rightAscension.text;
-  const { values, errors, warnings } = readCells(given, brightness);
+  const isDistribution = /^\s*p\(z\)/i.test(given.redshiftUncertainty ?? '');
+  if (isDistribution) given.redshiftUncertainty = '';
+  const { values, errors, warnings } = readCells(given, { brightness });
+  if (isDistribution) {
+    warnings.redshiftUncertainty = 'A distribution does not fit into a cell: the target is imported without it.';
+  }
   if (rightAscension.warning !== undefined) warnings.rightAscension ??= rightAscension.warning;
   if (brightnessWarning !== undefined && isBareNumber(given.brightness)) warnings.brightness ??= brightnessWarning;
   for (const [role, message] of Object.entries(errors) as [TargetRole, string][]) mark(role, 'error', message);
@@ -206,13 +215,14 @@ function readRow(
     rightAscensionDeg,
     declinationDeg,
     redshift,
-    redshiftSigma: values.redshiftSigma ?? null,
+    redshiftUncertainty: values.redshiftUncertainty ?? null,
+    redshiftKind,
     light: values.light ?? null,
     extent: { kind: 'point' },
     notes: values.notes ?? '',
   };
-  for (const { path, message } of lightFaults(target)) {
-    const role = path === 'redshift' ? 'redshift' : 'brightness';
+  for (const { path, message } of [...lightFaults(target), ...uncertaintyFaults(target)]) {
+    const role = path === 'redshift' ? path : path.startsWith('light') ? 'brightness' : 'redshiftUncertainty';
     mark(role, 'error', message);
     return { lineNumber, cells, rowErrors, target: undefined };
   }

@@ -2,7 +2,8 @@ import { formatDeclination, formatRightAscension } from '@faintward/astronomy';
 import type { Notice } from '@faintward/contracts/common';
 import type { Target } from '@faintward/contracts/targets';
 import type { targets } from '../../database/schema/targets.js';
-import { formatBrightness } from './brightness-text.js';
+import { formatBrightness } from './brightness-format.js';
+import { formatRedshiftUncertainty } from './redshift-uncertainty-text.js';
 
 export interface TargetWithSums {
   target: typeof targets.$inferSelect;
@@ -20,7 +21,9 @@ export function toTarget({ target, observationCount, requestedSeconds }: TargetW
     rightAscensionText: formatRightAscension(target.rightAscensionDeg),
     declinationText: formatDeclination(target.declinationDeg),
     redshift: target.redshift,
-    redshiftSigma: target.redshiftSigma,
+    redshiftUncertainty: target.redshiftUncertainty,
+    redshiftUncertaintyText: formatRedshiftUncertainty(target.redshiftUncertainty, target.redshift),
+    redshiftKind: target.redshiftKind,
     light: target.light,
     brightnessText: formatBrightness(target.light),
     extent: target.extent,

@@ -46,13 +46,13 @@ export class TargetsQueries {
   /** Many targets in one statement: all values travel as one JSON parameter. */
   async insertMany(proposalId: string, rows: readonly NewTargetRow[]): Promise<void> {
     await this.database.current().execute(sql`
-      insert into ${targets} (proposal_id, position, name, right_ascension_deg, declination_deg, redshift, redshift_sigma,
-        light, extent, notes, computed)
-      select ${proposalId}::uuid, position, name, "rightAscensionDeg", "declinationDeg", redshift, "redshiftSigma",
-        light, extent, notes, computed
+      insert into ${targets} (proposal_id, position, name, right_ascension_deg, declination_deg, redshift,
+        redshift_uncertainty, redshift_kind, light, extent, notes, computed)
+      select ${proposalId}::uuid, position, name, "rightAscensionDeg", "declinationDeg", redshift,
+        "redshiftUncertainty", "redshiftKind", light, extent, notes, computed
       from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb) as given(position int, name text, "rightAscensionDeg" float8,
-        "declinationDeg" float8, redshift float8, "redshiftSigma" float8, light jsonb, extent jsonb, notes text,
-        computed jsonb)`);
+        "declinationDeg" float8, redshift float8, "redshiftUncertainty" jsonb, "redshiftKind" text, light jsonb, extent jsonb,
+        notes text, computed jsonb)`);
   }
 
   async update(targetId: string, values: TargetInput & { computed: TargetComputed }): Promise<void> {

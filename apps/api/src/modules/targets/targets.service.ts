@@ -1,10 +1,9 @@
-import type { FieldError } from '@faintward/contracts/errors';
+import type { Light } from '@faintward/contracts/light';
 import {
   type CosmicTime,
   MAX_TARGET_COUNT,
   type NewTarget,
   type Target,
-  type TargetCells,
   type TargetInput,
   type TargetListQuery,
   type TargetPatch,
@@ -14,17 +13,16 @@ import { writeDelimitedText } from '@faintward/tables';
 import { Injectable } from '@nestjs/common';
 import { DatabaseService } from '../../database/transaction.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
-import { lightFaults } from '../../engine/light.js';
 import { ProposalSkies } from '../../engine/proposal-sky.service.js';
 import { computeTargetColumns } from '../../engine/target-columns.js';
 import type { Actor } from '../../platform/actor.js';
-import { DomainError, notFound, staleVersion } from '../../platform/domain-error.js';
+import { DomainError, invalidField, notFound, staleVersion } from '../../platform/domain-error.js';
 import { differences, HistoryService } from '../../platform/history.js';
 import { toPage } from '../../platform/pagination.js';
-import { validationFailed } from '../../platform/validation.js';
 import { ObservationEstimates } from '../observations/observation-estimates.service.js';
 import { ProposalAccess, type ProposalForMember } from '../proposals/proposal-access.service.js';
-import { cellFaults, readCells } from './target-cells.js';
+import { SpectraReadModel } from '../spectra/spectra.read-model.js';
+import { completeInput, inputOf, patchedInput } from './target-inputs.js';
 import { TargetRecomputation } from './target-recomputation.service.js';
 import { EXPORT_COLUMNS, exportRow } from './targets-table.js';
 import { TargetsQueries } from './targets.queries.js';
@@ -45,6 +43,7 @@ export class TargetsService {
     private readonly recomputation: TargetRecomputation,
     private readonly observations: ObservationEstimates,
     private readonly skies: ProposalSkies,
+    private readonly spectra: SpectraReadModel,
     private readonly history: HistoryService,
   ) {}
 
@@ -90,7 +89,8 @@ export class TargetsService {
     return this.database.transaction(async () => {
       const proposal = await this.access.requireTargetsForChange(actor, proposalId);
       requireRoom((await this.readModel.count(proposalId)) + 1);
-      const values = complete(input);
+      const values = completeInput(input);
+      await this.requireSpectrum(proposalId, values);
       const targetId = await this.queries.insert(proposalId, {
         ...values,
         position: (await this.queries.lastPosition(proposalId)) + 1,
@@ -126,9 +126,10 @@ export class TargetsService {
       if (stored === undefined) throw notFound('target');
       if (stored.version !== version) throw staleVersion(await this.getStored(proposalId, targetId));
       const before = inputOf(stored);
-      const after = patched(before, patch);
+      const after = patchedInput(before, patch);
       const details = differences(before, after);
       if (Object.keys(details).length === 0) return this.getStored(proposalId, targetId);
+      if ('light' in details) await this.requireSpectrum(proposalId, after);
       await this.queries.update(targetId, { ...after, computed: await this.compute(proposal, after) });
       if ('redshift' in details || 'light' in details || 'extent' in details) {
         await this.observations.recompute(proposalId, proposal.cosmology, [targetId]);
@@ -175,6 +176,16 @@ export class TargetsService {
     });
   }
 
+  /** @throws {DomainError} `validation-failed` where the light names a spectrum that the proposal does not have */
+  private async requireSpectrum(proposalId: string, { light }: Pick<TargetInput, 'light'>): Promise<void> {
+    const spectrumId = uploadedSpectrumOf(light);
+    if (spectrumId === undefined || (await this.spectra.exists(proposalId, spectrumId))) return;
+    throw invalidField(
+      'light.spectrum.spectrumId',
+      'This proposal has no such spectrum. Upload it, or choose another one.',
+    );
+  }
+
   private async compute(proposal: ProposalForMember, values: TargetInput) {
     const sky = await this.skies.ofSemester(proposal.semesterId);
     const [computed] = await computeTargetColumns([values], chooseCosmology(proposal.cosmology), sky);
@@ -198,77 +209,7 @@ export function requireRoom(targetCount: number): void {
   );
 }
 
-const REQUIRED = [
-  ['name', 'name', 'A name is needed.'],
-  ['rightAscensionDeg', 'rightAscension', 'A right ascension is needed, such as 10:00:28.6 or 150.1192.'],
-  ['declinationDeg', 'declination', 'A declination is needed, such as -27:48:18 or -27.805.'],
-  ['redshift', 'redshift', 'A redshift is needed, such as 7.12.'],
-] as const satisfies readonly (readonly [keyof TargetInput, keyof TargetCells, string])[];
-
-/** @throws {DomainError} `validation-failed` naming every field that is missing or cannot be used */
-function complete({ cells, ...typed }: NewTarget): TargetInput {
-  const { values, faults } = withCells(typed, cells, null);
-  for (const [field, cell, message] of REQUIRED) {
-    if (values[field] !== undefined || faults.some(({ path }) => path === `cells.${cell}`)) continue;
-    faults.push({ path: cells === undefined ? field : `cells.${cell}`, message });
-  }
-  const { name, rightAscensionDeg, declinationDeg, redshift } = values;
-  if (
-    faults.length > 0 ||
-    name === undefined ||
-    rightAscensionDeg === undefined ||
-    declinationDeg === undefined ||
-    redshift === undefined
-  ) {
-    throw validationFailed(faults);
-  }
-  return requireFitting(
-    {
-      name,
-      rightAscensionDeg,
-      declinationDeg,
-      redshift,
-      redshiftSigma: values.redshiftSigma ?? null,
-      light: values.light ?? null,
-      extent: values.extent ?? { kind: 'point' },
-      notes: values.notes ?? '',
-    },
-    cells,
-  );
-}
-
-function patched(before: TargetInput, { cells, ...typed }: TargetPatch): TargetInput {
-  const { values, faults } = withCells(typed, cells, before.light);
-  if (faults.length > 0) throw validationFailed(faults);
-  const given = Object.fromEntries(Object.entries(values).filter(([, value]) => value !== undefined));
-  return requireFitting({ ...before, ...(given as Partial<TargetInput>) }, cells);
-}
-
-/** A cell counts before a typed value of the same field. */
-function withCells(
-  typed: Partial<TargetInput>,
-  cells: TargetCells | undefined,
-  present: TargetInput['light'],
-): { values: Partial<TargetInput>; faults: FieldError[] } {
-  if (cells === undefined) return { values: typed, faults: [] };
-  const reading = readCells(cells, { present: typed.light ?? present, bandId: 'V', system: 'AB' });
-  return { values: { ...typed, ...reading.values }, faults: cellFaults(reading.errors) };
-}
-
-/** Errors of values that do not fit each other stand at the cell, where the value came from one. */
-function requireFitting(values: TargetInput, cells: TargetCells | undefined): TargetInput {
-  const faults = lightFaults(values).map(({ path, message }) => {
-    if (path === 'redshift' && cells?.redshift !== undefined) return { path: 'cells.redshift', message };
-    if (path.startsWith('light') && cells?.brightness !== undefined) return { path: 'cells.brightness', message };
-    // The redshift was there before; what was typed now is the light.
-    if (path === 'redshift' && cells?.brightness !== undefined) return { path: 'cells.brightness', message };
-    return { path, message };
-  });
-  if (faults.length > 0) throw validationFailed(faults);
-  return values;
-}
-
-function inputOf(stored: TargetInput): TargetInput {
-  const { name, rightAscensionDeg, declinationDeg, redshift, redshiftSigma, light, extent, notes } = stored;
-  return { name, rightAscensionDeg, declinationDeg, redshift, redshiftSigma, light, extent, notes };
+function uploadedSpectrumOf(light: Light | null): string | undefined {
+  if (light === null || !('spectrum' in light)) return undefined;
+  return light.spectrum.kind === 'uploaded' ? light.spectrum.spectrumId : undefined;
 }
