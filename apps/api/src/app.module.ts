@@ -9,6 +9,7 @@ import { AwardsModule } from './modules/awards/awards.module.js';
 import { EstimatesModule } from './modules/estimates/estimates.module.js';
 import { FacilitiesModule } from './modules/facilities/facilities.module.js';
 import { HealthModule } from './modules/health/health.module.js';
+import { LightModule } from './modules/light/light.module.js';
 import { ObservationsModule } from './modules/observations/observations.module.js';
 import { PanelsModule } from './modules/panels/panels.module.js';
 import { PeopleModule } from './modules/people/people.module.js';
@@ -31,6 +32,7 @@ const SUBJECTS = [
   EstimatesModule,
   FacilitiesModule,
   HealthModule,
+  LightModule,
   ObservationsModule,
   PanelsModule,
   PeopleModule,

@@ -4,6 +4,7 @@ import { Ledger, ledgerInput, type LedgerInput } from './ledger.js';
 import { LIGHT_STEPS, type LightStepId } from './light-steps.js';
 import { lensingMag } from './lensing.js';
 import { curveValueAt, firstAbove, type SampledCurve } from './sampled-curve.js';
+import type { RestLine } from './source-spectra.js';
 import type { ContinuumLight, LuminosityDistances, NoLight } from './source-light.js';
 import {
   abMagnitudeOfFrequency,
@@ -183,6 +184,19 @@ export class ArrivingContinuum {
     return {
       arrives: this.factorAtRest(restNm, EVERYTHING),
       unabsorbed: this.factorAtRest(restNm, { ...NOTHING, hostDust: true }),
+    };
+  }
+
+  /** A narrow line of the spectrum as it arrives; undefined where the light has no scale of its own or nothing arrives. */
+  lineStrength(line: RestLine): { fluxErgSCm2: number; observedEquivalentWidthNm: number } | undefined {
+    const normalisation = this.normalisationMag();
+    const continuum = curveValueAt(this.light.spectrum.continuum, line.restWavelengthNm);
+    if (typeof normalisation !== 'number' || !(continuum > 0)) return undefined;
+    const { arrives } = this.lineFactors(line.restWavelengthNm);
+    return {
+      // The scale is that of λ² f_λ at rest wavelengths: a flux per rest wavelength falls by 1 + z where it is observed.
+      fluxErgSCm2: (line.flux / this.stretch) * arrives * 10 ** (-0.4 * normalisation),
+      observedEquivalentWidthNm: (line.flux / continuum) * this.stretch,
     };
   }
 

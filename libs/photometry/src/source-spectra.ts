@@ -13,6 +13,7 @@ export { powerLawSpectrum } from './sources/power-law.js';
 export { BOLTZMANN_CONSTANT } from './sources/blackbody.js';
 export { NARROW_LINE_WIDTH_KM_S } from './sources/rest-spectrum.js';
 export type { RestLine, RestSpectrum, SpectrumCaution } from './sources/rest-spectrum.js';
+export type { SampledSource } from './sources/sampled.js';
 export { supernovaPhaseMag } from './sources/supernova.js';
 export { SOURCE_TEMPLATE_FILE_NAMES, sourceTemplates } from './sources/templates.js';
 export type { ReferenceFile, SourceTemplateFiles, SourceTemplates } from './sources/templates.js';

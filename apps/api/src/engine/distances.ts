@@ -83,7 +83,7 @@ function beyondAntipode(redshifts: readonly number[], antipodeRedshift: number) 
   );
 }
 
-function toDistanceRow(row: EngineRow): DistanceRow {
+export function toDistanceRow(row: EngineRow): DistanceRow {
   return {
     redshift: row.redshift,
     comovingDistanceMpc: row.comovingDistanceMpc,

@@ -2,25 +2,27 @@ import type { FieldError } from '@faintward/contracts/errors';
 import type { Conditions, Estimate, EstimateRequest, Goal } from '@faintward/contracts/estimates';
 import type { ModeConfiguration, Site } from '@faintward/contracts/facilities';
 import type { Extent, Light } from '@faintward/contracts/light';
+import { AntipodeError } from '@faintward/cosmology';
 import {
   type Estimate as EngineEstimate,
   type EstimateInput,
   estimate,
-  type Extent as EngineExtent,
   DITHER_MINIMUM_COUNT,
   ENGINE_VERSION,
   OutOfDomainError,
 } from '@faintward/exposure';
 import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
-import { lightFaults, toEngineLight } from './light.js';
+import { toEngineExtent } from './extent.js';
+import { lightFaults, NO_UPLOADS, resolveLight, type UploadedSpectra } from './light.js';
+import { lightData } from './light-data.js';
+import { arrive, ultravioletMagnitudeOf } from './source.js';
 
 /** What a target is to an estimate. */
 export interface EstimateTarget {
   redshift: number;
   light: Light;
   extent: Extent;
-  magnification?: number | undefined;
 }
 
 /** Telescope, site and mode, whether the observatory's or typed in full. */
@@ -38,6 +40,8 @@ export interface EstimatePlan {
   conditions: Conditions;
   apertureRadiusArcsec?: number | undefined;
   wavelengthNm?: number | undefined;
+  /** Spectra that lights of these targets name. */
+  uploaded?: UploadedSpectra | undefined;
 }
 
 export type EstimateOutcome = { ok: true; estimate: Estimate } | { ok: false; faults: FieldError[] };
@@ -50,6 +54,8 @@ export type EstimateOutcome = { ok: true; estimate: Estimate } | { ok: false; fa
  */
 export function estimator(plan: EstimatePlan): (target: EstimateTarget) => EstimateOutcome {
   const { telescope, mode } = plan.setup;
+  const { cosmology, uploaded = NO_UPLOADS } = plan;
+  const { version: referenceDataVersion } = lightData();
   const { zenithSeeingArcsec, outerScaleM } = plan.setup.site;
   const shared: Omit<EstimateInput, 'target'> = {
     cosmology: plan.cosmology.distances,
@@ -62,24 +68,30 @@ export function estimator(plan: EstimatePlan): (target: EstimateTarget) => Estim
     ...(plan.wavelengthNm === undefined ? {} : { wavelengthNm: plan.wavelengthNm }),
   };
   // The plan is the same for thousands of targets: its part of the hashed text is written once.
-  const planJson = canonicalJson({ ...shared, cosmology: plan.cosmology.parameters });
+  const planJson = canonicalJson({ ...shared, cosmology: cosmology.parameters, referenceDataVersion });
   return (target) => {
-    const faults = lightFaults(target, 'target.');
+    const faults = lightFaults({ ...target, uploaded }, 'target.');
     if (faults.length > 0) return { ok: false, faults };
     const inputHash = sha256(`{"plan":${planJson},"target":${canonicalJson(target)}}`);
     try {
+      const { redshift, light, extent } = target;
+      const setting = { redshift, cosmology, uploaded };
       const computed = estimate({
         ...shared,
         target: {
-          redshift: target.redshift,
-          light: toEngineLight(target.light, mode),
-          extent: toEngineExtent(target.extent),
-          ...(target.magnification === undefined ? {} : { magnification: target.magnification }),
+          redshift,
+          light: resolveLight(light, setting, mode),
+          extent: toEngineExtent(extent, {
+            redshift,
+            absoluteMagnitudeUv:
+              extent.kind === 'typical' ? ultravioletMagnitudeOf(arrive(light, extent, setting)) : undefined,
+          }),
         },
       });
-      return { ok: true, estimate: toEstimate(computed, plan.cosmology.id, inputHash) };
+      return { ok: true, estimate: toEstimate(computed, cosmology.id, referenceDataVersion, inputHash) };
     } catch (error) {
-      if (error instanceof OutOfDomainError) return { ok: false, faults: [toFault(error)] };
+      if (error instanceof OutOfDomainError) return { ok: false, faults: [toFault(error, target.light)] };
+      if (error instanceof AntipodeError) return { ok: false, faults: [antipodeFault(error)] };
       throw error;
     }
   };
@@ -118,28 +130,17 @@ export function goalFaults(goal: Goal, mode: ModeConfiguration): FieldError[] {
   return faults;
 }
 
-function toEngineExtent(extent: Extent): EngineExtent {
-  switch (extent.kind) {
-    case 'point':
-    case 'uniform':
-      return { kind: extent.kind };
-    case 'sersic':
-      return {
-        kind: 'sersic',
-        index: extent.sersicIndex,
-        axisRatio: extent.axisRatio,
-        ...(extent.unit === 'kpc'
-          ? { halfLightRadiusKpc: extent.halfLightRadius }
-          : { halfLightRadiusArcsec: extent.halfLightRadius }),
-      };
-  }
-}
-
-function toEstimate(computed: EngineEstimate, cosmologyId: string, inputHash: string): Estimate {
+function toEstimate(
+  computed: EngineEstimate,
+  cosmologyId: string,
+  referenceDataVersion: string,
+  inputHash: string,
+): Estimate {
   const { warnings, ...rest } = computed;
   return {
     ...rest,
     cosmologyId,
+    referenceDataVersion,
     inputHash,
     notices: warnings.map(({ code, message }) => ({ code, message, severity: 'warning' })),
   };
@@ -147,23 +148,41 @@ function toEstimate(computed: EngineEstimate, cosmologyId: string, inputHash: st
 
 /** Names of the engine's fields that differ from those of the request. */
 const REQUEST_NAMES: readonly (readonly [RegExp, string])[] = [
-  [/^target\.light\.absoluteMagnitudeAb$/, 'target.light.magnitudeAb'],
-  [/^target\.light\.lineFluxErgSCm2$/, 'target.light.fluxErgSCm2'],
-  [/^target\.light\.lineLuminosityErgS$/, 'target.light.luminosityErgS'],
-  [/^target\.light\.intrinsicWidthKmS$/, 'target.light.velocityWidthKmS'],
-  [/^target\.light\.slopeBeta$/, 'target.light.spectralSlopeBeta'],
   [/^target\.extent\.halfLightRadius(Kpc|Arcsec)$/, 'target.extent.halfLightRadius'],
   [/^target\.extent\.index$/, 'target.extent.sersicIndex'],
   [/^(mode|site|telescope)\./, 'setup.$1.'],
 ];
 
-function toFault(error: OutOfDomainError): FieldError {
+function toFault(error: OutOfDomainError, light: Light): FieldError {
   let path = error.field;
-  // Of an apparent magnitude the request names the value without its system.
-  if (path === 'target.light.magnitudeAb') path = 'target.light.magnitude';
+  if (path === 'target.light.amount' || path === 'target.light.magnitude') path = `target.light.${amountOf(light)}`;
   for (const [pattern, replacement] of REQUEST_NAMES) path = path.replace(pattern, replacement);
   const given = typeof error.value === 'number' || typeof error.value === 'string' ? `; ${error.value} was given` : '';
   return { path, message: `Must be ${error.allowed}${given}.` };
+}
+
+/** The field of a light that its brightness stands in. */
+function amountOf(light: Light): string {
+  switch (light.kind) {
+    case 'lineFlux':
+      return 'fluxErgSCm2';
+    case 'lineLuminosity':
+      return 'luminosityErgS';
+    case 'starFormationRate':
+      return 'solarMassesPerYear';
+    case 'typical':
+      return 'of';
+    case 'apparentMagnitude':
+    case 'absoluteMagnitude':
+      return 'magnitude';
+  }
+}
+
+function antipodeFault(error: AntipodeError): FieldError {
+  return {
+    path: 'target.redshift',
+    message: `This closed universe has its antipode at redshift ${error.allowed.maximum.toPrecision(6)}; beyond it nothing can be computed.`,
+  };
 }
 
 /** An estimate for somebody who has no proposal. */

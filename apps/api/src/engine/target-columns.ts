@@ -1,23 +1,24 @@
 import type { Notice } from '@faintward/contracts/common';
+import type { FieldError } from '@faintward/contracts/errors';
 import type { Extent, Light } from '@faintward/contracts/light';
 import type { TargetComputed } from '@faintward/contracts/targets';
 import { type MonthsUp, type MonthsUpPlan, monthsUpWithPlan } from '@faintward/astronomy';
 import { type DistanceRow, distanceRows } from '@faintward/cosmology';
-import { ENGINE_VERSION, OPAQUE_FOREST_REDSHIFT } from '@faintward/exposure';
+import { ENGINE_VERSION } from '@faintward/exposure';
 import {
-  apparentMagnitudeAtRestWavelength,
-  arcsecFromKpc,
-  BANDS,
-  LYMAN_ALPHA_NM,
-  LYMAN_LIMIT_NM,
-  meanEffectiveSurfaceBrightness,
-  redshiftBandwidthMag,
+  type ArrivingContinuum,
+  type ArrivingLight,
+  atmosphericRangeAt,
   surfaceBrightnessDimmingMag,
 } from '@faintward/photometry';
 import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
-import { apparentMagnitudeAbOf, lightFaults } from './light.js';
+import { resolveExtent } from './extent.js';
+import { apparentMagnitudeAbOf, lightFaults, NO_UPLOADS, type UploadedSpectra } from './light.js';
+import { lightData } from './light-data.js';
+import { meanSurfaceBrightnessOf } from './light-report.js';
 import { mapInSlices } from './slices.js';
+import { arrive, defaultBandOf, GRID_BANDS, lightNotices, ultravioletMagnitudeOf } from './source.js';
 
 /** The part of a target that its columns are computed from. */
 export interface TargetInputs {
@@ -41,6 +42,7 @@ export async function computeTargetColumns(
   targets: readonly TargetInputs[],
   cosmology: ChosenCosmology,
   sky: SkyOfSemester,
+  uploaded: UploadedSpectra = NO_UPLOADS,
 ): Promise<TargetComputed[]> {
   const rows = distanceRows(
     cosmology.model,
@@ -50,6 +52,7 @@ export async function computeTargetColumns(
     altitudeLimitDeg: sky.plan.altitudeLimitDeg,
     cosmology: cosmology.parameters,
     endsOn: sky.endsOn,
+    referenceDataVersion: lightData().version,
     site: sky.plan.site,
     startsOn: sky.startsOn,
     usefulHours: sky.plan.usefulHours,
@@ -58,20 +61,32 @@ export async function computeTargetColumns(
   return mapInSlices(targets, (target, index) => {
     const distances = rows[index];
     if (distances === undefined) throw new Error('A batch of distances is shorter than its targets.');
-    return columnsOf(target, distances, cosmology, sky, sharedJson);
+    return columnsOf(target, distances, { cosmology, sky, uploaded, sharedJson });
   });
 }
 
-function columnsOf(
-  target: TargetInputs,
-  distances: DistanceRow,
-  cosmology: ChosenCosmology,
-  sky: SkyOfSemester,
-  sharedJson: string,
-): TargetComputed {
+interface Shared {
+  cosmology: ChosenCosmology;
+  sky: SkyOfSemester;
+  uploaded: UploadedSpectra;
+  /** What all targets have in common, as hashed. */
+  sharedJson: string;
+}
+
+function columnsOf(target: TargetInputs, distances: DistanceRow, shared: Shared): TargetComputed {
+  const { cosmology, sky, uploaded, sharedJson } = shared;
   const { redshift, light, extent } = target;
-  const magnitudes = magnitudesOf(target, distances);
-  const halfLightRadiusArcsec = halfLightRadiusOf(extent, distances.kpcPerArcsec);
+  const faults = lightFaults({ ...target, uploaded });
+  const arriving =
+    light === null || faults.length > 0 ? undefined : arrive(light, extent, { redshift, cosmology, uploaded });
+  const magnitudes = magnitudesOf(target, arriving);
+  const size = resolveExtent(extent, {
+    redshift,
+    kpcPerArcsec: distances.kpcPerArcsec,
+    magnification: light?.magnification ?? 1,
+    absoluteMagnitudeUv: extent.kind === 'typical' && arriving ? ultravioletMagnitudeOf(arriving) : undefined,
+  });
+  const halfLightRadiusArcsec = size?.halfLightRadiusArcsec ?? null;
   const up = monthsUpWithPlan({ raDeg: target.rightAscensionDeg, decDeg: target.declinationDeg }, sky.plan);
   const inputs = {
     declinationDeg: target.declinationDeg,
@@ -90,68 +105,72 @@ function columnsOf(
     perFrequencyDimmingMag: surfaceBrightnessDimmingMag(redshift, 'perUnitFrequency'),
     bolometricDimmingMag: surfaceBrightnessDimmingMag(redshift, 'bolometric'),
     ...magnitudes,
+    ...lineOf(arriving),
     halfLightRadiusArcsec,
-    surfaceBrightnessAbMagPerArcsec2: surfaceBrightnessOf(
-      target,
-      magnitudes.apparentMagnitudeAb,
-      halfLightRadiusArcsec,
+    surfaceBrightnessAbMagPerArcsec2: meanSurfaceBrightnessOf(
+      extent,
+      size,
+      // The columns of a surface leave the apparent magnitude empty: what is given is per square arcsecond.
+      extent.kind === 'uniform' ? quotedMagnitudeOf(light, arriving) : magnitudes.apparentMagnitudeAb,
     ),
     upSummary: summaryOf(up),
     upHoursByMonth: up.months.map(({ month, hoursUp }) => ({ month, hoursPerNight: hoursUp })),
-    notices: noticesOf(target, up, halfLightRadiusArcsec, sky),
+    notices: noticesOf(target, faults, arriving, up, halfLightRadiusArcsec, sky),
     cosmologyId: cosmology.id,
     engineVersion: ENGINE_VERSION,
+    referenceDataVersion: lightData().version,
     inputHash: sha256(`{"shared":${sharedJson},"target":${canonicalJson(inputs)}}`),
   };
 }
 
-type Magnitudes = Pick<TargetComputed, 'apparentMagnitudeAb' | 'magnitudeLabel' | 'absoluteMagnitudeAb'>;
+type Magnitudes = Pick<
+  TargetComputed,
+  'apparentMagnitudeAb' | 'magnitudeLabel' | 'absoluteMagnitudeAb' | 'bandMagnitudesAb'
+>;
 
 /** The brightness of a surface is per square arcsecond, and that of a line no magnitude: both leave these columns empty. */
-function magnitudesOf({ light, extent, redshift }: TargetInputs, distances: DistanceRow): Magnitudes {
-  const none = { apparentMagnitudeAb: null, magnitudeLabel: null, absoluteMagnitudeAb: null };
-  if (light === null || extent.kind === 'uniform') return none;
-  const modulus = distances.distanceModulusMag;
-  switch (light.kind) {
-    case 'apparentMagnitude': {
-      const apparentMagnitudeAb = apparentMagnitudeAbOf(light) ?? null;
-      const hasDistance = modulus !== undefined && apparentMagnitudeAb !== null;
-      return {
-        apparentMagnitudeAb,
-        magnitudeLabel: light.bandId,
-        // At the rest wavelength that is observed in the band, so that no colour enters.
-        absoluteMagnitudeAb: hasDistance ? apparentMagnitudeAb - modulus - redshiftBandwidthMag(redshift) : null,
-      };
-    }
-    case 'absoluteMagnitude':
-      return {
-        apparentMagnitudeAb:
-          modulus === undefined ? null : apparentMagnitudeAtRestWavelength(light.magnitudeAb, modulus, redshift),
-        magnitudeLabel: modulus === undefined ? null : `at ${Math.round(light.restWavelengthNm * (1 + redshift))} nm`,
-        absoluteMagnitudeAb: light.magnitudeAb,
-      };
-    case 'lineFlux':
-    case 'lineLuminosity':
-      return none;
+function magnitudesOf({ light, extent }: TargetInputs, arriving: ArrivingLight | undefined): Magnitudes {
+  if (light === null || arriving === undefined || arriving.kind === 'line' || extent.kind === 'uniform') {
+    return { apparentMagnitudeAb: null, magnitudeLabel: null, absoluteMagnitudeAb: null, bandMagnitudesAb: {} };
   }
+  const { bands } = lightData();
+  const bandId = defaultBandOf(light, arriving);
+  const apparent = arriving.magnitudeIn(bands[bandId].response);
+  const hasMagnitude = typeof apparent === 'number';
+  return {
+    apparentMagnitudeAb: hasMagnitude ? apparent : null,
+    magnitudeLabel: hasMagnitude ? bandId : null,
+    absoluteMagnitudeAb: arriving.absoluteMagnitudeAt(quotedRestWavelengthNm(arriving)) ?? null,
+    bandMagnitudesAb: Object.fromEntries(
+      GRID_BANDS.map((id) => {
+        const found = id === bandId ? apparent : arriving.magnitudeIn(bands[id].response);
+        return [id, typeof found === 'number' ? found : null];
+      }),
+    ),
+  };
 }
 
-function halfLightRadiusOf(extent: Extent, kpcPerArcsec: number | undefined): number | null {
-  if (extent.kind !== 'sersic') return null;
-  if (extent.unit === 'arcsec') return extent.halfLightRadius;
-  return kpcPerArcsec === undefined ? null : arcsecFromKpc(extent.halfLightRadius, kpcPerArcsec);
+/** Where the absolute magnitude is said: as it was given, or at the rest wavelength that is observed in the band. */
+function quotedRestWavelengthNm({ light, redshift }: ArrivingContinuum): number {
+  const { at, frame } = light;
+  const wavelengthNm =
+    at.kind === 'response' ? at.response.pivotWavelengthNm : at.kind === 'range' ? NaN : at.wavelengthNm;
+  return frame === 'rest' ? wavelengthNm : wavelengthNm / (1 + redshift);
 }
 
-function surfaceBrightnessOf(
-  { light, extent }: TargetInputs,
-  apparentMagnitudeAb: number | null,
-  halfLightRadiusArcsec: number | null,
-): number | null {
-  if (extent.kind === 'uniform') {
-    return light?.kind === 'apparentMagnitude' ? (apparentMagnitudeAbOf(light) ?? null) : null;
-  }
-  if (extent.kind === 'point' || apparentMagnitudeAb === null || halfLightRadiusArcsec === null) return null;
-  return meanEffectiveSurfaceBrightness(apparentMagnitudeAb, halfLightRadiusArcsec, extent.axisRatio);
+function quotedMagnitudeOf(light: Light | null, arriving: ArrivingLight | undefined): number | null {
+  if (light?.kind !== 'apparentMagnitude' || arriving === undefined) return null;
+  return apparentMagnitudeAbOf(light) ?? null;
+}
+
+function lineOf(
+  arriving: ArrivingLight | undefined,
+): Pick<TargetComputed, 'lineObservedWavelengthNm' | 'lineFluxErgSCm2'> {
+  if (arriving?.kind !== 'line') return { lineObservedWavelengthNm: null, lineFluxErgSCm2: null };
+  return {
+    lineObservedWavelengthNm: arriving.observedWavelengthNm,
+    lineFluxErgSCm2: arriving.fluxErgSCm2() ?? null,
+  };
 }
 
 const MONTH_NAMES = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
@@ -179,32 +198,23 @@ function monthName(month: string): string {
 
 function noticesOf(
   target: TargetInputs,
+  faults: readonly FieldError[],
+  arriving: ArrivingLight | undefined,
   up: MonthsUp,
   halfLightRadiusArcsec: number | null,
   sky: SkyOfSemester,
 ): Notice[] {
-  const { light, redshift } = target;
+  const { light } = target;
   const notices: Notice[] = [];
   const warn = (code: string, message: string, field: string, severity: Notice['severity'] = 'warning') =>
     notices.push({ code, message, severity, field });
   if (light === null) {
     warn('noBrightness', 'No brightness yet: nothing can be planned with this target.', 'light');
   } else {
-    for (const { path, message } of lightFaults(target)) warn('lightUnusable', message, path, 'error');
+    for (const { path, message } of faults) warn('lightUnusable', message, path, 'error');
+    notices.push(...lightNotices(light));
   }
-  if (light?.kind === 'apparentMagnitude') {
-    const isOpaque = redshift >= OPAQUE_FOREST_REDSHIFT.value;
-    const edgeNm = (isOpaque ? LYMAN_ALPHA_NM : LYMAN_LIMIT_NM) * (1 + redshift);
-    const band = BANDS[light.bandId];
-    if (band.wavelengthHighNm <= edgeNm) {
-      warn(
-        'beyondLymanBreak',
-        `At redshift ${redshift} hydrogen absorbs the light short of ${Math.round(edgeNm)} nm, and the ${band.label} band ends at ` +
-          `${band.wavelengthHighNm} nm. Is the band or the redshift another one?`,
-        'light.bandId',
-      );
-    }
-  }
+  if (arriving !== undefined) addLightWarnings(arriving, warn);
   if (up.state === 'never-up') {
     warn(
       'neverUp',
@@ -227,4 +237,35 @@ function noticesOf(
     );
   }
   return notices;
+}
+
+/** What a light meets on its way that a person would want to know while typing the list. */
+function addLightWarnings(
+  arriving: ArrivingLight,
+  warn: (code: string, message: string, field: string, severity?: Notice['severity']) => void,
+): void {
+  const { atmosphere } = lightData();
+  if (arriving.kind === 'line') {
+    const nm = arriving.observedWavelengthNm;
+    const range = atmosphericRangeAt(atmosphere, nm);
+    if (arriving.fluxErgSCm2() === undefined) {
+      warn('lineAbsorbed', 'Hydrogen between the galaxies takes all light of this line at this redshift.', 'redshift');
+    }
+    if (range === undefined) {
+      warn('lineOutsideAtmosphere', `The line falls at ${nmText(nm)}, where nothing reaches the ground.`, 'redshift');
+    } else if (range.kind === 'gap') {
+      warn('lineInGap', `The line falls at ${nmText(nm)}, in a gap of the atmosphere (${range.label}).`, 'redshift');
+    }
+    return;
+  }
+  const { at, frame } = arriving.light;
+  if (at.kind !== 'response' || frame !== 'observed') return;
+  const found = arriving.magnitudeIn(at.response);
+  if (typeof found !== 'number') {
+    warn('beyondLymanBreak', `${found.message} Is the band or the redshift another one?`, 'light.bandId');
+  }
+}
+
+function nmText(wavelengthNm: number): string {
+  return wavelengthNm < 1000 ? `${wavelengthNm.toFixed(1)} nm` : `${(wavelengthNm / 1000).toFixed(3)} µm`;
 }

@@ -6,6 +6,8 @@ import { canonicalJson } from '../../engine/canonical-json.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
 import { inBatches, mapInSlices } from '../../engine/slices.js';
 import { estimator, type EstimateOutcome, type EstimateTarget } from '../../engine/estimates.js';
+import { NO_UPLOADS, type UploadedSpectra } from '../../engine/light.js';
+import { ProposalSpectra } from '../../engine/proposal-spectra.service.js';
 import { FacilitiesReadModel, type ModeSetup } from '../facilities/facilities.read-model.js';
 import { TargetsReadModel } from '../targets/targets.read-model.js';
 import { ObservationsQueries } from './observations.queries.js';
@@ -44,6 +46,7 @@ export class ObservationEstimates {
     private readonly queries: ObservationsQueries,
     private readonly facilities: FacilitiesReadModel,
     private readonly targets: TargetsReadModel,
+    private readonly spectra: ProposalSpectra,
   ) {}
 
   /** A function from targets to what is stored of their estimates under one plan. */
@@ -51,12 +54,14 @@ export class ObservationEstimates {
     mode: ModeSetup,
     cosmology: CosmologyChoice,
     plan: ObservationPlan,
+    uploaded: UploadedSpectra = NO_UPLOADS,
   ): (target: LitTarget) => EstimateColumns {
     const estimateOf = estimator({
       cosmology: chooseCosmology(cosmology),
       setup: { telescope: mode.telescope, site: mode.site, mode: mode.configuration },
       goal: plan.goal,
       conditions: plan.conditions,
+      uploaded,
     });
     return ({ redshift, light, extent }) => {
       const outcome = light === null ? undefined : estimateOf({ redshift, light, extent } satisfies EstimateTarget);
@@ -103,6 +108,10 @@ export class ObservationEstimates {
     const lit = new Map(
       (await this.targets.listInputs(proposalId, targetIds)).map((target) => [target.targetId, target]),
     );
+    const uploaded = await this.spectra.ofLights(
+      proposalId,
+      [...lit.values()].map(({ light }) => light),
+    );
     const byPlan = new Map<string, (target: LitTarget) => EstimateColumns>();
     return mapInSlices(rows, (row) => {
       const mode = modes.get(row.modeId);
@@ -114,7 +123,7 @@ export class ObservationEstimates {
       const known = memo.get(memoKey);
       if (known !== undefined) return { observationId: row.observationId, ...known };
       const planKey = canonicalJson([row.modeId, row.goal, row.conditions, row.repeatCount]);
-      const columnsOf = byPlan.get(planKey) ?? this.columnsFor(mode, cosmology, row);
+      const columnsOf = byPlan.get(planKey) ?? this.columnsFor(mode, cosmology, row, uploaded);
       byPlan.set(planKey, columnsOf);
       const columns = columnsOf(target);
       memo.set(memoKey, columns);

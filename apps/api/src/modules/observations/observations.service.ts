@@ -9,6 +9,7 @@ import type {
 import type { Goal } from '@faintward/contracts/estimates';
 import { Injectable } from '@nestjs/common';
 import { canonicalJson } from '../../engine/canonical-json.js';
+import { ProposalSpectra } from '../../engine/proposal-spectra.service.js';
 import { goalFaults } from '../../engine/estimates.js';
 import { inBatches, mapInSlices } from '../../engine/slices.js';
 import { DatabaseService } from '../../database/transaction.js';
@@ -37,6 +38,7 @@ export class ObservationsService {
     private readonly estimates: ObservationEstimates,
     private readonly targets: TargetsReadModel,
     private readonly facilities: FacilitiesReadModel,
+    private readonly spectra: ProposalSpectra,
     private readonly history: HistoryService,
   ) {}
 
@@ -136,7 +138,8 @@ export class ObservationsService {
       const mode = await this.getMode(plan.modeId, plan.goal, before.modeId);
       const [target] = await this.targets.listInputs(proposalId, [before.targetId]);
       if (target === undefined) throw new Error(`Observation ${observationId} has no target.`);
-      const columns = this.estimates.columnsFor(mode, proposal.cosmology, plan)(target);
+      const uploaded = await this.spectra.ofLights(proposalId, [target.light]);
+      const columns = this.estimates.columnsFor(mode, proposal.cosmology, plan, uploaded)(target);
       await this.queries.update(observationId, { ...plan, ...columns });
       const { modeId, goal, conditions, repeatCount } = before;
       await this.history.record({
@@ -179,14 +182,18 @@ export class ObservationsService {
 
   /** Versions grow with every change: what stands in the memo under all of them is still right. */
   private async estimateAll(
-    { cosmology }: ProposalForMember,
+    { proposalId, cosmology }: ProposalForMember,
     mode: ModeSetup,
     plan: ObservationPlan,
     targets: readonly StoredTargetInputs[],
     memo: EstimateMemo,
   ): Promise<NewObservationRow[]> {
     const context = `${mode.configurationVersion} ${canonicalJson(cosmology)}`;
-    const columnsOf = this.estimates.columnsFor(mode, cosmology, plan);
+    const uploaded = await this.spectra.ofLights(
+      proposalId,
+      targets.map(({ light }) => light),
+    );
+    const columnsOf = this.estimates.columnsFor(mode, cosmology, plan, uploaded);
     return mapInSlices(targets, (target) => {
       const key = `${target.targetId} ${target.version} ${context}`;
       const columns = memo.get(key) ?? columnsOf(target);

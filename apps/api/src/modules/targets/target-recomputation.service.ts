@@ -3,6 +3,8 @@ import type { TargetComputed } from '@faintward/contracts/targets';
 import { findCloseDuplicates } from '@faintward/astronomy';
 import { Injectable } from '@nestjs/common';
 import { chooseCosmology } from '../../engine/cosmologies.js';
+import type { UploadedSpectra } from '../../engine/light.js';
+import { ProposalSpectra } from '../../engine/proposal-spectra.service.js';
 import { ProposalSkies } from '../../engine/proposal-sky.service.js';
 import { inBatches } from '../../engine/slices.js';
 import { computeTargetColumns, type SkyOfSemester } from '../../engine/target-columns.js';
@@ -29,6 +31,7 @@ export class TargetRecomputation {
     private readonly readModel: TargetsReadModel,
     private readonly skies: ProposalSkies,
     private readonly observations: ObservationEstimates,
+    private readonly spectra: ProposalSpectra,
   ) {}
 
   /** Everything of a proposal: after a change of its cosmology, or to bring old results to this version of the engine. */
@@ -42,7 +45,12 @@ export class TargetRecomputation {
     const sky = await this.skies.ofSemester(semesterId);
     const known = prepared?.sky === sky ? prepared.columns : new Map<string, TargetComputed>();
     const missing = rows.filter((row) => !known.has(keyOf(row)));
-    const computed = await computeTargetColumns(missing, chooseCosmology(cosmology), sky);
+    const computed = await computeTargetColumns(
+      missing,
+      chooseCosmology(cosmology),
+      sky,
+      await this.uploadedOf(proposalId, missing),
+    );
     missing.forEach((row, index) => {
       const columns = computed[index];
       if (columns !== undefined) known.set(keyOf(row), columns);
@@ -64,13 +72,25 @@ export class TargetRecomputation {
   async prepareAll(proposalId: string, semesterId: string, cosmology: CosmologyChoice): Promise<PreparedRecomputation> {
     const rows = await this.readModel.listInputs(proposalId, 'all');
     const sky = await this.skies.ofSemester(semesterId);
-    const computed = await computeTargetColumns(rows, chooseCosmology(cosmology), sky);
+    const computed = await computeTargetColumns(
+      rows,
+      chooseCosmology(cosmology),
+      sky,
+      await this.uploadedOf(proposalId, rows),
+    );
     const columns = new Map<string, TargetComputed>();
     rows.forEach((row, index) => {
       const of = computed[index];
       if (of !== undefined) columns.set(keyOf(row), of);
     });
     return { sky, columns, estimates: await this.observations.prepare(proposalId, cosmology) };
+  }
+
+  private uploadedOf(proposalId: string, rows: readonly StoredTargetInputs[]): Promise<UploadedSpectra> {
+    return this.spectra.ofLights(
+      proposalId,
+      rows.map(({ light }) => light),
+    );
   }
 
   /** Finds again which targets share a place; after targets came, went, moved or were renamed. */
