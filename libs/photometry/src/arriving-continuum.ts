@@ -17,7 +17,7 @@ import {
 import { forestTransmission, galacticDustOf, hostDustOn, perFrequency } from './way.js';
 
 /** Below this share of its photons a band is dark: the mean models say nothing reliable about the rest. */
-export const DARK_TRANSMISSION = 1e-3;
+export const DARK_TRANSMISSION = 0.01;
 /** Part of a band's photons of a flat f_ν that a spectrum must reach to stand for the band. */
 const NEEDED_COVERAGE = 0.5;
 const FULL_COVERAGE = 0.99;

@@ -182,7 +182,7 @@ export class ArrivingLine {
     return this.whyOutside(response) ?? this.whyAbsorbed();
   }
 
-  private whyOutside({ lowNm, highNm }: Response): NoLight | undefined {
+  private whyOutside({ passLowNm: lowNm, passHighNm: highNm }: Response): NoLight | undefined {
     if (this.observedWavelengthNm >= lowNm && this.observedWavelengthNm <= highNm) return undefined;
     return {
       code: 'lineOutsideBand',

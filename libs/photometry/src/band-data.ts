@@ -78,22 +78,8 @@ export function createBands({ data }: { readonly data: BandsTable }): Bands {
 
 function bandOf({ wavelengthsNm, response, ...row }: BandRow): Band {
   const curve = sampledCurve(wavelengthsNm, response);
-  const [wavelengthLowNm, wavelengthHighNm] = halfPowerEdgesNm(curve);
-  const { pivotWavelengthNm } = responseOf(curve);
-  return { ...row, curve, pivotWavelengthNm, wavelengthLowNm, wavelengthHighNm };
-}
-
-/** First and last wavelength at which a response that begins and ends below half of its peak crosses that half. */
-export function halfPowerEdgesNm({ wavelengthsNm, values }: SampledCurve): [lowNm: number, highNm: number] {
-  const half = Math.max(...values) / 2;
-  const first = values.findIndex((value) => value >= half);
-  const last = values.findLastIndex((value) => value >= half);
-  const crossing = (inside: number, outside: number): number => {
-    if (outside < 0 || outside >= values.length) return wavelengthsNm[inside]!;
-    const part = (values[inside]! - half) / (values[inside]! - values[outside]!);
-    return wavelengthsNm[inside]! + part * (wavelengthsNm[outside]! - wavelengthsNm[inside]!);
-  };
-  return [crossing(first, first - 1), crossing(last, last + 1)];
+  const { pivotWavelengthNm, passLowNm, passHighNm } = responseOf(curve);
+  return { ...row, curve, pivotWavelengthNm, wavelengthLowNm: passLowNm, wavelengthHighNm: passHighNm };
 }
 
 /**

@@ -127,6 +127,7 @@ export {
   abMagnitudeOfPhotons,
   fluxPerNmOfAbMagnitude,
   frequencyIntegral,
+  halfPowerEdgesNm,
   janskyOfFrequency,
   linePhotonIntegral,
   photonIntegral,
@@ -185,7 +186,7 @@ export type {
 } from './typical-values.js';
 export { halfLightRadiusAfterSeeing, imageRegime } from './seeing-size.js';
 export type { ImageRegime } from './seeing-size.js';
-export { BAND_IDS, abFromVegaIn, createBands, findBandIn, halfPowerEdgesNm, vegaFromAbIn } from './band-data.js';
+export { BAND_IDS, abFromVegaIn, createBands, findBandIn, vegaFromAbIn } from './band-data.js';
 export type { Band, Bands, BandsTable } from './band-data.js';
 export { LINE_IDS, createLines } from './line-data.js';
 export type { LinesTable, ReferenceLine } from './line-data.js';

@@ -2,7 +2,8 @@
 import { describe, expect, it } from 'vitest';
 import { photometryFiles, referenceContents } from '../../../tests/factories/photometry-files.js';
 import { ATMOSPHERE_HIGH_NM, ATMOSPHERE_LOW_NM, atmosphericRangeAt, createAtmosphere } from './atmosphere-data.js';
-import { abFromVegaIn, BAND_IDS, createBands, findBandIn, halfPowerEdgesNm, vegaFromAbIn } from './band-data.js';
+import { abFromVegaIn, BAND_IDS, createBands, findBandIn, vegaFromAbIn } from './band-data.js';
+import { halfPowerEdgesNm } from './synthetic.js';
 import { createLines, LINE_IDS } from './line-data.js';
 import { PHOTOMETRY_FILE_NAMES, photometryFilesFrom, referenceMetaOf, ReferenceFileError } from './reference-files.js';
 import { curveValueAt, sampledCurve } from './sampled-curve.js';

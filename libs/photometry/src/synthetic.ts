@@ -13,6 +13,9 @@ export interface Response {
   readonly curve: SampledCurve;
   readonly lowNm: number;
   readonly highNm: number;
+  /** Outermost wavelengths at which the response is at least half of its peak: what counts as inside for a line. */
+  readonly passLowNm: number;
+  readonly passHighNm: number;
   /** ∫ S d ln λ: the photons of a flat f_ν. */
   readonly logIntegral: number;
   /** λ_p² = ∫ λ S dλ / ∫ S dλ/λ: relates mean f_λ and f_ν whatever the spectrum. */
@@ -34,10 +37,13 @@ export function responseOf(curve: SampledCurve): Response {
     photonWeighted += simpson(x[i]!, x[i + 1]!, s[i]!, s[i + 1]!, 1, 1);
   }
   if (!(logIntegral > 0)) throw new OutOfDomainError('response', logIntegral, 'above 0 somewhere');
+  const [passLowNm, passHighNm] = halfPowerEdgesNm(curve);
   return {
     curve,
     lowNm: x[0]!,
     highNm: x[x.length - 1]!,
+    passLowNm,
+    passHighNm,
     logIntegral,
     pivotWavelengthNm: Math.sqrt(photonWeighted / logIntegral),
   };
@@ -55,6 +61,19 @@ export function responseShare({ curve, logIntegral }: Response, lowNm: number, h
     sum += (s[i]! - slope * x[i]!) * Math.log(right / left) + slope * (right - left);
   }
   return sum / logIntegral;
+}
+
+/** First and last wavelength at which a response crosses half of its peak, or its ends where it begins or ends above that. */
+export function halfPowerEdgesNm({ wavelengthsNm, values }: SampledCurve): [lowNm: number, highNm: number] {
+  const half = Math.max(...values) / 2;
+  const first = values.findIndex((value) => value >= half);
+  const last = values.findLastIndex((value) => value >= half);
+  const crossing = (inside: number, outside: number): number => {
+    if (outside < 0 || outside >= values.length) return wavelengthsNm[inside]!;
+    const part = (values[inside]! - half) / (values[inside]! - values[outside]!);
+    return wavelengthsNm[inside]! + part * (wavelengthsNm[outside]! - wavelengthsNm[inside]!);
+  };
+  return [crossing(first, first - 1), crossing(last, last + 1)];
 }
 
 /** ∫ λ f S dλ over one piece on which f and S are straight: a cubic, for which Simpson's rule is exact. */

@@ -4,12 +4,11 @@ import {
   COSMOLOGY_PRESETS,
   type Cosmology,
   createCosmology,
-  distanceRows,
   InvalidCosmologyError,
   NoBigBangError,
   OutOfDomainError,
 } from '@faintward/cosmology';
-import type { DistanceModel } from '@faintward/exposure';
+import { type DistanceModel, tabulatedDistances } from '@faintward/exposure';
 import { validationFailed } from '../platform/validation.js';
 import { canonicalJson, sha256 } from './canonical-json.js';
 
@@ -118,18 +117,7 @@ function chosenOf(model: Cosmology, id: string, title: string, source: string | 
     neutrinoMassesEv: [...neutrinoMassesEv],
     ...(omegaDarkEnergy === undefined ? {} : { omegaDarkEnergy }),
   };
-  return { id, title, source, parameters, model, distances: distancesOf(model) };
-}
-
-/** Through the tables of the batch functions, so that an estimate and the target grid use the very same distance. */
-function distancesOf(model: Cosmology): DistanceModel {
-  return {
-    luminosityDistanceMpc: (redshift) => {
-      const [row] = distanceRows(model, [redshift]);
-      if (row === undefined) throw new Error('A batch of one redshift gave no row.');
-      return row.luminosityDistanceMpc;
-    },
-  };
+  return { id, title, source, parameters, model, distances: tabulatedDistances(model) };
 }
 
 /** The presets as the api lists them. */

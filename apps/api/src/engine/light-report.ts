@@ -123,9 +123,9 @@ function rangeOf(wanted: BandId | null, light: Light, arriving: ArrivingLight): 
   const { response, label } = bands[bandId];
   if (wanted === null && arriving.kind === 'line') {
     const { observedWavelengthNm: nm } = arriving;
-    if (nm < response.lowNm || nm > response.highNm) {
+    if (nm < response.passLowNm || nm > response.passHighNm) {
       const around = responseOf(boxCurve(nm * (1 - AROUND_LINE / 2), nm * (1 + AROUND_LINE / 2)));
-      return { bandId: null, label: `1 % around the line`, response: around };
+      return { bandId: null, label: '1 % around the line', response: around };
     }
   }
   return { bandId, label, response };

@@ -63,7 +63,7 @@ export function uncertaintyOf(
         lineId,
         label,
         observedWavelengthNm: quantilesBy((p) => restNm * (1 + distribution.quantile(p))),
-        insideBandProbability: shareOf(observed, (nm) => nm >= response.lowNm && nm <= response.highNm),
+        insideBandProbability: shareOf(observed, (nm) => nm >= response.passLowNm && nm <= response.passHighNm),
         insideWindowProbability: shareOf(
           observed,
           (nm) => atmosphericRangeAt(lightData().atmosphere, nm)?.kind === 'window',
