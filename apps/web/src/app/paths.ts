@@ -6,7 +6,8 @@ export interface PathOf<Parameters extends unknown[]> {
 
 const fixed = (pattern: string): PathOf<[]> => ({ pattern, to: () => pattern });
 
-export type ProposalSectionPath = 'targets' | 'exposures' | 'time' | 'case' | 'team' | 'submit' | 'history';
+export type ProposalSectionPath =
+  'targets' | 'exposures' | 'time' | 'case' | 'team' | 'submit' | 'history' | 'cosmologies';
 
 export const paths = {
   front: fixed('/'),
@@ -21,7 +22,9 @@ export const paths = {
   profile: fixed('/profile'),
   mailbox: fixed('/mailbox'),
   distances: fixed('/calculators/distances'),
+  source: fixed('/calculators/source'),
   exposure: fixed('/calculators/exposure'),
+  sources: fixed('/sources'),
   proposals: fixed('/proposals'),
   newProposal: fixed('/proposals/new'),
   proposal: { pattern: '/proposals/:proposalId', to: (proposalId: string) => `/proposals/${proposalId}` },
@@ -29,6 +32,10 @@ export const paths = {
   proposalSection: {
     pattern: ':section',
     to: (proposalId: string, section: ProposalSectionPath) => `/proposals/${proposalId}/${section}`,
+  },
+  target: {
+    pattern: '/proposals/:proposalId/targets/:targetId',
+    to: (proposalId: string, targetId: string) => `/proposals/${proposalId}/targets/${targetId}`,
   },
   reviews: fixed('/reviews'),
   review: { pattern: '/reviews/:proposalId', to: (proposalId: string) => `/reviews/${proposalId}` },

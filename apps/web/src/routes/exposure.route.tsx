@@ -10,8 +10,9 @@ import {
   offeredModes,
   readSketch,
   toRequest,
+  unknownInAddress,
   writeSketch,
-  type SketchField,
+  type SketchErrors,
 } from '../features/exposure/sketch';
 import { ApiError } from '../lib/api';
 import { facilityQueries } from '../lib/queries/facilities';
@@ -27,6 +28,7 @@ import { Panel } from '../ui/Panel';
 export function Component() {
   const [address, setAddress] = useSearchParams();
   const [typed, setTyped] = useState(() => readSketch(address));
+  const [unknown] = useState(() => unknownInAddress(address));
   const announce = useNotices();
   const telescopes = useQuery(facilityQueries.telescopes());
   const modes = useMemo(() => offeredModes(telescopes.data?.rows ?? []), [telescopes.data]);
@@ -43,7 +45,7 @@ export function Component() {
   }, [settled, setAddress]);
 
   const estimate = useQuery({ ...estimateQueries.one(request), enabled: request !== undefined && modes.length > 0 });
-  const serverErrors: Partial<Record<SketchField, string>> = {};
+  const serverErrors: SketchErrors = {};
   if (request && estimate.error instanceof ApiError) {
     for (const { path, message } of estimate.error.fieldErrors) {
       const field = fieldOf(path, settled);
@@ -80,6 +82,13 @@ export function Component() {
             }}
           >
             <Panel>
+              {unknown.length > 0 && (
+                <Box sx={{ mb: 2 }}>
+                  <Note tone="warning">
+                    This link is of another version: {unknown.join(', ')} in it could not be read and stand as usual.
+                  </Note>
+                </Box>
+              )}
               {isUnknownMode && (
                 <Box sx={{ mb: 2 }}>
                   <Note tone="warning">
@@ -91,7 +100,7 @@ export function Component() {
                 sketch={sketch}
                 errors={shownErrors}
                 telescopes={list.rows}
-                onChange={(field, value) => setTyped((old) => ({ ...old, [field]: value }))}
+                onChange={(change) => setTyped((old) => ({ ...old, ...change }))}
               />
             </Panel>
             {modes.length === 0 ? (

@@ -16,6 +16,7 @@ const base = `/proposals/${id(50)}`;
 const feasible: FeasibleEstimate = {
   outcome: 'feasible',
   engineVersion: '0.1.0',
+  referenceDataVersion: '2026-12',
   inputHash: 'abcdef0123456789',
   cosmologyId: 'planck18',
   steps: [],

@@ -2,20 +2,18 @@ import { Id } from '@faintward/contracts/common';
 import { TargetSort } from '@faintward/contracts/targets';
 import { useQuery } from '@tanstack/react-query';
 import { useCallback, useMemo } from 'react';
-import { useSearchParams } from 'react-router-dom';
-import { observationQueries } from '../features/observations/api/observations';
-import { TargetObservations } from '../features/observations/components/TargetObservations';
+import { Navigate, useLocation, useNavigate, useSearchParams } from 'react-router-dom';
+import { paths } from '../app/paths';
 import { useProposal } from '../features/proposals/components/useProposal';
-import { distancesBeside, targetQueries } from '../features/targets/api/targets';
-import { TargetSheet } from '../features/targets/components/TargetSheet';
+import { targetQueries } from '../features/targets/api/targets';
 import { TargetsView } from '../features/targets/components/TargetsView';
+import { readOnlyReason } from '../features/targets/words';
 import { useTableParams } from '../lib/useTableParams';
-import { Loaded } from '../ui/PageStates';
 
 /** The longest page that the table shows at once; there may be thousands of rows. */
 const pageSize = 100;
 
-/** The targets, and the sheet of the one that the address names. */
+/** The targets along cosmic time and as a table. An address that names one leads to its sheet. */
 export function Component() {
   const { proposalId, abilities, state } = useProposal();
   const [address, setAddress] = useSearchParams();
@@ -47,7 +45,12 @@ export function Component() {
     }),
     [table, address, change],
   );
-  const open = useCallback((id: string) => change({ target: id }, false), [change]);
+  const navigate = useNavigate();
+  const { search } = useLocation();
+  const open = useCallback(
+    (id: string) => void navigate(paths.target.to(proposalId, id), { state: { search } }),
+    [navigate, proposalId, search],
+  );
 
   const page = useQuery(
     targetQueries.list(proposalId, {
@@ -60,45 +63,18 @@ export function Component() {
     }),
   );
   const cosmicTime = useQuery(targetQueries.cosmicTime(proposalId));
-  const target = useQuery({ ...targetQueries.one(proposalId, targetId ?? ''), enabled: targetId !== undefined });
-  const beside = useQuery({
-    ...distancesBeside('conv70', target.data?.redshift ?? 0),
-    enabled: target.data !== undefined,
-  });
-  const observations = useQuery({
-    ...observationQueries.list(proposalId, { targetId: targetId ?? '', pageSize }),
-    enabled: targetId !== undefined,
-  });
+  if (targetId !== undefined) return <Navigate replace to={paths.target.to(proposalId, targetId)} />;
   return (
-    <>
-      <TargetsView
-        proposalId={proposalId}
-        page={page}
-        cosmicTime={cosmicTime}
-        params={params}
-        withNotices={withNotices}
-        onWithNotices={(checked) => change({ notices: checked ? '1' : undefined, page: undefined }, true)}
-        canEdit={abilities.canEditTargets}
-        readOnlyReason={
-          state === 'draft' || state === 'submitted'
-            ? 'You may read these targets. The principal investigator can let you edit them, under Team.'
-            : 'The deadline has passed: targets can be read and no longer changed.'
-        }
-        onOpen={open}
-      />
-      <TargetSheet
-        proposalId={proposalId}
-        targetId={targetId}
-        query={target}
-        beside={beside}
-        canEdit={abilities.canEditTargets}
-        observations={
-          <Loaded query={observations} what="Its observations">
-            {(list) => <TargetObservations proposalId={proposalId} observations={list.rows} />}
-          </Loaded>
-        }
-        onClose={() => change({ target: undefined }, true)}
-      />
-    </>
+    <TargetsView
+      proposalId={proposalId}
+      page={page}
+      cosmicTime={cosmicTime}
+      params={params}
+      withNotices={withNotices}
+      onWithNotices={(checked) => change({ notices: checked ? '1' : undefined, page: undefined }, true)}
+      canEdit={abilities.canEditTargets}
+      readOnlyReason={readOnlyReason(state)}
+      onOpen={open}
+    />
   );
 }

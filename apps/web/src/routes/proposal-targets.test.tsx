@@ -1,3 +1,4 @@
+import { Light } from '@faintward/contracts/light';
 import type { CosmicTime, ImportPreview, Target } from '@faintward/contracts/targets';
 import { configure, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
@@ -206,39 +207,89 @@ describe('the targets page', () => {
     expect(seen.find((request) => request.path.endsWith('/removal'))?.body).toEqual({ targetIds: [id(60)] });
   }, 60_000);
 
-  it('opens the sheet that the address names, with the light form', async () => {
+  it('leads to the sheet of the target that an address names', async () => {
     answerWith({
       ...server(),
-      [`GET ${base}/targets/${id(60)}`]: { body: aTarget() },
-      [`GET ${base}/observations`]: { body: { rows: [], rowCount: 0, page: 1, pageSize: 100 } },
-      'POST /distances': problem(503, 'unavailable'),
+      [`GET ${base}/targets/${id(60)}`]: problem(503, 'unavailable'),
+      [`GET ${base}/observations`]: problem(503, 'unavailable'),
     });
-    renderRoute(`${base}/targets?target=${id(60)}`);
-    const sheet = await screen.findByRole('dialog', { name: 'Target CLR J0215−0409' }, wait);
-    expect(within(sheet).getByText('Luminosity distance')).toBeVisible();
-    expect(await within(sheet).findByText(/The dimming could not be loaded/)).toBeVisible();
-    expect(within(sheet).getByRole('textbox', { name: 'Magnitude' })).toHaveValue('26');
+    const { router } = renderRoute(`${base}/targets?target=${id(60)}`);
+    await waitFor(() => expect(router.state.location.pathname).toBe(`${base}/targets/${id(60)}`), wait);
+    expect(await screen.findByText(/The target could not be loaded/, {}, wait)).toBeVisible();
   }, 60_000);
 
-  it('puts a refused light under its field and keeps what was typed', async () => {
+  it('opens a sheet from a name, and remembers the search to come back to', async () => {
+    answerWith(server());
+    const { router } = renderRoute(`${base}/targets?search=CLR`);
+    await userEvent.click(within(await cell('CLR J0215', 'name')).getByRole('button', { name: 'CLR J0215−0409' }));
+    await waitFor(() => expect(router.state.location.pathname).toBe(`${base}/targets/${id(60)}`));
+    expect(router.state.location.state).toEqual({ search: '?search=CLR' });
+  }, 60_000);
+});
+
+describe('the columns of light', () => {
+  const showAll = () =>
+    localStorage.setItem('faintward.targets.columns', JSON.stringify({ 'band-r': true, 'band-J': true }));
+
+  it('show a magnitude with its uncertainty, and words where a band has no light', async () => {
+    showAll();
+    const target = aTarget({ light: { ...aTarget().light!, sigmaMag: 0.1 } });
+    answerWith(server([target]));
+    renderRoute(`${base}/targets`);
+    expect(await cell('CLR J0215', 'apparentMagnitudeAb')).toHaveTextContent('26.00 ± 0.10');
+    expect(await cell('CLR J0215', 'band-J')).toHaveTextContent('26.00');
+    expect(await cell('CLR J0215', 'band-r')).toHaveTextContent(/^no light\. None of its light arrives in r/);
+  }, 60_000);
+
+  it('show a line by its flux and where it is observed, and no magnitude of it in a band', async () => {
+    showAll();
+    const target = aTarget({
+      light: Light.parse({ kind: 'lineFlux', fluxErgSCm2: 1.84e-17, restWavelengthNm: 121.567 }),
+    });
+    Object.assign(target.computed, {
+      apparentMagnitudeAb: null,
+      bandMagnitudesAb: {},
+      lineFluxErgSCm2: 1.84e-17,
+      lineObservedWavelengthNm: 987.124,
+    });
+    answerWith(server([target]));
+    renderRoute(`${base}/targets`);
+    expect(await cell('CLR J0215', 'lineFluxErgSCm2')).toHaveTextContent('1.84 × 10⁻¹⁷');
+    expect(await cell('CLR J0215', 'lineObservedWavelengthNm')).toHaveTextContent('987.12');
+    expect(await cell('CLR J0215', 'band-J')).toHaveTextContent('A line has no magnitude in a band.');
+  }, 60_000);
+
+  it('name the most severe notice and open to all of them', async () => {
+    const target = aTarget();
+    target.computed.notices = [
+      { code: 'smallerThanSeeing', message: 'Smaller than the seeing.', severity: 'note' },
+      { code: 'neverUp', message: 'It is never up in this semester.', severity: 'error' },
+    ];
+    answerWith(server([target]));
+    renderRoute(`${base}/targets`);
+    const notices = await cell('CLR J0215', 'notices');
+    await userEvent.click(within(notices).getByRole('button', { name: 'never up +1' }));
+    const all = await screen.findByRole('dialog', { name: 'CLR J0215−0409' });
+    expect(within(all).getByText('It is never up in this semester.')).toBeVisible();
+    expect(within(all).getByText('Smaller than the seeing.')).toBeVisible();
+  }, 60_000);
+
+  it('take an uncertainty of the redshift with two sides, as typed', async () => {
     const { seen } = answerWith({
       ...server(),
-      [`GET ${base}/targets/${id(60)}`]: { body: aTarget() },
-      [`GET ${base}/observations`]: { body: { rows: [], rowCount: 0, page: 1, pageSize: 100 } },
-      'POST /distances': problem(503, 'unavailable'),
-      [`PATCH ${base}/targets/${id(60)}`]: problem(422, 'validation-failed', {
-        fieldErrors: [{ path: 'light.magnitude', message: 'Too faint to be true.' }],
-      }),
+      [`PATCH ${base}/targets/${id(60)}`]: {
+        body: aTarget({
+          redshiftUncertainty: { kind: 'percentiles', p16: 7.09, p50: 7.12, p84: 7.17 },
+          redshiftUncertaintyText: '+0.05 −0.03',
+          version: 4,
+        }),
+      },
     });
-    renderRoute(`${base}/targets?target=${id(60)}`);
-    const sheet = await screen.findByRole('dialog', { name: 'Target CLR J0215−0409' }, wait);
-    const field = within(sheet).getByRole('textbox', { name: 'Magnitude' });
-    await userEvent.clear(field);
-    await userEvent.type(field, '59');
-    await userEvent.click(within(sheet).getByRole('button', { name: 'Save light and size' }));
-    expect(await within(sheet).findByText('Too faint to be true.')).toBeVisible();
-    expect(field).toHaveValue('59');
-    expect(patches(seen)[0]?.body).toMatchObject({ light: { kind: 'apparentMagnitude', magnitude: 59, bandId: 'J' } });
+    renderRoute(`${base}/targets`);
+    await retype('CLR J0215', 'redshiftUncertainty', '+0.05 -0.03');
+    await waitFor(() => expect(patches(seen)).toHaveLength(1));
+    expect(patches(seen)[0]?.body).toEqual({ cells: { redshiftUncertainty: '+0.05 -0.03' } });
+    await waitFor(() => expect(screen.queryByText(/not stored/)).not.toBeInTheDocument());
   }, 60_000);
 });
 
@@ -284,7 +335,8 @@ describe('importing a table', () => {
     expect(within(faulty).getByText('"abc" is not a number.')).toBeVisible();
     expect(within(dialog).getByText('Line 3, z: "abc" is not a number.')).toBeVisible();
     expect(within(dialog).getByRole('button', { name: 'Import 1 target' })).toBeEnabled();
-    expect(seen.find((request) => request.path.endsWith('/import-preview'))?.body).toMatchObject({
+    // No band and no system: the header may name them, and nobody chose others.
+    expect(seen.find((request) => request.path.endsWith('/import-preview'))?.body).toEqual({
       text: 'id\tz\nA\t7\nB\tabc',
       options: { skipDuplicates: true },
     });

@@ -55,6 +55,7 @@ export const me: Me = {
 export const infeasible: Estimate = {
   outcome: 'infeasible',
   engineVersion: '0.1.0',
+  referenceDataVersion: '2026-12',
   inputHash: 'abcdef0123456789',
   cosmologyId: 'planck18',
   steps: [],

@@ -1,6 +1,7 @@
 import type { Observation } from '@faintward/contracts/observations';
 import type { Proposal, ProposalAbilities } from '@faintward/contracts/proposals';
 import type { Telescope } from '@faintward/contracts/facilities';
+import { Light } from '@faintward/contracts/light';
 import type { Target } from '@faintward/contracts/targets';
 import { id, infeasible } from './examples';
 
@@ -49,8 +50,10 @@ export function aTarget(change: Partial<Target> = {}): Target {
     rightAscensionText: '02 15 30.77',
     declinationText: '−04 09 13.8',
     redshift: 7.12,
-    redshiftSigma: null,
-    light: { kind: 'apparentMagnitude', magnitude: 26, system: 'AB', bandId: 'J', spectralSlopeBeta: -2 },
+    redshiftUncertainty: null,
+    redshiftUncertaintyText: '',
+    redshiftKind: 'spectroscopic',
+    light: Light.parse({ kind: 'apparentMagnitude', magnitude: 26, bandId: 'J' }),
     brightnessText: '26.00 AB (J)',
     extent: { kind: 'point' },
     notes: '',
@@ -66,6 +69,9 @@ export function aTarget(change: Partial<Target> = {}): Target {
       apparentMagnitudeAb: 26,
       magnitudeLabel: 'J',
       absoluteMagnitudeAb: -21.01,
+      bandMagnitudesAb: { g: null, r: null, i: null, z: null, Y: null, J: 26, H: 26.01, Ks: 26.02 },
+      lineObservedWavelengthNm: null,
+      lineFluxErgSCm2: null,
       halfLightRadiusArcsec: null,
       surfaceBrightnessAbMagPerArcsec2: null,
       upSummary: 'Oct–Jan',
@@ -73,6 +79,7 @@ export function aTarget(change: Partial<Target> = {}): Target {
       notices: [],
       cosmologyId: 'planck18',
       engineVersion: '0.1.0',
+      referenceDataVersion: '2026-12',
       inputHash: 'abcdef0123456789',
     },
     observationCount: 0,

@@ -2,30 +2,30 @@ import { EstimateRequest } from '@faintward/contracts/estimates';
 import type { Telescope } from '@faintward/contracts/facilities';
 import { z } from 'zod';
 import { parseNumber } from '../../ui/form/parseNumber';
+import { LightDraft } from '../../ui/light/lightDraft';
+import { lightFieldOf, readLightDraft } from '../../ui/light/readLightDraft';
+
+/** The part of a sketch that describes the source's light and size: a draft that already holds an example of each kind. */
+const light = {
+  ...LightDraft.shape,
+  light: LightDraft.shape.light.transform((kind) => (kind === 'none' ? 'absoluteMagnitude' : kind)),
+  magnitude: z.string().max(500).catch('24.5'),
+  band: LightDraft.shape.band.catch('r'),
+  absolute: z.string().max(500).catch('−21'),
+  flux: z.string().max(500).catch('2e-17'),
+  luminosity: z.string().max(500).catch('1e43'),
+  rate: z.string().max(500).catch('20'),
+  radius: z.string().max(500).catch('0.8'),
+};
 
 /**
  * What the sketchpad holds: texts as typed and choices made, flat, so that a change of kind loses nothing that was typed
  * before. Every field falls back, so that an old or mistyped link still opens a sketch.
  */
 export const Sketch = z.object({
+  ...light,
   redshift: z.string().catch('7.12'),
   cosmology: z.enum(['planck18', 'planck15', 'wmap9', 'conv70', 'ladder73']).catch('planck18'),
-  light: z.enum(['apparentMagnitude', 'absoluteMagnitude', 'lineFlux', 'lineLuminosity']).catch('absoluteMagnitude'),
-  magnitude: z.string().catch('24.5'),
-  system: z.enum(['AB', 'Vega']).catch('AB'),
-  band: z.string().catch('r'),
-  absolute: z.string().catch('−21'),
-  flux: z.string().catch('2e-17'),
-  luminosity: z.string().catch('1e43'),
-  rest: z.string().catch('150'),
-  restLine: z.string().catch('121.567'),
-  slope: z.string().catch('−2'),
-  width: z.string().catch('200'),
-  magnification: z.string().catch(''),
-  extent: z.enum(['point', 'sersic', 'uniform']).catch('point'),
-  radius: z.string().catch('0.8'),
-  radiusUnit: z.enum(['kpc', 'arcsec']).catch('kpc'),
-  sersic: z.string().catch('1'),
   mode: z.string().catch(''),
   goal: z.enum(['signalToNoise', 'lineSignificance', 'exposureTime']).catch('signalToNoise'),
   snr: z.string().catch('5'),
@@ -39,12 +39,19 @@ export const Sketch = z.object({
 });
 export type Sketch = z.output<typeof Sketch>;
 export type SketchField = keyof Sketch;
+export type SketchErrors = Partial<Record<SketchField, string>>;
+
+const defaults = Sketch.parse({});
 
 export function readSketch(address: URLSearchParams): Sketch {
   return Sketch.parse(Object.fromEntries(address));
 }
 
-const defaults = Sketch.parse({});
+/** Names in the address whose content this sketchpad does not know: of another version, or mistyped. */
+export function unknownInAddress(address: URLSearchParams): string[] {
+  const sketch: Record<string, unknown> = readSketch(address);
+  return [...address].filter(([name, value]) => sketch[name] !== value).map(([name]) => name);
+}
 
 export function writeSketch(sketch: Sketch): URLSearchParams {
   const address = new URLSearchParams();
@@ -67,21 +74,10 @@ export function offeredModes(telescopes: readonly Telescope[]) {
   );
 }
 
-/** Which typed field a path of the request came from. */
+/** Which typed field a path of the request came from, beside the source's light and size. */
 const fieldOfPath: Record<string, SketchField> = {
+  cosmology: 'cosmology',
   'target.redshift': 'redshift',
-  'target.light.magnitude': 'magnitude',
-  'target.light.system': 'system',
-  'target.light.bandId': 'band',
-  'target.light.magnitudeAb': 'absolute',
-  'target.light.fluxErgSCm2': 'flux',
-  'target.light.luminosityErgS': 'luminosity',
-  'target.light.spectralSlopeBeta': 'slope',
-  'target.light.velocityWidthKmS': 'width',
-  'target.magnification': 'magnification',
-  'target.extent': 'radius',
-  'target.extent.halfLightRadius': 'radius',
-  'target.extent.sersicIndex': 'sersic',
   setup: 'mode',
   'setup.modeId': 'mode',
   'goal.value': 'snr',
@@ -95,54 +91,13 @@ const fieldOfPath: Record<string, SketchField> = {
 };
 
 export function fieldOf(path: string, sketch: Sketch): SketchField | undefined {
-  if (path === 'target.light.restWavelengthNm') return sketch.light === 'absoluteMagnitude' ? 'rest' : 'restLine';
-  return fieldOfPath[path];
+  return fieldOfPath[path] ?? lightFieldOf(path.replace(/^target\./, ''), sketch);
 }
 
 /** The request that a sketch asks, or what is wrong with which field. */
-export function toRequest(
-  sketch: Sketch,
-):
-  | { request: EstimateRequest; errors: Partial<Record<SketchField, string>> }
-  | { request: undefined; errors: Partial<Record<SketchField, string>> } {
+export function toRequest(sketch: Sketch): { request: EstimateRequest | undefined; errors: SketchErrors } {
   const number = (field: SketchField) => parseNumber(sketch[field]) ?? undefined;
-  const light = {
-    apparentMagnitude: {
-      kind: 'apparentMagnitude',
-      magnitude: number('magnitude'),
-      system: sketch.system,
-      bandId: sketch.band,
-      spectralSlopeBeta: number('slope'),
-    },
-    absoluteMagnitude: {
-      kind: 'absoluteMagnitude',
-      magnitudeAb: number('absolute'),
-      restWavelengthNm: number('rest'),
-      spectralSlopeBeta: number('slope'),
-    },
-    lineFlux: {
-      kind: 'lineFlux',
-      fluxErgSCm2: number('flux'),
-      restWavelengthNm: number('restLine'),
-      velocityWidthKmS: number('width'),
-    },
-    lineLuminosity: {
-      kind: 'lineLuminosity',
-      luminosityErgS: number('luminosity'),
-      restWavelengthNm: number('restLine'),
-      velocityWidthKmS: number('width'),
-    },
-  }[sketch.light];
-  const extent = {
-    point: { kind: 'point' },
-    uniform: { kind: 'uniform' },
-    sersic: {
-      kind: 'sersic',
-      halfLightRadius: number('radius'),
-      unit: sketch.radiusUnit,
-      sersicIndex: number('sersic'),
-    },
-  }[sketch.extent];
+  const source = readLightDraft(sketch);
   const goal = {
     signalToNoise: { kind: 'signalToNoise', value: number('snr'), per: sketch.per, exposureSeconds: number('single') },
     lineSignificance: { kind: 'lineSignificance', sigma: number('snr'), exposureSeconds: number('single') },
@@ -155,7 +110,10 @@ export function toRequest(
   }[sketch.goal];
   const parsed = EstimateRequest.safeParse({
     cosmology: sketch.cosmology,
-    target: { redshift: number('redshift'), light, extent, magnification: number('magnification') },
+    target: {
+      redshift: number('redshift'),
+      ...(source.ok ? { light: source.light, extent: source.extent } : placeholder),
+    },
     setup: { modeId: sketch.mode },
     goal,
     conditions: {
@@ -165,13 +123,18 @@ export function toRequest(
       transparency: sketch.transparency,
     },
   });
-  if (parsed.success) return { request: parsed.data, errors: {} };
-  const errors: Partial<Record<SketchField, string>> = {};
-  for (const issue of parsed.error.issues) {
+  const errors: SketchErrors = source.ok ? {} : { ...source.errors };
+  for (const issue of parsed.error?.issues ?? []) {
     const field = fieldOf(issue.path.join('.'), sketch);
     if (!field) continue;
     errors[field] ??=
       sketch[field] === '' ? (field === 'mode' ? 'Choose an instrument mode.' : 'Needed.') : issue.message;
   }
-  return { request: undefined, errors };
+  return { request: parsed.success && source.ok ? parsed.data : undefined, errors };
 }
+
+/** Stands for a light that cannot be read yet, so that the rest of the sketch is checked all the same. */
+const placeholder = {
+  light: { kind: 'apparentMagnitude', magnitude: 20, bandId: 'V' },
+  extent: { kind: 'point' },
+} as const;

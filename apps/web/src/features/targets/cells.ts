@@ -1,6 +1,5 @@
-import type { Extent } from '@faintward/contracts/light';
+import type { Notice } from '@faintward/contracts/common';
 import type { Target, TargetCells } from '@faintward/contracts/targets';
-import { formatNumber } from '../../lib/format';
 
 export type CellName = keyof TargetCells;
 
@@ -10,7 +9,7 @@ export const cellOfField = {
   rightAscensionDeg: 'rightAscension',
   declinationDeg: 'declination',
   redshift: 'redshift',
-  redshiftSigma: 'redshiftSigma',
+  redshiftUncertainty: 'redshiftUncertainty',
   brightnessText: 'brightness',
   notes: 'notes',
 } as const satisfies Record<string, CellName>;
@@ -26,7 +25,7 @@ export const cellWords: Record<CellName, string> = {
   rightAscension: 'right ascension',
   declination: 'declination',
   redshift: 'redshift',
-  redshiftSigma: 'σ_z',
+  redshiftUncertainty: 'uncertainty of the redshift',
   brightness: 'brightness',
   notes: 'notes',
 };
@@ -42,8 +41,8 @@ export function storedText(target: Target, cell: CellName): string {
       return target.declinationText;
     case 'redshift':
       return String(target.redshift);
-    case 'redshiftSigma':
-      return target.redshiftSigma === null ? '' : String(target.redshiftSigma);
+    case 'redshiftUncertainty':
+      return target.redshiftUncertaintyText;
     case 'brightness':
       return target.brightnessText;
     case 'notes':
@@ -55,17 +54,6 @@ export function storedText(target: Target, cell: CellName): string {
 export function redshiftDecimals(redshift: number): number {
   const decimals = /\.(\d+)$/.exec(String(redshift))?.[1]?.length ?? 0;
   return Math.min(6, Math.max(3, decimals));
-}
-
-export function describeExtent(extent: Extent): string {
-  switch (extent.kind) {
-    case 'point':
-      return 'point';
-    case 'uniform':
-      return 'even surface';
-    case 'sersic':
-      return `${formatNumber(extent.halfLightRadius, { significant: 3 })}${extent.unit === 'kpc' ? '\u202fkpc' : '″'}`;
-  }
 }
 
 /** Notices in two words, for the grid; the whole sentence is in the tooltip and on the sheet. */
@@ -81,4 +69,11 @@ const shortNotices: Record<string, string> = {
 
 export function shortNotice(notice: { code: string; message: string }): string {
   return shortNotices[notice.code] ?? notice.message;
+}
+
+const weight = { error: 2, warning: 1, note: 0 } as const;
+
+/** The most severe first; among equals in the order of the server. */
+export function bySeverity(notices: readonly Notice[]): Notice[] {
+  return notices.toSorted((a, b) => weight[b.severity] - weight[a.severity]);
 }

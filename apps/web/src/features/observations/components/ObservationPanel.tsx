@@ -47,11 +47,7 @@ export function ObservationPanel({ proposalId, observation, telescopes, canEdit,
       <Stack direction="row" sx={{ gap: 2, alignItems: 'flex-start' }}>
         <Box sx={{ flex: 1, minWidth: 0 }}>
           <Typography variant="h2" sx={{ overflowWrap: 'anywhere' }}>
-            <Link
-              component={RouterLink}
-              to={`${paths.proposalSection.to(proposalId, 'targets')}?target=${observation.targetId}`}
-              color="inherit"
-            >
+            <Link component={RouterLink} to={paths.target.to(proposalId, observation.targetId)} color="inherit">
               {observation.targetName}
             </Link>
           </Typography>

@@ -16,7 +16,7 @@ import { counted, formatNumber } from '../../../lib/format';
 import { groupBy } from '../../../lib/groupBy';
 import { Panel } from '../../../ui/Panel';
 import { Quantity } from '../../../ui/Quantity';
-import { RedshiftValue } from '../../../ui/RedshiftValue';
+import { RedshiftWithUncertainty } from '../../../ui/light/RedshiftWithUncertainty';
 
 /** What was submitted, for reading: text first, then numbers. Team only where the semester shows it. */
 export function SubmittedProposal({ content }: { content: Review['content'] }) {
@@ -108,9 +108,7 @@ function TargetsTable({ targets, observations }: { targets: readonly Target[]; o
               return own.map((observation, index) => (
                 <TableRow key={`${target.targetId} ${observation?.observationId ?? 'none'}`}>
                   <TableCell sx={{ whiteSpace: 'nowrap' }}>{index === 0 ? target.name : ''}</TableCell>
-                  <TableCell>
-                    {index === 0 && <RedshiftValue redshift={target.redshift} uncertainty={target.redshiftSigma} />}
-                  </TableCell>
+                  <TableCell>{index === 0 && <RedshiftWithUncertainty target={target} />}</TableCell>
                   <TableCell align="right">
                     {index === 0 && formatNumber(target.computed.apparentMagnitudeAb, { decimals: 2 })}
                   </TableCell>

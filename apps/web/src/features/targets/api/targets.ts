@@ -13,6 +13,7 @@ import {
   type TargetPatch,
 } from '@faintward/contracts/targets';
 import type { BandId, MagnitudeSystem } from '@faintward/contracts/light';
+import { LightReport } from '@faintward/contracts/light-report';
 import { keepPreviousData, queryOptions, useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query';
 import type { z } from 'zod';
 import { api, apiUrl } from '../../../lib/api';
@@ -32,6 +33,20 @@ export const targetQueries = {
     queryOptions({
       queryKey: [...targetQueries.all(proposalId), 'one', targetId],
       queryFn: ({ signal }) => api({ path: `/proposals/${proposalId}/targets/${targetId}`, schema: Target, signal }),
+    }),
+  /** What of its light arrives, as it is stored. */
+  light: (proposalId: string, targetId: string, bandId: BandId | undefined) =>
+    queryOptions({
+      queryKey: [...targetQueries.all(proposalId), 'light', targetId, bandId],
+      queryFn: ({ signal }) =>
+        api({
+          path: `/proposals/${proposalId}/targets/${targetId}/light`,
+          query: { bandId },
+          schema: LightReport,
+          signal,
+        }),
+      // Another band of the same target follows the one before; another target starts anew.
+      placeholderData: (old: LightReport | undefined, query) => (query?.queryKey.includes(targetId) ? old : undefined),
     }),
   cosmicTime: (proposalId: string) =>
     queryOptions({
@@ -138,8 +153,9 @@ export interface ImportInput {
   options: {
     roles?: ImportRole[];
     hasHeader?: boolean;
-    brightnessBandId: BandId;
-    brightnessSystem: MagnitudeSystem;
+    /** Only what a person chose: without it the header of the table may say it. */
+    brightnessBandId?: BandId;
+    brightnessSystem?: MagnitudeSystem;
     skipDuplicates: boolean;
   };
 }

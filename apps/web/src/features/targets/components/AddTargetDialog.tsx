@@ -1,28 +1,41 @@
-import type { Target, TargetCells } from '@faintward/contracts/targets';
+import type { Target } from '@faintward/contracts/targets';
 import Box from '@mui/material/Box';
 import Button from '@mui/material/Button';
 import Dialog from '@mui/material/Dialog';
 import DialogActions from '@mui/material/DialogActions';
 import DialogContent from '@mui/material/DialogContent';
 import DialogTitle from '@mui/material/DialogTitle';
+import Stack from '@mui/material/Stack';
 import TextField from '@mui/material/TextField';
 import useMediaQuery from '@mui/material/useMediaQuery';
 import { useId, useState } from 'react';
 import { ApiError } from '../../../lib/api';
+import { fonts } from '../../../theme/tokens';
 import { useNotices } from '../../../ui/Notices';
 import { ProblemDisplay } from '../../../ui/ProblemDisplay';
-import { fonts } from '../../../theme/tokens';
+import { parseNumber } from '../../../ui/form/parseNumber';
+import { FieldGroup } from '../../../ui/light/DraftFields';
+import { LightFields } from '../../../ui/light/LightFields';
+import { RedshiftFields } from '../../../ui/light/RedshiftFields';
+import { emptyLightDraft, type LightErrors } from '../../../ui/light/lightDraft';
+import { lightFieldOf, readLightDraft } from '../../../ui/light/readLightDraft';
+import {
+  emptyRedshiftDraft,
+  readUncertaintyDraft,
+  redshiftFieldOf,
+  type RedshiftErrors,
+} from '../../../ui/light/redshiftDraft';
 import { useCreateTarget } from '../api/targets';
-import { fieldOfPath, readLightDraft, toLightDraft, type LightErrors } from '../lightDraft';
-import { LightFields } from './LightFields';
 
-const fields = ['name', 'rightAscension', 'declination', 'redshift', 'redshiftSigma', 'notes'] as const;
+const fields = ['name', 'rightAscension', 'declination', 'notes'] as const;
 type Field = (typeof fields)[number];
-const needed = ['name', 'rightAscension', 'declination', 'redshift'] as const satisfies readonly Field[];
-type Cells = Record<Field, string>;
+const needed = ['name', 'rightAscension', 'declination'] as const satisfies readonly Field[];
 
-const emptyCells: Cells = { name: '', rightAscension: '', declination: '', redshift: '', redshiftSigma: '', notes: '' };
-const noLight = toLightDraft(null, { kind: 'point' });
+const empty = {
+  cells: { name: '', rightAscension: '', declination: '', notes: '' } satisfies Record<Field, string>,
+  redshift: emptyRedshiftDraft,
+  light: emptyLightDraft,
+};
 
 /** One more target. What is typed stays until it is added, also when the dialog is closed in between. */
 export function AddTargetDialog({
@@ -40,37 +53,55 @@ export function AddTargetDialog({
   const isSmall = useMediaQuery('(max-width: 599.95px)');
   const create = useCreateTarget(proposalId);
   const announce = useNotices();
-  const [cells, setCells] = useState(emptyCells);
-  const [light, setLight] = useState(noLight);
-  const [showErrors, setShowErrors] = useState(false);
-  const read = readLightDraft(light);
+  const [draft, setDraft] = useState(empty);
+  const [showLacking, setShowLacking] = useState(false);
+  const change = (part: (old: typeof empty) => Partial<typeof empty>) => {
+    create.reset();
+    setDraft((old) => ({ ...old, ...part(old) }));
+  };
 
-  const lightErrors: LightErrors = showErrors && !read.ok ? { ...read.errors } : {};
-  const cellErrors: Partial<Record<string, string>> = {};
-  const lacking = needed.filter((name) => cells[name].trim() === '');
-  if (showErrors) for (const name of lacking) cellErrors[name] = 'Needed.';
+  const light = readLightDraft(draft.light);
+  // The redshift goes as it was typed: the server reads every notation of it, as in the table.
+  const uncertainty = readUncertaintyDraft(draft.redshift);
+  const lacking = needed.filter((name) => draft.cells[name].trim() === '');
+  const isRedshiftLacking = draft.redshift.redshift.trim() === '';
+
+  const lightErrors: LightErrors = light.ok ? {} : { ...light.errors };
+  const redshiftErrors: RedshiftErrors = uncertainty.ok ? {} : { ...uncertainty.errors };
+  const cellErrors: Partial<Record<Field, string>> = {};
+  if (showLacking) {
+    for (const name of lacking) cellErrors[name] = 'Needed.';
+    if (isRedshiftLacking) redshiftErrors.redshift = 'Needed.';
+  }
   const error = create.error instanceof ApiError ? create.error : undefined;
   let allPlaced = error !== undefined && error.fieldErrors.length > 0;
   for (const { path, message } of error?.fieldErrors ?? []) {
     const cell = path.replace(/^cells\./, '').replace(/Deg$/, '');
-    const lightField = fieldOfPath(path, light);
-    if (fields.some((field) => field === cell)) cellErrors[cell] ??= message;
+    const own = fields.find((field) => field === cell);
+    const redshiftField = redshiftFieldOf(cell, draft.redshift);
+    const lightField = lightFieldOf(path, draft.light);
+    if (own) cellErrors[own] ??= message;
+    else if (redshiftField) redshiftErrors[redshiftField] ??= message;
     else if (lightField) lightErrors[lightField] ??= message;
     else allPlaced = false;
   }
 
   const submit = () => {
-    setShowErrors(true);
-    if (!read.ok || lacking.length > 0) return;
-    const sent: TargetCells = cells;
+    setShowLacking(true);
+    if (!light.ok || !uncertainty.ok || lacking.length > 0 || isRedshiftLacking) return;
     create.mutate(
-      { cells: sent, light: read.light, extent: read.extent },
+      {
+        cells: { ...draft.cells, redshift: draft.redshift.redshift },
+        redshiftKind: draft.redshift.redshiftKind,
+        redshiftUncertainty: uncertainty.uncertainty,
+        light: light.light,
+        extent: light.extent,
+      },
       {
         onSuccess: (target) => {
           announce(`${target.name} added.`);
-          setCells(emptyCells);
-          setLight(noLight);
-          setShowErrors(false);
+          setDraft(empty);
+          setShowLacking(false);
           onAdded(target);
         },
       },
@@ -80,13 +111,10 @@ export function AddTargetDialog({
   const field = (name: Field, label: string, hint: string, options: { wide?: boolean; figure?: boolean } = {}) => (
     <TextField
       label={label}
-      value={cells[name]}
+      value={draft.cells[name]}
       disabled={create.isPending}
       autoFocus={name === 'name'}
-      onChange={(event) => {
-        create.reset();
-        setCells((old) => ({ ...old, [name]: event.target.value }));
-      }}
+      onChange={(event) => change((old) => ({ cells: { ...old.cells, [name]: event.target.value } }))}
       error={cellErrors[name] !== undefined}
       helperText={cellErrors[name] ?? hint}
       multiline={name === 'notes'}
@@ -94,6 +122,8 @@ export function AddTargetDialog({
       slotProps={{ htmlInput: options.figure ? { style: { fontFamily: fonts.mono } } : {} }}
     />
   );
+  const redshift = parseNumber(draft.redshift.redshift);
+  const sourceProps = { disabled: create.isPending, showLacking };
 
   return (
     <Dialog
@@ -115,30 +145,31 @@ export function AddTargetDialog({
       >
         <DialogTitle id={id}>Add a target</DialogTitle>
         <DialogContent>
-          <Box
-            sx={{ display: 'grid', gap: 1.75, gridTemplateColumns: { xs: '1fr', sm: '1fr 1fr 1fr' }, pt: 1, mb: 2.5 }}
-          >
-            {field('name', 'Name', '')}
-            {field('rightAscension', 'Right ascension', '03 55 04.9, 03h55m04.9s or 58.7704', { figure: true })}
-            {field('declination', 'Declination', '−12 41 07, or in degrees', { figure: true })}
-            {field('redshift', 'Redshift', '')}
-            {field('redshiftSigma', 'Its uncertainty, 1 σ', 'may be empty')}
-            {field('notes', 'Notes', '', { wide: true })}
-          </Box>
-          <LightFields
-            draft={light}
-            errors={lightErrors}
-            disabled={create.isPending}
-            onChange={(name, value) => {
-              create.reset();
-              setLight((old) => ({ ...old, [name]: value }));
-            }}
-          />
-          {create.error && !allPlaced && (
-            <Box sx={{ mt: 2 }}>
-              <ProblemDisplay error={create.error} what="Not added" />
+          <Stack sx={{ gap: 3, pt: 1 }}>
+            <Box sx={{ display: 'grid', gap: 1.75, gridTemplateColumns: { xs: '1fr', sm: '1fr 1fr 1fr' } }}>
+              {field('name', 'Name', '')}
+              {field('rightAscension', 'Right ascension', '03 55 04.9, 03h55m04.9s or 58.7704', { figure: true })}
+              {field('declination', 'Declination', '−12 41 07, or in degrees', { figure: true })}
+              {field('notes', 'Notes', '', { wide: true })}
             </Box>
-          )}
+            <FieldGroup title="Redshift">
+              <RedshiftFields
+                {...sourceProps}
+                draft={draft.redshift}
+                errors={redshiftErrors}
+                onChange={(part) => change((old) => ({ redshift: { ...old.redshift, ...part } }))}
+              />
+            </FieldGroup>
+            <LightFields
+              {...sourceProps}
+              draft={draft.light}
+              errors={lightErrors}
+              redshift={typeof redshift === 'number' && redshift >= 0 && redshift <= 30 ? redshift : undefined}
+              proposalId={proposalId}
+              onChange={(part) => change((old) => ({ light: { ...old.light, ...part } }))}
+            />
+            {create.error && !allPlaced && <ProblemDisplay error={create.error} what="Not added" />}
+          </Stack>
         </DialogContent>
         <DialogActions sx={{ px: 3, pb: 2 }}>
           <Button onClick={onClose} disabled={create.isPending} variant="text">

@@ -51,11 +51,7 @@ interface Source {
   fileName: string | undefined;
 }
 const nothing: Source = { text: '', revision: 'none', fileName: undefined };
-const firstOptions: ImportInput['options'] = {
-  brightnessBandId: 'V',
-  brightnessSystem: 'AB',
-  skipDuplicates: true,
-};
+const firstOptions: ImportInput['options'] = { skipDuplicates: true };
 
 /** A table, pasted or from a file: which column is what, what is wrong in which cell, and then into the list. */
 export function ImportDialog({ proposalId, open, pasted, onClose, onImported }: ImportDialogProps) {
@@ -318,34 +314,28 @@ function Choices({
 }) {
   return (
     <Stack direction="row" sx={{ gap: 2, flexWrap: 'wrap', alignItems: 'center' }}>
-      <TextField
-        select
+      <BareBrightness
         label="A bare brightness is in band"
-        size="small"
-        sx={{ width: 200 }}
+        width={230}
         value={options.brightnessBandId}
-        onChange={(event) => onChange({ ...options, brightnessBandId: BandId.parse(event.target.value) })}
-      >
-        {BandId.options.map((band) => (
-          <MenuItem key={band} value={band}>
-            {band}
-          </MenuItem>
-        ))}
-      </TextField>
-      <TextField
-        select
+        choices={BandId.options}
+        usual="V"
+        onChange={(value) => {
+          const { brightnessBandId: _old, ...rest } = options;
+          onChange(value === '' ? rest : { ...rest, brightnessBandId: BandId.parse(value) });
+        }}
+      />
+      <BareBrightness
         label="and in system"
-        size="small"
-        sx={{ width: 120 }}
+        width={230}
         value={options.brightnessSystem}
-        onChange={(event) => onChange({ ...options, brightnessSystem: MagnitudeSystem.parse(event.target.value) })}
-      >
-        {MagnitudeSystem.options.map((system) => (
-          <MenuItem key={system} value={system}>
-            {system}
-          </MenuItem>
-        ))}
-      </TextField>
+        choices={MagnitudeSystem.options}
+        usual="AB"
+        onChange={(value) => {
+          const { brightnessSystem: _old, ...rest } = options;
+          onChange(value === '' ? rest : { ...rest, brightnessSystem: MagnitudeSystem.parse(value) });
+        }}
+      />
       <FormControlLabel
         label="First line names the columns"
         control={
@@ -368,6 +358,42 @@ function Choices({
         }
       />
     </Stack>
+  );
+}
+
+/** What a number without a unit means. Left alone, the header of the column decides. */
+function BareBrightness({
+  label,
+  width,
+  value,
+  choices,
+  usual,
+  onChange,
+}: {
+  label: string;
+  width: number;
+  value: string | undefined;
+  choices: readonly string[];
+  usual: string;
+  onChange: (value: string) => void;
+}) {
+  return (
+    <TextField
+      select
+      label={label}
+      size="small"
+      sx={{ width }}
+      value={value ?? ''}
+      onChange={(event) => onChange(event.target.value)}
+      slotProps={{ select: { displayEmpty: true }, inputLabel: { shrink: true } }}
+    >
+      <MenuItem value="">as the header says, else {usual}</MenuItem>
+      {choices.map((choice) => (
+        <MenuItem key={choice} value={choice}>
+          {choice}
+        </MenuItem>
+      ))}
+    </TextField>
   );
 }
 

@@ -7,7 +7,7 @@ const roleWords: Record<ImportRole, string> = {
   rightAscension: 'right ascension',
   declination: 'declination',
   redshift: 'redshift',
-  redshiftSigma: 'σ of redshift',
+  redshiftUncertainty: 'uncertainty of redshift',
   brightness: 'brightness',
   notes: 'notes',
   ignore: 'left out',

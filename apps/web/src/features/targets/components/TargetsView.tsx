@@ -26,6 +26,7 @@ import { useCellEdits } from '../hooks/useCellEdits';
 import { useShownColumns } from '../hooks/useShownColumns';
 import { AddTargetDialog } from './AddTargetDialog';
 import { ImportDialog, type ImportDialogProps } from './ImportDialog';
+import { bandField, shownBands } from './lightColumns';
 import { TargetsGrid } from './TargetsGrid';
 
 export interface TargetsViewProps {
@@ -44,7 +45,7 @@ export interface TargetsViewProps {
 const hideable = [
   ['rightAscensionDeg', 'Right ascension'],
   ['declinationDeg', 'Declination'],
-  ['redshiftSigma', 'σ of the redshift'],
+  ['redshiftUncertainty', 'Uncertainty of the redshift'],
   ['brightnessText', 'Brightness as known'],
   ['extent', 'Size'],
   ['luminosityDistanceMpc', 'Luminosity distance'],
@@ -53,12 +54,16 @@ const hideable = [
   ['distanceModulusMag', 'Distance modulus'],
   ['dimming', 'Dimming'],
   ['apparentMagnitudeAb', 'Apparent magnitude'],
+  ['lineFluxErgSCm2', 'Flux of its line'],
+  ['lineObservedWavelengthNm', 'Where its line is observed'],
+  ['surfaceBrightness', 'Surface brightness'],
+  ...shownBands.map((band) => [bandField(band), `Magnitude in ${band}`] as const),
   ['requestedSeconds', 'Time asked'],
   ['upSummary', 'Up'],
   ['notices', 'Notices'],
   ['notes', 'Notes'],
 ] as const;
-const hiddenAtFirst = ['extent', 'distanceModulusMag', 'redshiftSigma'];
+const hiddenAtFirst = ['extent', 'distanceModulusMag', ...shownBands.map(bandField)];
 /** On a phone the redshift should not hide behind coordinates. */
 const hiddenOnPhones = [...hiddenAtFirst, 'rightAscensionDeg', 'declinationDeg'];
 

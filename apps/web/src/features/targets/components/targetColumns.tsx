@@ -9,15 +9,10 @@ import { formatNumber, type NumberFormat } from '../../../lib/format';
 import type { TableColumn } from '../../../ui/DataTable';
 import { RedshiftValue } from '../../../ui/RedshiftValue';
 import { visuallyHidden } from '../../../ui/visuallyHidden';
-import {
-  cellOfField,
-  describeExtent,
-  redshiftDecimals,
-  shortNotice,
-  storedText,
-  type CellName,
-  type EditableField,
-} from '../cells';
+import { cellOfField, redshiftDecimals, storedText, type CellName, type EditableField } from '../cells';
+import { describeExtent } from '../../../ui/light/lightWords';
+import { lightColumns } from './lightColumns';
+import { NoticesCell } from './NoticesCell';
 import { draftKey, type CellDraft, type Drafts } from '../hooks/useCellEdits';
 
 /** A target with what is typed over it: the fields that can be typed into hold texts. */
@@ -101,12 +96,10 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     typed('redshift', { headerName: 'Redshift', width: 86, sortable: true, numeric: true }, ({ target }) => (
       <RedshiftValue redshift={target.redshift} decimals={redshiftDecimals(target.redshift)} />
     )),
-    typed(
-      'redshiftSigma',
-      { headerName: 'σ_z', width: 72, numeric: true },
-      ({ redshiftSigma }) => redshiftSigma || '—',
+    typed('redshiftUncertainty', { headerName: '± z', unit: '1 σ', width: 104, numeric: true }, (row) =>
+      row.redshiftUncertainty === '' ? '—' : <Clipped text={row.redshiftUncertainty} />,
     ),
-    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 126 }, ({ brightnessText }) =>
+    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 196 }, ({ brightnessText }) =>
       brightnessText === '' ? <Quiet>not given</Quiet> : <Clipped text={brightnessText} />,
     ),
     {
@@ -130,14 +123,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     computed('ageGyr', 'Age', 'Gyr', 60, (t) => t.computed.ageGyr, { decimals: 3 }, true),
     computed('distanceModulusMag', 'μ', 'mag', 72, (t) => t.computed.distanceModulusMag, { decimals: 2 }),
     computed('dimming', 'Dimming', 'AB mag/″²', 80, (t) => t.computed.perFrequencyDimmingMag, { decimals: 2 }),
-    {
-      ...computed('apparentMagnitudeAb', 'm', 'AB', 60, (t) => t.computed.apparentMagnitudeAb, { decimals: 2 }, true),
-      renderCell: ({ row: { target } }) => (
-        <span title={target.computed.magnitudeLabel ?? undefined}>
-          {formatNumber(target.computed.apparentMagnitudeAb, { decimals: 2 })}
-        </span>
-      ),
-    },
+    ...lightColumns(),
     computed(
       'requestedSeconds',
       'Time',
@@ -158,11 +144,13 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     {
       field: 'notices',
       headerName: 'Notices',
-      width: 114,
+      width: 148,
       sortable: false,
       computed: true,
       valueGetter: (_value, row) => row.target.computed.notices.map((notice) => notice.message).join(' '),
-      renderCell: ({ row }) => <NoticesCell notices={row.target.computed.notices} />,
+      renderCell: ({ row: { target }, tabIndex }) => (
+        <NoticesCell name={target.name} notices={target.computed.notices} tabIndex={tabIndex} />
+      ),
     },
     typed('notes', { headerName: 'Notes', minWidth: 150, flex: 1 }),
     {
@@ -220,22 +208,6 @@ function DraftText({ draft }: { draft: CellDraft }) {
         <span aria-hidden="true">▲ </span>
         {text}
         <span style={visuallyHidden}>, not stored: {draft.message}</span>
-      </Box>
-    </Tooltip>
-  );
-}
-
-function NoticesCell({ notices }: { notices: Target['computed']['notices'] }) {
-  const [first] = notices;
-  if (!first) return null;
-  const tone =
-    first.severity === 'error' ? 'error.main' : first.severity === 'warning' ? 'warning.main' : 'text.secondary';
-  return (
-    <Tooltip title={notices.map((notice) => notice.message).join(' ')} describeChild>
-      <Box component="span" sx={{ color: tone, overflow: 'hidden', textOverflow: 'ellipsis' }}>
-        <span aria-hidden="true">{first.severity === 'note' ? '· ' : '▲ '}</span>
-        {shortNotice(first)}
-        {notices.length > 1 && ` +${notices.length - 1}`}
       </Box>
     </Tooltip>
   );

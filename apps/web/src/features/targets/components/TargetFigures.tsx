@@ -1,0 +1,175 @@
+import type { DistancesResponse } from '@faintward/contracts/distances';
+import type { Target } from '@faintward/contracts/targets';
+import Box from '@mui/material/Box';
+import type { ReactNode } from 'react';
+import { formatNumber } from '../../../lib/format';
+import { Loaded, type QueryState } from '../../../ui/PageStates';
+import { Explained, Quantity } from '../../../ui/Quantity';
+import { dimmingQuantities, targetQuantities } from '../quantities';
+
+/** A quiet table: a name on the left, its values on the right. */
+function Values({ children }: { children: ReactNode }) {
+  return (
+    <Box
+      component="table"
+      sx={{
+        width: '100%',
+        borderCollapse: 'collapse',
+        fontSize: '0.875rem',
+        '& td, & th': { borderBottom: 1, borderColor: 'divider', py: 0.6, px: 1, textAlign: 'right' },
+        '& tr:last-of-type td, & tbody tr:last-of-type th': { borderBottom: 0 },
+        '& tbody th': { textAlign: 'left', pl: 0, fontWeight: 400 },
+        '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', fontWeight: 600 },
+        '& .beside': { bgcolor: 'faintward.raised' },
+        '& .soft': { color: 'text.secondary' },
+      }}
+    >
+      {children}
+    </Box>
+  );
+}
+
+const redshiftInput = (target: Target) => ({
+  label: 'redshift z',
+  value: formatNumber(target.redshift, { significant: 6 }),
+});
+
+/** Distances, scale and times in the proposal's cosmology, beside the conventional one. */
+export function DistanceFigures({ target, beside }: { target: Target; beside: QueryState<DistancesResponse> }) {
+  const { computed } = target;
+  const conventional = beside.data?.rows[0];
+  return (
+    <Values>
+      <thead>
+        <tr>
+          <td />
+          <th scope="col">{computed.cosmologyId}</th>
+          <th scope="col" className="beside">
+            {conventional ? '70 / 0.3' : beside.error ? 'not loaded' : '…'}
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {targetQuantities.map((quantity) => (
+          <tr key={quantity.field}>
+            <th scope="row">{quantity.label}</th>
+            <td>
+              <Quantity
+                value={computed[quantity.field]}
+                unit={quantity.unit}
+                strong
+                {...quantity.format}
+                explanation={{
+                  title: quantity.label,
+                  meaning: quantity.meaning,
+                  formula: quantity.formula,
+                  inputs: [redshiftInput(target), { label: 'cosmology', value: computed.cosmologyId }],
+                  source: quantity.source,
+                }}
+              />
+            </td>
+            <td className="beside">
+              <Quantity value={conventional?.[quantity.field]} unit={quantity.unit} {...quantity.format} />
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </Values>
+  );
+}
+
+/** How much dimmer a surface looks, by what is counted. */
+export function DimmingFigures({ target, beside }: { target: Target; beside: QueryState<DistancesResponse> }) {
+  const conventional = beside.data?.rows[0];
+  if (!conventional) {
+    return (
+      <Loaded query={beside} what="The dimming">
+        {() => null}
+      </Loaded>
+    );
+  }
+  return (
+    <Values>
+      <tbody>
+        {dimmingQuantities.map((quantity) => (
+          <tr key={quantity.field}>
+            <th scope="row">
+              {quantity.label} <span className="soft">{quantity.powers}</span>
+            </th>
+            <td>
+              <Quantity
+                value={conventional[quantity.field]}
+                unit={quantity.unit}
+                strong
+                {...quantity.format}
+                explanation={{
+                  title: quantity.label,
+                  meaning: quantity.meaning,
+                  formula: quantity.formula,
+                  inputs: [redshiftInput(target)],
+                  source: quantity.source,
+                }}
+              />
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </Values>
+  );
+}
+
+/** Hours a night that it stands high enough in the dark, month by month. */
+export function HoursUp({ target }: { target: Target }) {
+  const { upHoursByMonth } = target.computed;
+  const longest = Math.max(...upHoursByMonth.map((month) => month.hoursPerNight), 1);
+  return (
+    <Box
+      component="table"
+      sx={{
+        width: '100%',
+        borderCollapse: 'collapse',
+        fontSize: '0.875rem',
+        '& th': { textAlign: 'left', fontWeight: 400, width: 90, py: 0.25 },
+        '& .hours': { textAlign: 'right', width: 96, whiteSpace: 'nowrap' },
+      }}
+    >
+      <thead>
+        <tr>
+          <th scope="col">
+            <Explained
+              explanation={{
+                title: 'Hours up',
+                meaning:
+                  'Hours of a night in the middle of the month that the target stands above the altitude limit while the Sun is below −18°.',
+              }}
+            >
+              Month
+            </Explained>
+          </th>
+          <td aria-hidden="true" />
+          <th scope="col" className="hours">
+            hours a night
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {upHoursByMonth.map(({ month, hoursPerNight }) => (
+          <tr key={month}>
+            <th scope="row">{month}</th>
+            <td aria-hidden="true">
+              <Box
+                sx={{
+                  height: 8,
+                  borderRadius: '2px',
+                  bgcolor: 'primary.main',
+                  width: `${(100 * hoursPerNight) / longest}%`,
+                }}
+              />
+            </td>
+            <td className="hours">{formatNumber(hoursPerNight, { decimals: 1 })}</td>
+          </tr>
+        ))}
+      </tbody>
+    </Box>
+  );
+}
