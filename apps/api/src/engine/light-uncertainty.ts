@@ -7,7 +7,6 @@ import {
   type Response,
   sampleLight,
 } from '@faintward/photometry';
-import { distanceRows } from '@faintward/cosmology';
 import { type LightSetting, resolveLight } from './light.js';
 import { lightData } from './light-data.js';
 import type { ReportInputs } from './light-report.js';
@@ -43,10 +42,6 @@ export function uncertaintyOf(
   });
   const { magnitudesAb } = samples;
   const curve = distribution.curve(CURVE_POINTS);
-  const rows = distanceRows(
-    setting.cosmology.model,
-    [0.16, 0.5, 0.84].map((p) => distribution.quantile(p)),
-  );
   return {
     seed,
     sampleCount,
@@ -54,7 +49,9 @@ export function uncertaintyOf(
     magnitudeAb: quantilesOf(magnitudesAb),
     noLightProbability: magnitudesAb.filter(Number.isNaN).length / sampleCount,
     probabilityError: 0.5 / Math.sqrt(sampleCount),
-    luminosityDistanceMpc: ascending(rows.map(({ luminosityDistanceMpc }) => luminosityDistanceMpc)),
+    luminosityDistanceMpc: quantilesBy((p) =>
+      setting.cosmology.distances.luminosityDistanceMpc(distribution.quantile(p)),
+    ),
     // The scale has a maximum: its quantiles are not those of the redshift.
     kpcPerArcsec: scaleQuantiles(samples.redshifts, setting),
     lines: linesOf(light, setting).map(({ lineId, label, restNm }) => {
@@ -101,13 +98,14 @@ function quantilesOf(values: Float64Array): Quantiles | null {
   return p16 === undefined || p50 === undefined || p84 === undefined ? null : { p16, p50, p84 };
 }
 
-function ascending([p16, p50, p84]: readonly number[]): Quantiles | null {
-  return p16 === undefined || p50 === undefined || p84 === undefined ? null : { p16, p50, p84 };
-}
+const KPC_PER_MPC_ARCSEC = (1000 * Math.PI) / 648_000;
 
 function scaleQuantiles(redshifts: Float64Array, { cosmology }: LightSetting): Quantiles | null {
-  const rows = distanceRows(cosmology.model, [...redshifts]);
-  return quantilesOf(Float64Array.from(rows, ({ kpcPerArcsec }) => kpcPerArcsec ?? NaN));
+  return quantilesOf(
+    redshifts.map(
+      (redshift) => (cosmology.distances.luminosityDistanceMpc(redshift) / (1 + redshift) ** 2) * KPC_PER_MPC_ARCSEC,
+    ),
+  );
 }
 
 function shareOf(values: Float64Array, holds: (value: number) => boolean): number {
