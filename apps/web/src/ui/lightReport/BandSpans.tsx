@@ -5,7 +5,6 @@ import ButtonBase from '@mui/material/ButtonBase';
 import { useMemo } from 'react';
 import { formatNumber } from '../../lib/format';
 import { intoLanes } from '../plot/labels';
-import { visuallyHidden } from '../visuallyHidden';
 
 const laneHeight = 36;
 const leastWidth = 27;
@@ -57,6 +56,7 @@ export function BandSpans({
         <ButtonBase
           key={band.bandId}
           aria-pressed={band.bandId === chosen}
+          aria-label={`${band.label} ${magnitudeText(band, width)}: light budget in this band`}
           onClick={() => onChoose(band.bandId)}
           title={band.reason?.message}
           sx={{
@@ -81,7 +81,6 @@ export function BandSpans({
         >
           <Box component="span" sx={{ fontWeight: 600, fontSize: '0.75rem' }}>
             {band.label}
-            <span style={visuallyHidden}> band: </span>
           </Box>
           <span>{magnitudeText(band, width)}</span>
         </ButtonBase>

@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { colour } from '../../theme/theme';
 import { AxisBelow, AxisBeside, axisTitle, type PlotAxis } from './Axes';
-import { spreadLabels } from './labels';
+import { spreadLabels, textWidth } from './labels';
 import { PlotFigure, type PlotTable } from './PlotFigure';
 import { extent, makeScale, type Scale } from './scale';
 import { useWidth } from './useWidth';
@@ -14,7 +14,8 @@ export interface PlotSeries {
   /** `high` only for a band, whose lower edge is `y`. Values that are null break the line. */
   values: readonly { x: number; y: number | null; high?: number | null }[];
   colour?: string;
-  dashed?: boolean;
+  /** A pattern of strokes and gaps, or true for the usual one. */
+  dashed?: boolean | string;
   /** Written beside the series' last value; false for helpers that need no name. */
   showLabel?: boolean;
 }
@@ -54,8 +55,10 @@ export function PlotFrame({
   const [box, width] = useWidth(640);
 
   const labelled = series.filter((one) => one.showLabel !== false && one.values.length > 0);
-  const labelWidth = labelled.length > 0 ? Math.max(...labelled.map((one) => one.label.length)) * 6.6 + 10 : 0;
-  const right = Math.min(width * 0.34, Math.max(margin.right, labelWidth));
+  // Several names stand each behind a piece of its own line, because they are moved apart where lines end together.
+  const leader = labelled.length > 1 ? 24 : 6;
+  const labelWidth = labelled.length > 0 ? Math.max(...labelled.map((one) => textWidth(one.label))) + leader + 6 : 0;
+  const right = Math.min(width * (width < 480 ? 0.42 : 0.34), Math.max(margin.right, labelWidth));
   const left = margin.left;
   const bottom = height - margin.bottom;
   const xKind = x.scale ?? 'linear';
@@ -83,7 +86,10 @@ export function PlotFrame({
   const labels = spreadLabels(
     labelled.flatMap((one) => {
       const last = one.values.findLast((value) => value.y != null && Number.isFinite(yScale(value.y)));
-      return last ? [{ label: one.label, x: xScale(last.x) + 6, y: yScale(last.y!) + 4 }] : [];
+      if (!last) return [];
+      const end = { x: xScale(last.x), y: yScale(last.y!) };
+      const text = cutText(one.label, right - leader - 2);
+      return [{ key: one.label, text, end, y: end.y + 4, stroke: strokeOf(one, series.indexOf(one)) }];
     }),
     margin.top + 8,
     bottom,
@@ -110,21 +116,30 @@ export function PlotFrame({
         <AxisBeside axis={y} scale={yScale} left={left} right={width - right} top={margin.top} bottom={bottom} />
         <AxisBelow axis={x} scale={xScale} left={left} right={width - right} y={bottom} titleY={height - 8} />
         {series.map((one, index) => (
-          <SeriesMark key={one.label} series={one} x={xScale} y={yScale} colour={one.colour ?? seriesColour(index)} />
+          <SeriesMark key={one.label} series={one} x={xScale} y={yScale} stroke={strokeOf(one, index)} />
         ))}
-        {labels.map((label) => (
-          <text
-            key={label.label}
-            x={label.x}
-            y={label.y}
-            fontSize="12"
-            fill={colour.ink}
-            stroke={colour.surface}
-            strokeWidth="3"
-            paintOrder="stroke"
-          >
-            {label.label}
-          </text>
+        {labels.map(({ key, text, end, y: labelY, stroke }) => (
+          <g key={key}>
+            {labels.length > 1 && (
+              <path
+                d={`M${end.x} ${end.y} L${end.x + 6} ${labelY - 4} h${leader - 10}`}
+                fill="none"
+                strokeWidth="1.5"
+                {...stroke}
+              />
+            )}
+            <text
+              x={end.x + leader}
+              y={labelY}
+              fontSize="12"
+              fill={colour.ink}
+              stroke={colour.surface}
+              strokeWidth="3"
+              paintOrder="stroke"
+            >
+              {text}
+            </text>
+          </g>
         ))}
         {children?.({ x: xScale, y: yScale, width, height })}
       </svg>
@@ -133,15 +148,32 @@ export function PlotFrame({
 }
 
 const seriesColours = [colour.primary, colour.accent, colour.inkSoft, colour.warn];
-function seriesColour(index: number): string {
-  return seriesColours[index % seriesColours.length]!;
+
+interface Stroke {
+  stroke: string;
+  strokeDasharray?: string;
 }
 
-function SeriesMark({ series, x, y, colour: stroke }: { series: PlotSeries; x: Scale; y: Scale; colour: string }) {
+/** How a series is drawn, and the piece of line before its name. */
+function strokeOf(series: PlotSeries, index: number): Stroke {
+  const stroke = series.colour ?? seriesColours[index % seriesColours.length]!;
+  if (!series.dashed) return { stroke };
+  return { stroke, strokeDasharray: typeof series.dashed === 'string' ? series.dashed : '6 4' };
+}
+
+/** A name cut to the room there is; the table of numbers has it in full. */
+function cutText(text: string, room: number): string {
+  if (textWidth(text) <= room) return text;
+  const letters = [...text];
+  while (letters.length > 1 && textWidth(`${letters.join('')}…`) > room) letters.pop();
+  return `${letters.join('').trimEnd()}…`;
+}
+
+function SeriesMark({ series, x, y, stroke }: { series: PlotSeries; x: Scale; y: Scale; stroke: Stroke }) {
   const placed = (value: number | null | undefined) => value != null && Number.isFinite(y(value));
   if (series.kind === 'points') {
     return (
-      <g fill={stroke} stroke={colour.surface}>
+      <g fill={stroke.stroke} stroke={colour.surface}>
         {series.values.map((value, index) =>
           placed(value.y) && Number.isFinite(x(value.x)) ? (
             <circle key={index} cx={x(value.x)} cy={y(value.y!)} r="4.5" />
@@ -155,7 +187,7 @@ function SeriesMark({ series, x, y, colour: stroke }: { series: PlotSeries; x: S
     if (usable.length === 0) return null;
     const upper = usable.map((value) => `${x(value.x).toFixed(1)},${y(value.high!).toFixed(1)}`);
     const lower = usable.toReversed().map((value) => `${x(value.x).toFixed(1)},${y(value.y!).toFixed(1)}`);
-    return <path d={`M${[...upper, ...lower].join('L')}Z`} fill={stroke} fillOpacity="0.16" />;
+    return <path d={`M${[...upper, ...lower].join('L')}Z`} fill={stroke.stroke} fillOpacity="0.16" />;
   }
   let path = '';
   let penDown = false;
@@ -164,9 +196,7 @@ function SeriesMark({ series, x, y, colour: stroke }: { series: PlotSeries; x: S
     if (usable) path += `${penDown ? 'L' : 'M'}${x(value.x).toFixed(1)},${y(value.y!).toFixed(1)}`;
     penDown = usable;
   }
-  return (
-    <path d={path} fill="none" stroke={stroke} strokeWidth="2" {...(series.dashed ? { strokeDasharray: '6 4' } : {})} />
-  );
+  return <path d={path} fill="none" strokeWidth="2" {...stroke} />;
 }
 
 function toTable(x: PlotAxis, y: PlotAxis, series: readonly PlotSeries[]): PlotTable {

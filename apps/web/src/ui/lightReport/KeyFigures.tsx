@@ -1,0 +1,128 @@
+import type { LightReport } from '@faintward/contracts/light-report';
+import Box from '@mui/material/Box';
+import Typography from '@mui/material/Typography';
+import { formatNumber } from '../../lib/format';
+import { Explained, Quantity } from '../Quantity';
+import { RedshiftValue } from '../RedshiftValue';
+import { keyExplanations } from './explanations';
+import { Figures } from './Figures';
+
+/** The answer in one line of numbers: how bright, how far, how long ago. */
+export function KeyFigures({ report }: { report: LightReport }) {
+  const explained = keyExplanations(report);
+  const { ledger, distances, uncertainty } = report;
+  const spread = uncertainty?.magnitudeAb;
+  return (
+    <>
+      {ledger && (
+        <Box sx={{ mb: 2 }} aria-live="polite">
+          <Typography variant="body2" color="textSecondary">
+            {ledger.label} above the atmosphere
+          </Typography>
+          {ledger.totalMagnitudeAb === null ? (
+            <Typography variant="h2" component="p">
+              {ledger.reason?.message ?? 'No light.'}
+            </Typography>
+          ) : (
+            <Typography component="p" sx={{ fontSize: '1.625rem', fontWeight: 600, lineHeight: 1.25 }}>
+              <Explained explanation={explained.apparent}>
+                {formatNumber(ledger.totalMagnitudeAb, { decimals: 2 })} AB
+              </Explained>
+              {spread && (
+                <Box component="span" sx={{ fontSize: '0.9375rem', fontWeight: 400, color: 'text.secondary', ml: 1.5 }}>
+                  {formatNumber(spread.p16, { decimals: 2 })} to {formatNumber(spread.p84, { decimals: 2 })} in 68 % of
+                  the draws
+                </Box>
+              )}
+            </Typography>
+          )}
+          {ledger.lineFluxErgSCm2 !== null && (
+            <Typography>
+              Line flux <Quantity value={ledger.lineFluxErgSCm2} unit="erg/s/cm²" significant={3} strong />
+            </Typography>
+          )}
+        </Box>
+      )}
+      <Figures
+        figures={[
+          { label: 'Redshift', node: <RedshiftValue redshift={report.redshift} /> },
+          ...(report.absoluteMagnitudeAb === null
+            ? []
+            : [
+                {
+                  label: 'Absolute magnitude',
+                  node: (
+                    <Quantity
+                      value={report.absoluteMagnitudeAb}
+                      unit="AB"
+                      decimals={2}
+                      explanation={explained.absolute}
+                    />
+                  ),
+                },
+              ]),
+          ...(report.unlensedMagnitudeAb === null
+            ? []
+            : [
+                {
+                  label: 'Without the lens',
+                  node: (
+                    <Quantity
+                      value={report.unlensedMagnitudeAb}
+                      unit="AB"
+                      decimals={2}
+                      explanation={explained.unlensed}
+                    />
+                  ),
+                },
+              ]),
+          {
+            label: 'Distance modulus',
+            node: (
+              <Quantity
+                value={distances.distanceModulusMag}
+                unit="mag"
+                decimals={4}
+                explanation={explained.modulus}
+                unknownReason="It has no value at z = 0."
+              />
+            ),
+          },
+          {
+            label: 'Luminosity distance',
+            node: (
+              <Quantity
+                value={distances.luminosityDistanceMpc / 1000}
+                unit="Gpc"
+                decimals={3}
+                explanation={explained.luminosityDistance}
+              />
+            ),
+          },
+          {
+            label: 'Scale',
+            node: <Quantity value={distances.kpcPerArcsec} unit="kpc/″" decimals={3} explanation={explained.scale} />,
+          },
+          {
+            label: 'Age then',
+            node: (
+              <Quantity
+                value={distances.ageGyr}
+                unit="Gyr"
+                decimals={3}
+                explanation={explained.age}
+                unknownReason="This universe has no beginning."
+              />
+            ),
+          },
+          {
+            label: 'Lookback time',
+            node: (
+              <Quantity value={distances.lookbackTimeGyr} unit="Gyr" decimals={3} explanation={explained.lookback} />
+            ),
+          },
+        ]}
+      />
+    </>
+  );
+}
