@@ -18,6 +18,7 @@ import { SignInAgain } from './SignInAgain';
 const personLinks: ShellSection[] = [
   { label: 'Profile', to: paths.profile.to() },
   { label: 'Distances and dimming', to: paths.distances.to() },
+  { label: 'The light of a source', to: paths.source.to() },
   { label: 'Exposure sketchpad', to: paths.exposure.to() },
 ];
 

@@ -2,7 +2,7 @@ import type { DistanceRow } from '@faintward/contracts/distances';
 import Box from '@mui/material/Box';
 import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
-import { useQuery } from '@tanstack/react-query';
+import { useQueries, useQuery } from '@tanstack/react-query';
 import { useEffect, useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { distanceQueries } from '../features/distances/api/distances';
@@ -14,6 +14,7 @@ import {
   readState,
   writeState,
 } from '../features/distances/calculatorState';
+import { CalculatorTabs } from '../features/distances/components/CalculatorTabs';
 import { CalculatorForm } from '../features/distances/components/CalculatorForm';
 import { DistanceCurves } from '../features/distances/components/DistanceCurves';
 import { DistanceSheet } from '../features/distances/components/DistanceSheet';
@@ -52,7 +53,11 @@ export function Component() {
   const main = useQuery({ ...distanceQueries.rows(model, asked), enabled: canAsk });
   const beside = useQuery({ ...distanceQueries.rows('conv70', asked), enabled: canAsk && compares });
   const curve = useQuery({ ...distanceQueries.rows(model, grid), enabled: canAsk });
-  const besideCurve = useQuery({ ...distanceQueries.rows('conv70', grid), enabled: canAsk && compares });
+  const besideCurves = useQueries({
+    queries: settled.beside
+      .filter((id) => id !== model)
+      .map((id) => ({ ...distanceQueries.rows(id, grid), enabled: canAsk })),
+  });
 
   const errors: Record<string, string | undefined> = {
     ...redshifts.errors,
@@ -86,6 +91,7 @@ export function Component() {
           </Button>
         </>
       }
+      below={<CalculatorTabs part="distances" />}
     >
       <Box
         sx={{
@@ -107,11 +113,19 @@ export function Component() {
           <Panel>
             <Loaded query={curve} what="The curves">
               {(data) => (
-                <DistanceCurves
-                  curve={data}
-                  besideCurve={compares ? besideCurve.data : undefined}
-                  rows={main.data?.rows ?? []}
-                />
+                <>
+                  <DistanceCurves
+                    models={[data, ...besideCurves.flatMap((beside) => beside.data ?? [])]}
+                    rows={main.data?.rows ?? []}
+                    presets={presets.data?.rows ?? []}
+                    state={state}
+                    chosenId={state.cosmology}
+                    onChange={(change) => setState((old) => ({ ...old, ...change }))}
+                  />
+                  {besideCurves.some((beside) => beside.isError) && (
+                    <Note tone="warning">A cosmology beside the chosen one could not be loaded.</Note>
+                  )}
+                </>
               )}
             </Loaded>
           </Panel>

@@ -1,4 +1,5 @@
 import Button from '@mui/material/Button';
+import Stack from '@mui/material/Stack';
 import { useQuery } from '@tanstack/react-query';
 import { Link as RouterLink } from 'react-router-dom';
 import { paths } from '../app/paths';
@@ -27,7 +28,12 @@ export function Component() {
             The hours add up here once targets have a setup and a goal.
           </EmptyState>
         ) : (
-          <TimeRequestView request={request} />
+          <Stack sx={{ gap: 2, alignItems: 'flex-start', '& > :first-of-type': { width: '100%' } }}>
+            <TimeRequestView request={request} />
+            <Button component={RouterLink} to={paths.proposalSection.to(proposalId, 'cosmologies')} variant="text">
+              What the choice of cosmology changes
+            </Button>
+          </Stack>
         )
       }
     </Loaded>

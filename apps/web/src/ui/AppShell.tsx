@@ -4,12 +4,14 @@ import Button from '@mui/material/Button';
 import Divider from '@mui/material/Divider';
 import Drawer from '@mui/material/Drawer';
 import IconButton from '@mui/material/IconButton';
+import Link from '@mui/material/Link';
 import ListItemText from '@mui/material/ListItemText';
 import ListSubheader from '@mui/material/ListSubheader';
 import Menu from '@mui/material/Menu';
 import MenuItem from '@mui/material/MenuItem';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import { Link as RouterLink, NavLink, useLocation } from 'react-router-dom';
+import { paths } from '../app/paths';
 import { useOnline } from '../lib/useOnline';
 import { colour } from '../theme/theme';
 import { useThemeChoice, type ThemeChoice } from '../theme/useThemeChoice';
@@ -85,7 +87,11 @@ export function AppShell(props: AppShellProps) {
         }}
       >
         Exposure times are planning figures, to be confirmed by the observatory&rsquo;s instrument team. The
-        site&rsquo;s own safety rules stand above anything shown here.
+        site&rsquo;s own safety rules stand above anything shown here.{' '}
+        <Link component={RouterLink} to={paths.sources.to()}>
+          Sources of the reference data
+        </Link>
+        .
       </Box>
     </Box>
   );

@@ -21,6 +21,13 @@ export interface CalculatorState {
   parameters: Record<ParameterName, string>;
   neutrinoMassesEv: string;
   compare: boolean;
+  /** Which curve, and for that of an angle the length. */
+  curve: string;
+  sizeKpc: string;
+  /** Cosmologies drawn beside the chosen one. */
+  beside: readonly CosmologyPresetId[];
+  /** Whether curves are drawn against the chosen cosmology instead of as they are. */
+  against: boolean;
 }
 
 const addressNames: Record<ParameterName, string> = {
@@ -46,7 +53,18 @@ export function readState(address: URLSearchParams): CalculatorState {
     parameters,
     neutrinoMassesEv: address.get('mnu') ?? '',
     compare: address.get('compare') !== 'no',
+    curve: address.get('curve') ?? 'distances',
+    sizeKpc: address.get('kpc') ?? '10',
+    beside: readBeside(address),
+    against: address.get('against') === 'yes',
   };
+}
+
+/** Links from before there was a choice compare with the conventional model, or with none. */
+function readBeside(address: URLSearchParams): CosmologyPresetId[] {
+  const text = address.get('beside');
+  if (text === null) return address.get('compare') === 'no' ? [] : ['conv70'];
+  return CosmologyPresetId.options.filter((id) => text.split('.').includes(id));
 }
 
 export function writeState(state: CalculatorState): URLSearchParams {
@@ -59,6 +77,11 @@ export function writeState(state: CalculatorState): URLSearchParams {
     if (state.neutrinoMassesEv) address.set('mnu', state.neutrinoMassesEv);
   }
   if (!state.compare) address.set('compare', 'no');
+  if (state.curve !== 'distances') address.set('curve', state.curve);
+  if (state.sizeKpc !== '10') address.set('kpc', state.sizeKpc);
+  const usual = state.compare ? 'conv70' : '';
+  if (state.beside.join('.') !== usual) address.set('beside', state.beside.join('.'));
+  if (state.against) address.set('against', 'yes');
   return address;
 }
 

@@ -1,141 +1,181 @@
+import { CosmologyPresetId, type CosmologyPreset } from '@faintward/contracts/cosmology';
 import type { DistanceRow, DistancesResponse } from '@faintward/contracts/distances';
-import MenuItem from '@mui/material/MenuItem';
-import TextField from '@mui/material/TextField';
 import Box from '@mui/material/Box';
-import { useState } from 'react';
+import FormControlLabel from '@mui/material/FormControlLabel';
+import InputAdornment from '@mui/material/InputAdornment';
+import ListSubheader from '@mui/material/ListSubheader';
+import MenuItem from '@mui/material/MenuItem';
+import Switch from '@mui/material/Switch';
+import TextField from '@mui/material/TextField';
 import { colour } from '../../../theme/theme';
+import { parseNumber } from '../../../ui/form/parseNumber';
 import { PlotFrame, type PlotSeries } from '../../../ui/plot/PlotFrame';
-import { distanceQuantities, type DistanceQuantity } from '../quantities';
+import type { CalculatorState } from '../calculatorState';
+import { againstFirst, curveChoices, curveOf, curvesOf, type Curve, type CurveChoice } from '../curves';
 
-interface CurveChoice {
-  id: string;
-  title: string;
-  label: string;
-  unit: string;
-  fields: readonly DistanceQuantity['field'][];
-  scale: 'linear' | 'log';
-}
+type CurveState = Pick<CalculatorState, 'curve' | 'sizeKpc' | 'beside' | 'against'>;
 
-const choices: readonly CurveChoice[] = [
-  {
-    id: 'distances',
-    title: 'Distances',
-    label: 'distance',
-    unit: 'Mpc',
-    fields: ['luminosityDistanceMpc', 'comovingDistanceMpc', 'angularDiameterDistanceMpc'],
-    scale: 'log',
-  },
-  { id: 'scale', title: 'Scale', label: 'scale', unit: 'kpc/″', fields: ['kpcPerArcsec'], scale: 'linear' },
-  {
-    id: 'time',
-    title: 'Age and lookback',
-    label: 'time',
-    unit: 'Gyr',
-    fields: ['ageGyr', 'lookbackTimeGyr'],
-    scale: 'linear',
-  },
-  {
-    id: 'modulus',
-    title: 'Distance modulus',
-    label: 'modulus',
-    unit: 'mag',
-    fields: ['distanceModulusMag'],
-    scale: 'linear',
-  },
-  {
-    id: 'dimming',
-    title: 'Dimming, four conventions',
-    label: 'dimming',
-    unit: 'mag/″²',
-    fields: ['perWavelengthDimmingMag', 'bolometricDimmingMag', 'perFrequencyDimmingMag'],
-    scale: 'linear',
-  },
-  { id: 'expansion', title: 'Expansion rate', label: 'H(z)', unit: 'km/s/Mpc', fields: ['hubbleKmSMpc'], scale: 'log' },
-];
+/** Told apart by colour and by stroke; the first of each list is the chosen cosmology's or line's. */
+const colours = [colour.primary, colour.accent, colour.inkSoft, colour.warn, colour.good, colour.bad];
+const strokes = [undefined, '7 4', '2 3', '9 3 2 3', '4 4', '1 4'];
 
-const shortNames: Partial<Record<DistanceQuantity['field'], string>> = {
-  luminosityDistanceMpc: 'luminosity',
-  comovingDistanceMpc: 'comoving',
-  angularDiameterDistanceMpc: 'angular diameter',
-  ageGyr: 'age',
-  lookbackTimeGyr: 'lookback',
-  perWavelengthDimmingMag: 'per wavelength',
-  bolometricDimmingMag: 'in energy',
-  perFrequencyDimmingMag: 'per frequency, and in photons',
-};
-
-/** A quantity over redshift, with the asked redshifts marked; the model beside it is dashed. */
+/** A quantity over redshift in one or several cosmologies, as it is or against the first; the asked redshifts are marked. */
 export function DistanceCurves({
-  curve,
-  besideCurve,
+  models,
   rows,
+  presets,
+  state,
+  chosenId,
+  onChange,
 }: {
-  curve: DistancesResponse;
-  besideCurve: DistancesResponse | undefined;
+  /** The chosen cosmology first. */
+  models: readonly DistancesResponse[];
   rows: readonly DistanceRow[];
+  presets: readonly CosmologyPreset[];
+  state: CurveState;
+  chosenId: string;
+  onChange: (change: Partial<CurveState>) => void;
 }) {
-  const [id, setId] = useState('distances');
-  const choice = choices.find((one) => one.id === id) ?? choices[0]!;
-  const strokes = [colour.primary, colour.accent, colour.inkSoft];
-  const line = (
-    source: DistancesResponse,
-    field: DistanceQuantity['field'],
-    index: number,
-    beside: boolean,
-  ): PlotSeries => ({
-    kind: 'line',
-    label: `${shortNames[field] ?? nameOf(field)}${beside ? `, ${source.cosmology.title}` : ''}`,
-    values: source.rows.map((row) => ({ x: row.redshift, y: row[field] })),
-    colour: strokes[index]!,
-    dashed: beside,
-    showLabel: !beside && choice.fields.length > 1,
-  });
-  const series: PlotSeries[] = [
-    ...choice.fields.map((field, index) => line(curve, field, index, false)),
-    ...(besideCurve && choice.id !== 'dimming'
-      ? choice.fields.map((field, index) => line(besideCurve, field, index, true))
-      : []),
-    ...choice.fields.map<PlotSeries>((field, index) => ({
-      kind: 'points',
-      label: `${shortNames[field] ?? nameOf(field)} at the redshifts asked`,
-      values: rows.slice(0, 200).map((row) => ({ x: row.redshift, y: row[field] })),
-      colour: strokes[index]!,
-      showLabel: false,
-    })),
-  ];
+  const choice = curveOf(state.curve);
+  const typedSize = parseNumber(state.sizeKpc);
+  const sizeKpc = typeof typedSize === 'number' && typedSize > 0 ? typedSize : null;
+  const isAngle = choice.id === 'angle';
+  const isAgainst = state.against && models.length > 1;
+  const first = models[0];
   return (
     <Box>
-      <TextField
-        select
-        label="Curve"
-        value={choice.id}
-        onChange={(event) => setId(event.target.value)}
-        sx={{ width: 240, mb: 1.5 }}
+      <Box
+        sx={{
+          display: 'grid',
+          gap: 1.5,
+          mb: 2,
+          gridTemplateColumns: 'repeat(auto-fit, minmax(190px, 1fr))',
+          alignItems: 'start',
+        }}
       >
-        {choices.map((one) => (
-          <MenuItem key={one.id} value={one.id}>
-            {one.title}
-          </MenuItem>
-        ))}
-      </TextField>
-      <PlotFrame
-        title={choice.title}
-        description={`${choice.title} over redshift in ${curve.cosmology.title}`}
-        x={{ label: 'redshift' }}
-        y={{ label: choice.label, unit: choice.unit, scale: choice.scale }}
-        series={series}
-        height={320}
-        fileName={`${choice.id}.csv`}
+        <TextField select label="Curve" value={choice.id} onChange={(event) => onChange({ curve: event.target.value })}>
+          {[...new Set(curveChoices.map((one) => one.group))].flatMap((group) => [
+            <ListSubheader key={group}>{group}</ListSubheader>,
+            ...curveChoices
+              .filter((one) => one.group === group)
+              .map((one) => (
+                <MenuItem key={one.id} value={one.id}>
+                  {one.title}
+                </MenuItem>
+              )),
+          ])}
+        </TextField>
+        {isAngle && (
+          <TextField
+            label="Length at the source"
+            value={state.sizeKpc}
+            onChange={(event) => onChange({ sizeKpc: event.target.value })}
+            error={sizeKpc === null}
+            helperText={sizeKpc === null ? 'A length above 0.' : 'proper, not comoving'}
+            slotProps={{
+              htmlInput: { inputMode: 'decimal', style: { textAlign: 'right' } },
+              input: { endAdornment: <InputAdornment position="end">kpc</InputAdornment> },
+            }}
+          />
+        )}
+        <TextField
+          select
+          label="Cosmologies beside"
+          value={state.beside}
+          onChange={(event) => onChange({ beside: readPresets(event.target.value) })}
+          slotProps={{
+            select: {
+              multiple: true,
+              displayEmpty: true,
+              renderValue: (value) => presetsText(readPresets(value), presets),
+            },
+            inputLabel: { shrink: true },
+          }}
+        >
+          {CosmologyPresetId.options.map((id) => (
+            <MenuItem key={id} value={id} disabled={id === chosenId}>
+              {titleOf(id, presets)}
+              {id === chosenId && ' (chosen)'}
+            </MenuItem>
+          ))}
+        </TextField>
+      </Box>
+      <FormControlLabel
+        control={<Switch checked={state.against} onChange={(_event, against) => onChange({ against })} />}
+        label={`As ${choice.compares === 'ratio' ? 'ratios' : 'differences'} to the chosen cosmology`}
+        disabled={models.length < 2}
+        sx={{ mb: 1 }}
       />
-      {besideCurve && choice.id !== 'dimming' && (
-        <Box sx={{ fontSize: '0.8125rem', color: 'text.secondary' }}>
-          solid: {curve.cosmology.title} · dashed: {besideCurve.cosmology.title} · discs: the redshifts asked
-        </Box>
+      {first && (
+        <PlotFrame
+          title={isAgainst ? `${choice.title}, against ${first.cosmology.title}` : choice.title}
+          description={`${choice.title} over redshift in ${models.map((model) => model.cosmology.title).join(', ')}${
+            isAgainst ? `, against ${first.cosmology.title}` : ''
+          }`}
+          x={{ label: 'redshift' }}
+          y={
+            isAgainst
+              ? { label: choice.compares, ...(choice.compares === 'difference' ? { unit: 'mag' } : {}) }
+              : { label: choice.label, unit: choice.unit, scale: choice.scale }
+          }
+          series={
+            isAgainst
+              ? lines(againstFirst(choice, models, sizeKpc ?? 1), choice, 1)
+              : [...lines(curvesOf(choice, models, sizeKpc ?? 1), choice, 0), ...asked(choice, rows, sizeKpc ?? 1)]
+          }
+          height={340}
+          fileName={`${choice.id}${isAgainst ? `-${choice.compares}` : ''}.csv`}
+        />
       )}
+      <Box sx={{ fontSize: '0.8125rem', color: 'text.secondary' }}>
+        {choice.group === 'Dimming of surface brightness' || choice.id === 'dimming'
+          ? 'Dimming depends on the redshift alone: it is the same in every cosmology.'
+          : isAgainst
+            ? ''
+            : 'Discs: the redshifts asked.'}
+      </Box>
     </Box>
   );
 }
 
-function nameOf(field: DistanceQuantity['field']): string {
-  return distanceQuantities.find((quantity) => quantity.field === field)!.label.toLowerCase();
+/** `firstIndex`: which place in the lists of colours the first cosmology takes. */
+function lines(curves: readonly Curve[], choice: CurveChoice, firstIndex: number): PlotSeries[] {
+  const models = [...new Set(curves.map((curve) => curve.cosmologyId))];
+  const isAlone = choice.lines.length === 1;
+  return curves.map((curve) => {
+    const model = models.indexOf(curve.cosmologyId) + firstIndex;
+    const line = choice.lines.findIndex((one) => one.name === curve.line);
+    const dash = strokes[model % strokes.length];
+    return {
+      kind: 'line',
+      label: isAlone ? curve.title : models.length > 1 ? `${curve.line}, ${curve.title}` : curve.line,
+      values: curve.values,
+      colour: colours[(isAlone ? model : line) % colours.length]!,
+      ...(dash ? { dashed: dash } : {}),
+      // With several lines and cosmologies the chosen one is named in the picture; strokes tell the others apart.
+      showLabel: isAlone || model === firstIndex,
+    };
+  });
+}
+
+function asked(choice: CurveChoice, rows: readonly DistanceRow[], sizeKpc: number): PlotSeries[] {
+  return choice.lines.map((line, index) => ({
+    kind: 'points',
+    label: `${line.name} at the redshifts asked`,
+    values: rows.slice(0, 200).map((row) => ({ x: row.redshift, y: line.value(row, sizeKpc) })),
+    colour: colours[index]!,
+    showLabel: false,
+  }));
+}
+
+function readPresets(value: unknown): CosmologyPresetId[] {
+  return CosmologyPresetId.options.filter((id) => Array.isArray(value) && value.includes(id));
+}
+
+function titleOf(id: CosmologyPresetId, presets: readonly CosmologyPreset[]): string {
+  return presets.find((preset) => preset.id === id)?.title ?? id;
+}
+
+function presetsText(ids: readonly CosmologyPresetId[], presets: readonly CosmologyPreset[]): string {
+  return ids.length === 0 ? 'none' : ids.map((id) => titleOf(id, presets)).join(', ');
 }
