@@ -35,10 +35,10 @@ export function halfOf(toPercentile: number, limit: number): Half {
 function widened(toPercentile: number, limit: number, narrow: number): number {
   const excess = (inverseSigma: number): number =>
     central(toPercentile * inverseSigma) / central(limit * inverseSigma) - INNER_PART;
-  // At the narrow end the cut leaves more than 68 % inside; the flat limit, less.
-  const lowest = 1e-4 / limit;
-  if (excess(lowest) >= 0) return 1 / lowest;
-  return 1 / findRoot(excess, lowest, 1 / narrow, { absoluteTolerance: 1e-13 / narrow });
+  // Where the limit cuts off less than rounding, 68 % may come out a digit short even at the narrow end: nothing to widen.
+  if (excess(1 / narrow) <= 0) return narrow;
+  // So wide a bell is flat, and a flat one holds less than 68 % by FLAT_MARGIN: the root lies between.
+  return 1 / findRoot(excess, 1e-4 / limit, 1 / narrow, { absoluteTolerance: 1e-13 / narrow });
 }
 
 /** Probability of a normal variable between −x and x. */
