@@ -1,15 +1,15 @@
 /** From the light above the atmosphere to electrons per second: what the aperture holds and what falls beside it. */
-import { AB_ZERO_PHOTONS_PER_M2_S, ledgerInput, resolutionFwhmKmS } from '@faintward/photometry';
+import {
+  AB_ZERO_PHOTONS_PER_M2_S,
+  halfLightRadiusAfterSeeing,
+  ledgerInput,
+  resolutionFwhmKmS,
+} from '@faintward/photometry';
 import { collectingAreaM2 } from './ccd-equation.js';
 import { OPTIMUM_RADIUS_OVER_FWHM, THIN_CLOUD } from './constants.js';
 import type { LightBudget } from './light-budget.js';
 import { gaussianEncircledFraction, gaussianPeakPixelFraction, gaussianSlitFraction } from './point-spread.js';
-import {
-  bestApertureRadiusArcsec,
-  enclosedFractionAfterSeeing,
-  halfLightRadiusAfterSeeing,
-  peakPixelFractionAfterSeeing,
-} from './sersic-image.js';
+import { bestApertureRadiusArcsec, enclosedFractionAfterSeeing, peakPixelFractionAfterSeeing } from './sersic-image.js';
 import type { CountedRange } from './counted-range.js';
 import type {
   Aperture,

@@ -1,5 +1,5 @@
 import { findRoot } from '@faintward/numerics';
-import { halfLightRadiusAfterSeeing } from '@faintward/photometry/seeing-size';
+import { halfLightRadiusAfterSeeing } from '@faintward/photometry';
 import { describe, expect, it } from 'vitest';
 import { enclosedFractionAfterSeeing } from './sersic-image.js';
 

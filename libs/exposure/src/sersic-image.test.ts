@@ -1,12 +1,7 @@
-import { sersicB } from '@faintward/photometry';
+import { halfLightRadiusAfterSeeing, sersicB } from '@faintward/photometry';
 import { describe, expect, it } from 'vitest';
 import { gaussianEncircledFraction } from './point-spread.js';
-import {
-  bestApertureRadiusArcsec,
-  enclosedFractionAfterSeeing,
-  halfLightRadiusAfterSeeing,
-  peakPixelFractionAfterSeeing,
-} from './sersic-image.js';
+import { bestApertureRadiusArcsec, enclosedFractionAfterSeeing, peakPixelFractionAfterSeeing } from './sersic-image.js';
 
 /**
  * The same by brute force in the image plane: the profile is laid out in rings and angles, every element is blurred by the

@@ -6,6 +6,7 @@ import {
   logGamma,
   regularizedGammaP,
 } from '@faintward/numerics';
+import { halfLightRadiusAfterSeeing } from '@faintward/photometry';
 import { OPTIMUM_RADIUS_OVER_FWHM } from './constants.js';
 import { GAUSSIAN_SIGMA_OVER_FWHM, gaussianEncircledFraction, gaussianPeakPixelFraction } from './point-spread.js';
 
@@ -13,11 +14,6 @@ import { GAUSSIAN_SIGMA_OVER_FWHM, gaussianEncircledFraction, gaussianPeakPixelF
 const GAUSSIAN_LIMIT = 0.2;
 /** From this R_e/FWHM on the shape of the profile alone decides the best aperture. */
 const RESOLVED_LIMIT = 2;
-
-/** Half-light radius after seeing: √(R_e² + (FWHM/2)²); within 4 % of the convolution for n = 1, 14 % for n = 4. */
-export function halfLightRadiusAfterSeeing(halfLightRadius: number, fwhm: number): number {
-  return Math.hypot(halfLightRadius, fwhm / 2);
-}
 
 /**
  * Circular aperture that is near the best for a background-limited observation of a Sérsic profile in Gaussian seeing.
