@@ -97,8 +97,12 @@ describe('the checks', () => {
 describe('a submission', () => {
   it('freezes its content under a fingerprint that anybody can take again', async () => {
     const draft = await aReadyDraft(app);
-    const { body } = await draft.pi.post(`${draft.base}/submissions`).expect(201);
-    expect(body).toMatchObject({ number: 1, isCurrent: true, targetCount: 1 });
+    const { body: made } = await draft.pi.post(`${draft.base}/submissions`).expect(201);
+    expect(made).toMatchObject({ number: 1, isCurrent: true, targetCount: 1 });
+    // The content is answered to who asks for it: it may be large.
+    expect(made).not.toHaveProperty('content');
+    const { body } = await draft.pi.get(`${draft.base}/submissions/${made.submissionId}`).expect(200);
+    expect(body).toMatchObject(made);
     expect(createHash('sha256').update(canonicalJson(body.content)).digest('hex')).toBe(body.fingerprint);
     const [target] = (await draft.pi.get(`${draft.base}/targets`).expect(200)).body.rows;
     await draft.pi

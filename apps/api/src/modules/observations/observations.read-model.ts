@@ -62,6 +62,19 @@ export class ObservationsReadModel {
 
   /** All of a proposal, in the order of its targets. */
   async listAll(proposalId: string): Promise<Observation[]> {
+    const all: Observation[] = [];
+    await this.eachBatch(proposalId, READ_BATCH_SIZE, (batch) => {
+      all.push(...batch);
+    });
+    return all;
+  }
+
+  /** The same, so many at a time, with a turn for other requests in between. */
+  async eachBatch(
+    proposalId: string,
+    size: number,
+    work: (batch: Observation[]) => void | Promise<void>,
+  ): Promise<void> {
     const order = [asc(targets.position), asc(telescopes.position), asc(modes.name), asc(observations.id)];
     const ids = await this.database
       .current()
@@ -73,15 +86,13 @@ export class ObservationsReadModel {
       .innerJoin(telescopes, eq(telescopes.id, instruments.telescopeId))
       .where(eq(observations.proposalId, proposalId))
       .orderBy(...order);
-    const all: Observation[] = [];
-    await inBatches(ids, READ_BATCH_SIZE, async (batch) => {
+    await inBatches(ids, size, async (batch) => {
       const wanted = batch.map(({ observationId }) => observationId);
       const rows = await this.select(
         and(eq(observations.proposalId, proposalId), inArray(observations.id, wanted)),
       ).orderBy(...order);
-      all.push(...rows.map(toObservation));
+      await work(rows.map(toObservation));
     });
-    return all;
   }
 
   /** Observations that give no time, with the reason, for the checks; at most `limit` of each kind. */

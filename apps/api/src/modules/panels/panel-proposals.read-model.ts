@@ -10,6 +10,7 @@ import { semesters } from '../../database/schema/semesters.js';
 import { submissions } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
 import { DEADLINE_GRACE_SECONDS, proposalLabel } from '../semesters/semesters.read-model.js';
+import { SubmissionsReadModel } from '../submissions/submissions.read-model.js';
 import { isConflicted, isFreeOfConflict } from './conflict-conditions.read-model.js';
 
 /** A proposal as its panel knows it: what was submitted, never the working copy. */
@@ -45,7 +46,10 @@ function isBeforeThePanel(): SQL | undefined {
  */
 @Injectable()
 export class PanelProposalsReadModel {
-  constructor(private readonly database: DatabaseService) {}
+  constructor(
+    private readonly database: DatabaseService,
+    private readonly submissions: SubmissionsReadModel,
+  ) {}
 
   /** The panel's submitted proposals without those that `viewerId` has a conflict with, in the order of their labels. */
   async listVisible(panelId: string, viewerId: string): Promise<PanelProposalRow[]> {
@@ -64,7 +68,7 @@ export class PanelProposalsReadModel {
   async findVisibleContent(proposalId: string, viewerId: string): Promise<SubmittedContent | undefined> {
     const [row] = await this.database
       .current()
-      .select({ content: submissions.content })
+      .select({ submissionId: submissions.id })
       .from(submissions)
       .innerJoin(proposals, eq(proposals.id, submissions.proposalId))
       .innerJoin(semesters, eq(semesters.id, proposals.semesterId))
@@ -77,7 +81,7 @@ export class PanelProposalsReadModel {
           isFreeOfConflict(sql`${viewerId}::uuid`),
         ),
       );
-    return row?.content;
+    return row === undefined ? undefined : this.submissions.contentOf(row.submissionId);
   }
 
   /** Those among `proposalIds` that `viewerId` has no conflict with. */

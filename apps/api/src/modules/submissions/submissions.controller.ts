@@ -1,6 +1,6 @@
 import { Id } from '@faintward/contracts/common';
 import { Proposal } from '@faintward/contracts/proposals';
-import { CheckReport, Submission, SubmissionList } from '@faintward/contracts/submissions';
+import { CheckReport, Submission, SubmissionList, SubmissionSummary } from '@faintward/contracts/submissions';
 import { Controller, Get, Param, Post } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
 import type { z } from 'zod';
@@ -34,12 +34,12 @@ export class SubmissionsController {
 
   @Post('submissions')
   @Requires('proposal.submit')
-  @Answers(Submission, { status: 201 })
+  @Answers(SubmissionSummary, { status: 201 })
   submit(
     @CurrentPerson() actor: Actor,
     @Param('proposalId', { schema: Id }) proposalId: string,
     @IdempotencyKey() key: string | undefined,
-  ): Promise<Submission> {
+  ): Promise<SubmissionSummary> {
     return this.submissions.submit(actor, proposalId, key);
   }
 

@@ -5,6 +5,7 @@ import { PanelsReadModule } from '../panels/panels-read.module.js';
 import { ProposalsModule } from '../proposals/proposals.module.js';
 import { TargetsReadModule } from '../targets/targets-read.module.js';
 import { TeamModule } from '../team/team.module.js';
+import { SubmissionRows } from './submission-rows.service.js';
 import { SubmissionsController } from './submissions.controller.js';
 import { SubmissionsQueries } from './submissions.queries.js';
 import { SubmissionsReadModule } from './submissions-read.module.js';
@@ -21,7 +22,7 @@ import { SubmissionsService } from './submissions.service.js';
     TeamModule,
   ],
   controllers: [SubmissionsController],
-  providers: [SubmissionsQueries, SubmissionsService],
+  providers: [SubmissionRows, SubmissionsQueries, SubmissionsService],
   exports: [SubmissionsReadModule],
 })
 export class SubmissionsModule {}

@@ -1,13 +1,17 @@
+import type { Observation } from '@faintward/contracts/observations';
 import type { HoursByMoonClass } from '@faintward/contracts/semesters';
 import type { SubmissionSummary, SubmittedContent } from '@faintward/contracts/submissions';
+import type { Target } from '@faintward/contracts/targets';
 import { Injectable } from '@nestjs/common';
 import { and, asc, desc, eq, isNull, sql } from 'drizzle-orm';
 import { people } from '../../database/schema/people.js';
 import { proposals } from '../../database/schema/proposals.js';
 import { semesters } from '../../database/schema/semesters.js';
-import { submissions } from '../../database/schema/submissions.js';
+import { type PartKind, submissionParts, submissions } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
+import { inBatches } from '../../engine/slices.js';
 import { proposalLabel } from '../semesters/semesters.read-model.js';
+import { upgradeSubmittedContent } from './upgrade-submitted-content.js';
 
 export interface CurrentSubmission {
   submissionId: string;
@@ -43,10 +47,20 @@ export class SubmissionsReadModel {
   async currentContent(proposalId: string): Promise<CurrentSubmission | undefined> {
     const [row] = await this.database
       .current()
-      .select()
+      .select({
+        submissionId: submissions.id,
+        proposalId: submissions.proposalId,
+        number: submissions.number,
+        submittedAt: submissions.submittedAt,
+        fingerprint: submissions.fingerprint,
+        requestedHours: submissions.requestedHours,
+        targetCount: submissions.targetCount,
+      })
       .from(submissions)
       .where(and(eq(submissions.proposalId, proposalId), eq(submissions.isCurrent, true)));
-    return row === undefined ? undefined : { ...row, submissionId: row.id };
+    if (row === undefined) return undefined;
+    const content = await this.contentOf(row.submissionId);
+    return content === undefined ? undefined : { ...row, content };
   }
 
   /** The submitted proposals of a panel, in the order of their labels. */
@@ -83,12 +97,50 @@ export class SubmissionsReadModel {
   ): Promise<(SubmissionSummary & { content: SubmittedContent }) | undefined> {
     const [summary] = await this.selectSummaries(proposalId, submissionId);
     if (summary === undefined) return undefined;
+    const content = await this.contentOf(submissionId);
+    return content === undefined ? undefined : { ...summary, content };
+  }
+
+  async findSummary(proposalId: string, submissionId: string): Promise<SubmissionSummary | undefined> {
+    const [summary] = await this.selectSummaries(proposalId, submissionId);
+    return summary;
+  }
+
+  /** What a submission froze, whole, whether it was stored in parts or in one document. */
+  async contentOf(submissionId: string): Promise<SubmittedContent | undefined> {
     const [row] = await this.database
       .current()
       .select({ content: submissions.content })
       .from(submissions)
       .where(eq(submissions.id, submissionId));
-    return row === undefined ? undefined : { ...summary, content: row.content };
+    if (row === undefined) return undefined;
+    const { targets, observations, ...head } = row.content;
+    return upgradeSubmittedContent({
+      ...head,
+      targets: targets ?? (await this.rowsOf<Target>(submissionId, 'targets')),
+      observations: observations ?? (await this.rowsOf<Observation>(submissionId, 'observations')),
+    });
+  }
+
+  private async rowsOf<Row extends Target | Observation>(submissionId: string, kind: PartKind): Promise<Row[]> {
+    const isOfKind = and(eq(submissionParts.submissionId, submissionId), eq(submissionParts.kind, kind));
+    const parts = await this.database
+      .current()
+      .select({ ordinal: submissionParts.ordinal })
+      .from(submissionParts)
+      .where(isOfKind)
+      .orderBy(asc(submissionParts.ordinal));
+    const rows: Row[] = [];
+    await inBatches(parts, 1, async ([part]) => {
+      if (part === undefined) return;
+      const [stored] = await this.database
+        .current()
+        .select({ content: submissionParts.content })
+        .from(submissionParts)
+        .where(and(isOfKind, eq(submissionParts.ordinal, part.ordinal)));
+      rows.push(...((stored?.content ?? []) as Row[]));
+    });
+    return rows;
   }
 
   private async selectSummaries(proposalId: string, submissionId?: string): Promise<SubmissionSummary[]> {

@@ -1,15 +1,11 @@
+import { randomUUID } from 'node:crypto';
 import type { Proposal } from '@faintward/contracts/proposals';
-import type {
-  CheckFinding,
-  CheckReport,
-  Submission,
-  SubmissionSummary,
-  SubmittedContent,
-} from '@faintward/contracts/submissions';
+import type { CheckFinding, CheckReport, Submission, SubmissionSummary } from '@faintward/contracts/submissions';
 import { Injectable } from '@nestjs/common';
 import { Config } from '../../config/config.js';
+import type { PartKind, StoredContent } from '../../database/schema/submissions.js';
 import { DatabaseService } from '../../database/transaction.js';
-import { fingerprintOf } from '../../engine/canonical-json.js';
+import { canonicalJson } from '../../engine/canonical-json.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
 import { ENGINE_VERSION } from '../../engine/estimates.js';
 import type { Actor } from '../../platform/actor.js';
@@ -28,8 +24,20 @@ import { TargetsReadModel } from '../targets/targets.read-model.js';
 import { TeamReadModel } from '../team/team.read-model.js';
 import { findingsOf, LISTED_COUNT } from './checks.js';
 import { receiptMail } from './receipt-mail.js';
+import { fingerprintOfParts, type StoredRows, SubmissionRows } from './submission-rows.service.js';
 import { SubmissionsQueries } from './submissions.queries.js';
 import { SubmissionsReadModel } from './submissions.read-model.js';
+
+/** What was submitted without its long lists. */
+export type SubmittedHead = Omit<StoredContent, PartKind>;
+
+/** What was frozen before the transaction that makes it count. */
+interface Prepared {
+  rows: StoredRows;
+  /** Canonical JSON of all beside the rows. */
+  headJson: string;
+  fingerprint: string;
+}
 
 /** From a working copy to what the committee reads: checked, frozen, and never changed afterwards. */
 @Injectable()
@@ -39,6 +47,7 @@ export class SubmissionsService {
     private readonly database: DatabaseService,
     private readonly access: ProposalAccess,
     private readonly queries: SubmissionsQueries,
+    private readonly rows: SubmissionRows,
     private readonly readModel: SubmissionsReadModel,
     private readonly facts: ProposalFactsReadModel,
     private readonly proposals: ProposalsService,
@@ -70,14 +79,23 @@ export class SubmissionsService {
   }
 
   /** @throws {DomainError} `checks-failed` with the blocking findings as field errors */
-  async submit(actor: Actor, proposalId: string, key: string | undefined): Promise<Submission> {
-    await this.access.requireRead(actor, proposalId);
-    // Only the id is kept under the key: what was submitted is stored once already, and may be large.
-    const { submissionId } = await this.idempotency.idempotent(
-      { personId: actor.personId, key, route: `proposals/${proposalId}/submissions`, body: null },
-      () => this.store(actor, proposalId),
-    );
-    return this.get(actor, proposalId, submissionId);
+  async submit(actor: Actor, proposalId: string, key: string | undefined): Promise<SubmissionSummary> {
+    const proposal = await this.access.requireRead(actor, proposalId);
+    const ownId = randomUUID();
+    let submissionId: string | undefined;
+    try {
+      const prepared = await this.prepare(actor, proposal, ownId);
+      ({ submissionId } = await this.idempotency.idempotent(
+        { personId: actor.personId, key, route: `proposals/${proposalId}/submissions`, body: null },
+        () => this.store(actor, proposalId, ownId, prepared),
+      ));
+    } finally {
+      // Refused, or made already by an earlier request under the same key.
+      if (submissionId !== ownId) await this.queries.deleteParts(ownId);
+    }
+    const summary = await this.readModel.findSummary(proposalId, submissionId);
+    if (summary === undefined) throw notFound('submission');
+    return summary;
   }
 
   /** Takes a submitted proposal back, also from the committee; for good. */
@@ -101,17 +119,54 @@ export class SubmissionsService {
     });
   }
 
-  private async store(actor: Actor, proposalId: string): Promise<{ submissionId: string }> {
+  /**
+   * Freezes all that takes long, before the transaction: thousands of rows are read, hashed and written in turns with other
+   * requests. Undefined for what will be refused anyway.
+   */
+  private async prepare(
+    actor: Actor,
+    proposal: ProposalForMember,
+    submissionId: string,
+  ): Promise<Prepared | undefined> {
+    if (!proposal.isPrincipal || !(await this.report(proposal)).canSubmit) return undefined;
+    const { proposalId } = proposal;
+    await this.queries.deleteAbandonedParts(proposalId);
+    const head = await this.freezeHead(actor, proposal);
+    const rows = await this.rows.store(proposalId, submissionId);
+    return { rows, headJson: canonicalJson(head), fingerprint: await fingerprintOfParts(head, rows.texts) };
+  }
+
+  /** Rows and fingerprint as prepared, or anew where somebody changed something in between. */
+  private async upToDate(
+    proposalId: string,
+    submissionId: string,
+    head: SubmittedHead,
+    prepared: Prepared | undefined,
+  ): Promise<Pick<Prepared, 'rows' | 'fingerprint'>> {
+    const isCurrent = prepared !== undefined && (await this.rows.isUnchanged(proposalId, prepared.rows));
+    if (isCurrent && prepared.headJson === canonicalJson(head)) return prepared;
+    if (prepared !== undefined && !isCurrent) await this.queries.deleteParts(submissionId);
+    const rows = isCurrent ? prepared.rows : await this.rows.store(proposalId, submissionId);
+    return { rows, fingerprint: await fingerprintOfParts(head, rows.texts) };
+  }
+
+  private async store(
+    actor: Actor,
+    proposalId: string,
+    ownId: string,
+    prepared: Prepared | undefined,
+  ): Promise<{ submissionId: string }> {
     const proposal = await this.access.requirePrincipalForChange(actor, proposalId);
     const { findings } = await this.report(proposal);
     const blocking = findings.filter(({ severity }) => severity === 'blocking');
     if (blocking.length > 0) throw checksFailed(blocking);
 
-    const content = await this.freeze(actor, proposal);
-    const fingerprint = await fingerprintOf(content);
+    const content = await this.freezeHead(actor, proposal);
+    const { rows, fingerprint } = await this.upToDate(proposalId, ownId, content, prepared);
     const submittedAt = new Date();
-    const targetCount = content.targets.length;
+    const { targetCount } = rows;
     const { submissionId, number } = await this.queries.insertCurrent({
+      id: ownId,
       proposalId,
       submittedBy: actor.personId,
       submittedAt,
@@ -150,13 +205,13 @@ export class SubmissionsService {
   }
 
   /**
-   * Everything that the committee may need, and that would be needed to repeat every number. It stores nothing and checks
-   * no deadline; the actor has to be on the team.
+   * Everything that the committee may need, and that would be needed to repeat every number, beside the targets and observations
+   * themselves ({@link SubmissionRows}). It stores nothing and checks no deadline; the actor has to be on the team.
    */
-  async freeze(
+  async freezeHead(
     actor: Actor,
     { proposalId, cosmology: choice }: Pick<ProposalForMember, 'proposalId' | 'cosmology'>,
-  ): Promise<SubmittedContent> {
+  ): Promise<SubmittedHead> {
     const proposal = await this.proposals.get(actor, proposalId);
     const sections = await this.cases.listStored(proposalId);
     const team = await this.team.list(proposalId, actor.personId);
@@ -180,8 +235,6 @@ export class SubmissionsService {
         // Submitting is the principal investigator's signature.
         hasSigned: isPrincipal || signedAt !== null,
       })),
-      targets: await this.targets.listAll(proposalId),
-      observations: await this.observations.listAll(proposalId),
       timeRequest: await this.observations.timeRequest(proposalId),
       engineVersion: ENGINE_VERSION,
     };

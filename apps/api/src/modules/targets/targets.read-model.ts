@@ -85,22 +85,29 @@ export class TargetsReadModel {
   }
 
   async listAll(proposalId: string): Promise<Target[]> {
+    const all: Target[] = [];
+    await this.eachBatch(proposalId, READ_BATCH_SIZE, (batch) => {
+      all.push(...batch);
+    });
+    return all;
+  }
+
+  /** All targets in the order of the list, so many at a time, with a turn for other requests in between. */
+  async eachBatch(proposalId: string, size: number, work: (batch: Target[]) => void | Promise<void>): Promise<void> {
     const ids = await this.database
       .current()
       .select({ targetId: targets.id })
       .from(targets)
       .where(eq(targets.proposalId, proposalId))
       .orderBy(asc(targets.position), asc(targets.id));
-    const all: Target[] = [];
-    await inBatches(ids, READ_BATCH_SIZE, async (batch) => {
+    await inBatches(ids, size, async (batch) => {
       const wanted = batch.map(({ targetId }) => targetId);
       const rows = await this.select(proposalId, and(eq(targets.proposalId, proposalId), isOneOf(wanted))).orderBy(
         asc(targets.position),
         asc(targets.id),
       );
-      all.push(...rows.map(toTarget));
+      await work(rows.map(toTarget));
     });
-    return all;
   }
 
   /** Inputs of some targets, or of all, in the order of the list; those that are not there are left out. */

@@ -15,7 +15,7 @@ import {
 } from '@faintward/contracts/proposals';
 import type { TeamAccess } from '@faintward/contracts/permissions';
 import { PeopleSearchResult } from '@faintward/contracts/people';
-import { CheckReport, Submission, SubmissionList } from '@faintward/contracts/submissions';
+import { CheckReport, SubmissionList, SubmissionSummary } from '@faintward/contracts/submissions';
 import { keepPreviousData, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
 import { api } from '../../../lib/api';
@@ -183,7 +183,7 @@ export function useSubmitProposal(proposalId: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (idempotencyKey: string) =>
-      api({ method: 'POST', path: `/proposals/${proposalId}/submissions`, idempotencyKey, schema: Submission }),
+      api({ method: 'POST', path: `/proposals/${proposalId}/submissions`, idempotencyKey, schema: SubmissionSummary }),
     onSuccess: () => client.invalidateQueries({ queryKey: proposalQueries.all() }),
   });
 }
