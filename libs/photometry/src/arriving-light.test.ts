@@ -1,8 +1,8 @@
-import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { gaussLegendre } from '@faintward/numerics';
 import { createCosmology } from '@faintward/cosmology';
 import { describe, expect, it } from 'vitest';
+import { photometryFiles } from '../../../tests/factories/photometry-files.js';
 import {
   abMagnitudeOfPhotons,
   arrivingLight,
@@ -11,7 +11,6 @@ import {
   createInoue2014,
   curveValueAt,
   forestNodesNm,
-  type IntergalacticTable,
   Ledger,
   lineFluxFromLuminosity,
   type LineLight,
@@ -26,14 +25,9 @@ import {
   sourceTemplates,
 } from './index.js';
 
-const reference = (name: string): unknown =>
-  JSON.parse(readFileSync(new URL(`../../../seed/reference/${name}`, import.meta.url), 'utf8'));
-
-const INOUE = createInoue2014((reference('igm-inoue2014.json') as { data: IntergalacticTable }).data);
-const TEMPLATES = sourceTemplates({
-  quasarHewettWild2010: reference('template-quasar-hewett-wild-2010.json') as never,
-  supernovaIaHsiao: reference('template-supernova-ia-hsiao.json') as never,
-});
+const FILES = photometryFiles();
+const INOUE = createInoue2014(FILES.intergalacticInoue2014.data);
+const TEMPLATES = sourceTemplates(FILES);
 const PLANCK18 = createCosmology('planck18');
 const CONV70 = createCosmology('conv70');
 const J_BAND = responseOf(boxCurve(1170, 1330));

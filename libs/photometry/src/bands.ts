@@ -1,94 +1,74 @@
-export type BandId = 'U' | 'B' | 'V' | 'R' | 'I' | 'u' | 'g' | 'r' | 'i' | 'z' | 'Y' | 'J' | 'H' | 'Ks';
+import { OutOfDomainError } from './domain.js';
+import type { Provenance } from './provenance.js';
+import { sampledCurve, type SampledCurve } from './sampled-curve.js';
+import { responseOf } from './synthetic.js';
 
-/** Where a number in the band table comes from. */
-export type Provenance = 'published' | 'publishedFromMemory' | 'commonPractice';
+export type { Provenance } from './provenance.js';
 
+/** Every band there is; the table of a file has each of them once. Case matters: `r` and `R` are different bands. */
+export const BAND_IDS = ['U', 'B', 'V', 'R', 'I', 'u', 'g', 'r', 'i', 'z', 'Y', 'J', 'H', 'Ks'] as const;
+export type BandId = (typeof BAND_IDS)[number];
+
+/** A row of `bands.json`. */
+export interface BandRow {
+  readonly id: BandId;
+  readonly label: string;
+  /**
+   * m_AB − m_Vega; `null` for bands that are quoted in AB anyway. For a Vega-like spectrum through a standard filter; another of the
+   * same name can differ by some 0.05 mag.
+   */
+  readonly vegaToAbMag: number | null;
+  readonly vegaToAbProvenance: Provenance | null;
+  readonly vegaToAbSource: string | null;
+  readonly curveProvenance: Provenance;
+  readonly curveSource: string;
+  readonly wavelengthsNm: readonly number[];
+  /** Per photon, 1 at the peak. */
+  readonly response: readonly number[];
+}
+
+export interface BandsTable {
+  readonly bands: readonly BandRow[];
+}
+
+/** A band for magnitudes that people quote. Instruments bring their own responses. */
 export interface Band {
   readonly id: BandId;
   readonly label: string;
-  /** Edges of an equivalent box: round numbers for planning, not a filter curve. */
+  /** Photon-counting response, 1 at its peak. */
+  readonly curve: SampledCurve;
+  readonly pivotWavelengthNm: number;
+  /** Outermost wavelengths at which the response is half of its peak. */
   readonly wavelengthLowNm: number;
   readonly wavelengthHighNm: number;
-  readonly edgesProvenance: Provenance;
-  readonly edgesSource: string;
-  /** m_AB − m_Vega; `null` for bands that are quoted in AB anyway. */
+  readonly curveSource: string;
+  readonly curveProvenance: Provenance;
   readonly vegaToAbMag: number | null;
   readonly vegaToAbProvenance: Provenance | null;
   readonly vegaToAbSource: string | null;
 }
 
-const BLANTON_ROWEIS = 'Blanton & Roweis 2007, AJ 133, 734';
-const TYPICAL_EDGES = 'typical half-power edges of filters of this name; instruments bring their own';
-const ATMOSPHERIC_WINDOW = 'usual limits of the near-infrared atmospheric window';
-
-/** Bands for magnitudes that people type. Instruments bring their own wavelength ranges. */
-export const BANDS: Readonly<Record<BandId, Band>> = {
-  U: vegaBand('U', 'U', 330, 400, 0.79, 'publishedFromMemory'),
-  B: vegaBand('B', 'B', 390, 490, -0.09, 'published'),
-  V: vegaBand('V', 'V', 505, 595, 0.02, 'published'),
-  R: vegaBand('R', 'R', 570, 720, 0.21, 'publishedFromMemory'),
-  I: vegaBand('I', 'I', 730, 880, 0.45, 'publishedFromMemory'),
-  u: abBand('u', 'u', 325, 385),
-  g: abBand('g', 'g', 400, 550),
-  r: abBand('r', 'r', 555, 690),
-  i: abBand('i', 'i', 695, 820),
-  z: abBand('z', 'z', 825, 925),
-  Y: { ...abBand('Y', 'Y', 970, 1070), edgesSource: ATMOSPHERIC_WINDOW },
-  J: vegaBand('J', 'J', 1170, 1330, 0.91, 'published', ATMOSPHERIC_WINDOW),
-  H: vegaBand('H', 'H', 1490, 1780, 1.39, 'published', ATMOSPHERIC_WINDOW),
-  Ks: vegaBand('Ks', 'Ks', 2000, 2300, 1.85, 'published', ATMOSPHERIC_WINDOW),
-};
-
-function abBand(id: BandId, label: string, wavelengthLowNm: number, wavelengthHighNm: number): Band {
-  return {
-    id,
-    label,
-    wavelengthLowNm,
-    wavelengthHighNm,
-    edgesProvenance: 'commonPractice',
-    edgesSource: TYPICAL_EDGES,
-    vegaToAbMag: null,
-    vegaToAbProvenance: null,
-    vegaToAbSource: null,
-  };
-}
-
-function vegaBand(
-  id: BandId,
-  label: string,
-  wavelengthLowNm: number,
-  wavelengthHighNm: number,
-  vegaToAbMag: number,
-  vegaToAbProvenance: Provenance,
-  edgesSource = TYPICAL_EDGES,
-): Band {
-  return {
-    ...abBand(id, label, wavelengthLowNm, wavelengthHighNm),
-    edgesSource,
-    vegaToAbMag,
-    vegaToAbProvenance,
-    vegaToAbSource: BLANTON_ROWEIS,
-  };
-}
-
-/** The band of an id, or undefined. Case matters: `r` and `R` are different bands. */
-export function findBand(id: string): Band | undefined {
-  return Object.hasOwn(BANDS, id) ? BANDS[id as BandId] : undefined;
-}
+export type Bands = Readonly<Record<BandId, Band>>;
 
 /**
- * AB magnitude of a Vega magnitude, or undefined for a band that has no Vega offset here.
+ * Bands from their file.
  *
- * The offsets are for a Vega-like spectrum through standard filters; another filter of the same name can differ by
- * some 0.05 mag.
+ * @throws {OutOfDomainError} naming the first point of a curve that cannot be, or a band that is missing or stands twice
  */
-export function abFromVegaMagnitude(magnitudeVega: number, bandId: BandId): number | undefined {
-  const offset = BANDS[bandId].vegaToAbMag;
-  return offset === null ? undefined : magnitudeVega + offset;
+export function createBands({ data }: { readonly data: BandsTable }): Bands {
+  const made = new Map<BandId, Band>();
+  for (const row of data.bands) {
+    if (made.has(row.id)) throw new OutOfDomainError('bands', row.id, 'in the table once');
+    made.set(row.id, bandOf(row));
+  }
+  const missing = BAND_IDS.filter((id) => !made.has(id));
+  if (missing.length > 0)
+    throw new OutOfDomainError('bands', [...made.keys()], `complete: ${missing.join(', ')} missing`);
+  return Object.fromEntries(made) as Bands;
 }
 
-/** Vega magnitude of an AB magnitude, or undefined for a band that has no Vega offset here. */
-export function vegaFromAbMagnitude(magnitudeAb: number, bandId: BandId): number | undefined {
-  const offset = BANDS[bandId].vegaToAbMag;
-  return offset === null ? undefined : magnitudeAb - offset;
+function bandOf({ wavelengthsNm, response, ...row }: BandRow): Band {
+  const curve = sampledCurve(wavelengthsNm, response);
+  const { pivotWavelengthNm, passLowNm, passHighNm } = responseOf(curve);
+  return { ...row, curve, pivotWavelengthNm, wavelengthLowNm: passLowNm, wavelengthHighNm: passHighNm };
 }

@@ -32,8 +32,9 @@ export {
   pivotWavelengthOfBoxNm,
   powerLawColourMag,
 } from './photons.js';
-export { BANDS, abFromVegaMagnitude, findBand, vegaFromAbMagnitude } from './bands.js';
-export type { BandId, Provenance } from './bands.js';
+export { BAND_IDS, createBands } from './bands.js';
+export type { Band, BandId, Bands, BandsTable } from './bands.js';
+export type { Provenance } from './provenance.js';
 export {
   apparentMagnitudeAtRestWavelength,
   apparentMagnitudeInSameBand,
@@ -46,15 +47,15 @@ export {
 export { meanSurfaceBrightness, surfaceBrightnessDimmingMag } from './dimming.js';
 export type { DimmingConvention } from './dimming.js';
 export {
-  LINES,
+  LINE_IDS,
   LYMAN_ALPHA_NM,
   LYMAN_LIMIT_NM,
-  findLine,
+  createLines,
   lineFluxFromLuminosity,
   lineLuminosityFromFlux,
   observedEquivalentWidthNm,
 } from './lines.js';
-export type { LineId, SpectralLine } from './lines.js';
+export type { LineId, LinesTable, SpectralLine } from './lines.js';
 export {
   LYMAN_ALPHA_OVER_H_ALPHA,
   STAR_FORMATION_CALIBRATIONS,
@@ -186,9 +187,5 @@ export type {
 } from './typical-values.js';
 export { halfLightRadiusAfterSeeing, imageRegime } from './seeing-size.js';
 export type { ImageRegime } from './seeing-size.js';
-export { BAND_IDS, abFromVegaIn, createBands, findBandIn, vegaFromAbIn } from './band-data.js';
-export type { Band, Bands, BandsTable } from './band-data.js';
-export { LINE_IDS, createLines } from './line-data.js';
-export type { LinesTable, ReferenceLine } from './line-data.js';
 export { ATMOSPHERE_HIGH_NM, ATMOSPHERE_LOW_NM, atmosphericRangeAt, createAtmosphere } from './atmosphere-data.js';
 export type { AtmosphereTable, AtmosphericRange } from './atmosphere-data.js';

@@ -1,4 +1,4 @@
-import { findBand, type BandId } from './bands.js';
+import { BAND_IDS, type BandId } from './bands.js';
 
 /** A magnitude as typed, apparent or absolute. */
 export type TypedMagnitude =
@@ -67,8 +67,8 @@ function nameFirst(normal: string): TypedMagnitude | undefined {
   if (index === '' || isSystem) return magnitude(Number(value), system ?? index, true, null, null);
   if (/^\d+$/.test(index)) return magnitude(Number(value), system, true, Number(index) * NM_PER_ANGSTROM, null);
   if (/^uv$/i.test(index)) return magnitude(Number(value), system, true, ULTRAVIOLET_NM, null);
-  const band = findBand(index === 'K' ? 'Ks' : index);
-  return band === undefined ? undefined : magnitude(Number(value), system, true, null, band.id);
+  const bandId = BAND_IDS.find((id) => id === (index === 'K' ? 'Ks' : index));
+  return bandId === undefined ? undefined : magnitude(Number(value), system, true, null, bandId);
 }
 
 function absoluteWordsFirst(normal: string): TypedMagnitude | undefined {

@@ -1,10 +1,9 @@
 /** What the files of reference data must look like; kept out of the main entry because it brings the schema library. */
 import { z } from 'zod';
 import type { AtmosphereTable } from './atmosphere-data.js';
-import type { BandsTable } from './band-data.js';
+import type { BandsTable } from './bands.js';
 import type { DUST_LAW_COEFFICIENTS } from './dust-coefficients.js';
 import type { IntergalacticTable } from './intergalactic-table.js';
-import type { LinesTable } from './line-data.js';
 import {
   AtmosphereData,
   BandsData,
@@ -26,7 +25,6 @@ export interface PhotometryFiles extends SourceTemplateFiles {
   readonly intergalacticMadau1995: ReferenceFile<IntergalacticTable>;
   readonly dustLaws: ReferenceFile<typeof DUST_LAW_COEFFICIENTS>;
   readonly bands: ReferenceFile<BandsTable>;
-  readonly lines: ReferenceFile<LinesTable>;
   readonly atmosphere: ReferenceFile<AtmosphereTable>;
   readonly typicalValues: TypicalValuesFile;
 }
@@ -38,7 +36,6 @@ export const PHOTOMETRY_FILE_NAMES: Readonly<Record<keyof PhotometryFiles, strin
   intergalacticMadau1995: 'igm-madau1995.json',
   dustLaws: 'dust-laws.json',
   bands: 'bands.json',
-  lines: 'lines.json',
   atmosphere: 'atmosphere-windows.json',
   typicalValues: TYPICAL_VALUES_FILE_NAME,
 };

@@ -1,10 +1,10 @@
 /** Schemas of the data of each reference file; what the numbers mean is said where the types are. */
 import { z } from 'zod';
 import { createAtmosphere, type AtmosphereTable } from './atmosphere-data.js';
-import { BAND_IDS, createBands, type BandsTable } from './band-data.js';
+import { BAND_IDS, createBands, type BandsTable } from './bands.js';
 import { DUST_LAW_COEFFICIENTS } from './dust-coefficients.js';
 import type { ContinuumBranch, IntergalacticTable, LineBranch } from './intergalactic-table.js';
-import { createLines, LINE_IDS, type LinesTable } from './line-data.js';
+import { createLines, LINE_IDS, type LinesTable } from './lines.js';
 import { sampledCurve } from './sampled-curve.js';
 import type { SpectrumSeriesTable, SpectrumTable } from './sources/templates.js';
 import type { TypicalValues } from './typical-values.js';

@@ -1,25 +1,11 @@
-import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { photometryFiles } from '../../../tests/factories/photometry-files.js';
 import { boxCurve, curveValueAt, sampledCurve, type SampledCurve } from './sampled-curve.js';
-import {
-  SOURCE_TEMPLATE_FILE_NAMES,
-  restSpectrum,
-  sourceTemplates,
-  supernovaPhaseMag,
-  type SourceKind,
-  type SourceTemplateFiles,
-} from './source-spectra.js';
+import { restSpectrum, sourceTemplates, supernovaPhaseMag, type SourceKind } from './source-spectra.js';
 import { integral } from './sources/rebin.js';
 
-const read = <K extends keyof SourceTemplateFiles>(key: K): SourceTemplateFiles[K] =>
-  JSON.parse(
-    readFileSync(new URL(`../../../seed/reference/${SOURCE_TEMPLATE_FILE_NAMES[key]}`, import.meta.url), 'utf8'),
-  ) as SourceTemplateFiles[K];
-const files: SourceTemplateFiles = {
-  quasarHewettWild2010: read('quasarHewettWild2010'),
-  supernovaIaHsiao: read('supernovaIaHsiao'),
-};
+const files = photometryFiles();
 const templates = sourceTemplates(files);
 const LYMAN = [91.175, 97.2537, 102.572, 121.567];
 const of = (kind: SourceKind, jumpsNm: readonly number[] = LYMAN) => restSpectrum(kind, templates, jumpsNm);

@@ -42,7 +42,7 @@ export function restSpectrum(
     case 'powerLaw':
       return powerLawSpectrum(kind, jumpsNm);
     case 'starForming':
-      return starFormingSpectrum(kind, jumpsNm);
+      return starFormingSpectrum(kind, templates, jumpsNm);
     case 'passive':
       return passiveSpectrum(jumpsNm);
     case 'quasar':

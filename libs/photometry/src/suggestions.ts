@@ -1,4 +1,4 @@
-import type { Provenance } from './bands.js';
+import type { Provenance } from './provenance.js';
 import {
   brighterThanPerMpc3,
   nearestLuminosityFunction,

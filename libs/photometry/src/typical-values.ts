@@ -1,5 +1,5 @@
 import { gaussLegendre } from '@faintward/numerics';
-import type { Provenance } from './bands.js';
+import type { Provenance } from './provenance.js';
 import { OutOfDomainError, requireRedshift } from './domain.js';
 import type { ReferenceFile } from './sources/templates.js';
 

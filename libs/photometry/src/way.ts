@@ -1,5 +1,4 @@
 /** What a spectrum meets on its way, tabulated on its own points. Tables are kept with the points they belong to. */
-import { LYMAN_ALPHA_NM } from './lines.js';
 import { attenuationOnNodes, defaultTotalToSelective, trueColourExcess, type DustLaw } from './dust.js';
 import type { IntergalacticMedium } from './intergalactic.js';
 import { firstAbove, type SampledCurve } from './sampled-curve.js';
@@ -21,12 +20,12 @@ const media = new WeakMap<IntergalacticMedium, ReturnType<typeof forestTables>>(
 
 function forestTables(medium: IntergalacticMedium) {
   return keptByNodes((nodesNm) => {
-    const count = firstAbove(nodesNm, LYMAN_ALPHA_NM);
+    const count = firstAbove(nodesNm, medium.jumpsRestNm.at(-1)!);
     return { count, onNodes: medium.onNodes(nodesNm.subarray(0, count)) };
   });
 }
 
-/** Mean transmission at the first points of a spectrum, those short of Lyα; beyond them everything comes through. */
+/** Mean transmission at the first points of a spectrum, up to Lyα as the medium has it; beyond them everything comes through. */
 export function forestTransmission(medium: IntergalacticMedium, nodesNm: Float64Array, redshift: number): Float64Array {
   let tables = media.get(medium);
   if (tables === undefined) media.set(medium, (tables = forestTables(medium)));

@@ -1,11 +1,11 @@
-import { findLine, LYMAN_LIMIT_NM, type LineId } from '../lines.js';
+import { LYMAN_LIMIT_NM, type LineId } from '../lines.js';
 import { SPEED_OF_LIGHT_KM_S } from '../constants.js';
 import { restGrid, sampleOn } from '../rest-grid.js';
 import { firstAbove, type SampledCurve } from '../sampled-curve.js';
 import { gaussianSigmaFromFwhm } from '../wavelengths.js';
 import { binMeans } from './rebin.js';
 import { caution, type RestSpectrum, type SpectrumCaution } from './rest-spectrum.js';
-import type { SourceTemplates, SpectrumTemplate } from './templates.js';
+import type { SourceTemplates, SpectralLines } from './templates.js';
 
 export interface QuasarSource {
   readonly kind: 'quasar';
@@ -51,22 +51,25 @@ const REDWARD = caution(
   HIGHEST_NM,
 );
 
+type Templates = Pick<SourceTemplates, 'quasarHewettWild2010' | 'lines'>;
+
 export function quasarSpectrum(
   { template }: QuasarSource,
-  templates: Pick<SourceTemplates, 'quasarHewettWild2010'>,
+  templates: Templates,
   jumpsNm: readonly number[],
 ): RestSpectrum {
-  return template === 'powerLaws' ? powerLawQuasar(jumpsNm) : composite(templates.quasarHewettWild2010, jumpsNm);
+  return template === 'powerLaws' ? powerLawQuasar(templates.lines, jumpsNm) : composite(templates, jumpsNm);
 }
 
 /**
  * f_ν ∝ ν^−0.44 to 500 nm, ν^−2.45 beyond, ν^−1.7 below the Lyman limit, and broad lines (Lyα with N V, C IV, C III], Mg II, Hβ, Hα)
  * as Gaussians of 5000 km/s.
  */
-function powerLawQuasar(jumpsNm: readonly number[]): RestSpectrum {
+function powerLawQuasar(lines: SpectralLines, jumpsNm: readonly number[]): RestSpectrum {
+  const broad = linesOverContinuum(BROAD_LINES, lines);
   const grid = restGrid(jumpsNm, [LYMAN_LIMIT_NM, BREAK_NM, HIGHEST_NM]);
   return quasar(
-    sampleOn(grid, (x) => continuumValue(x) * (1 + linesOverContinuum(x, BROAD_LINES))),
+    sampleOn(grid, (x) => continuumValue(x) * (1 + broad(x))),
     'quasar, two power laws with broad lines',
     'Vanden Berk et al. 2001, AJ 122, 549 (slopes and equivalent widths from memory)',
     'publishedFromMemory',
@@ -97,7 +100,8 @@ const ANCHOR_END_NM = 129;
  * The composite, as means over bins around the nodes of the common grid, which conserves its flux. Blueward of its first point
  * the power law and the Lyα of {@link powerLawQuasar}, scaled to its mean up to 129 nm; it ends with its last point.
  */
-function composite({ curve, source, provenance }: SpectrumTemplate, jumpsNm: readonly number[]): RestSpectrum {
+function composite({ quasarHewettWild2010, lines }: Templates, jumpsNm: readonly number[]): RestSpectrum {
+  const { curve, source, provenance } = quasarHewettWild2010;
   const low = curve.wavelengthsNm[0]!;
   const high = curve.wavelengthsNm.at(-1)!;
   const anchor = scaleOf(curve, ANCHOR_END_NM);
@@ -105,8 +109,11 @@ function composite({ curve, source, provenance }: SpectrumTemplate, jumpsNm: rea
   const inside = grid.filter((x) => x >= low && x <= high);
   const means = binMeans(curve, inside);
   const firstInside = firstAbove(grid, low) - 2;
-  const lyman = BROAD_LINES.filter(({ id }) => id === 'Lya');
-  const continuum = sampleOn(grid, (x) => anchor * continuumValue(x) * (1 + linesOverContinuum(x, lyman)));
+  const lymanAlpha = linesOverContinuum(
+    BROAD_LINES.filter(({ id }) => id === 'Lya'),
+    lines,
+  );
+  const continuum = sampleOn(grid, (x) => anchor * continuumValue(x) * (1 + lymanAlpha(x)));
   for (let i = 0; i < grid.length; i++) {
     // The first of the two nodes at the lower end belongs to the power law, the second of those at the upper end to nothing.
     if (i > firstInside && i <= firstInside + inside.length - 2) continuum.values[i] = means[i - firstInside]!;
@@ -148,17 +155,19 @@ function continuumValue(wavelengthNm: number): number {
   );
 }
 
-/** Lines over the continuum at the line: W times a Gaussian of unit area; the continuum hardly changes across it. */
-function linesOverContinuum(wavelengthNm: number, lines: typeof BROAD_LINES): number {
-  let sum = 0;
-  for (const { id, equivalentWidthNm } of lines) {
-    const centre = findLine(id)!.vacuumWavelengthNm;
+/** Lines over the continuum: W times a Gaussian of unit area, times the continuum at the line over that at the wavelength. */
+function linesOverContinuum(broad: typeof BROAD_LINES, lines: SpectralLines): (wavelengthNm: number) => number {
+  const gaussians = broad.map(({ id, equivalentWidthNm }) => {
+    const centre = lines[id].vacuumWavelengthNm;
     const sigma = (gaussianSigmaFromFwhm(BROAD_LINE_WIDTH_KM_S) / SPEED_OF_LIGHT_KM_S) * centre;
-    const distance = (wavelengthNm - centre) / sigma;
-    if (Math.abs(distance) > 8) continue;
-    sum +=
-      ((equivalentWidthNm * Math.exp(-0.5 * distance * distance)) / (sigma * Math.sqrt(2 * Math.PI))) *
-      (continuumValue(centre) / continuumValue(wavelengthNm));
-  }
-  return sum;
+    return { centre, sigma, peak: (equivalentWidthNm * continuumValue(centre)) / (sigma * Math.sqrt(2 * Math.PI)) };
+  });
+  return (wavelengthNm) => {
+    let sum = 0;
+    for (const { centre, sigma, peak } of gaussians) {
+      const distance = (wavelengthNm - centre) / sigma;
+      if (Math.abs(distance) <= 8) sum += peak * Math.exp(-0.5 * distance * distance);
+    }
+    return sum / continuumValue(wavelengthNm);
+  };
 }

@@ -1,5 +1,5 @@
-import type { Provenance } from '../bands.js';
-import { findLine, type LineId } from '../lines.js';
+import type { LineId, SpectralLine } from '../lines.js';
+import type { Provenance } from '../provenance.js';
 import type { SampledCurve } from '../sampled-curve.js';
 
 /** A narrow emission line. */
@@ -41,10 +41,9 @@ export interface RestSpectrum {
 /** FWHM in km/s that narrow lines of a galaxy are drawn with: common practice. */
 export const NARROW_LINE_WIDTH_KM_S = 200;
 
-/** A line of the list with a flux. */
-export function restLine(id: LineId, flux: number, velocityWidthKmS = NARROW_LINE_WIDTH_KM_S): RestLine {
-  const line = findLine(id)!;
-  return { id, label: line.label, restWavelengthNm: line.vacuumWavelengthNm, flux, velocityWidthKmS };
+/** A line with a flux, as narrow as those of a galaxy. */
+export function restLine({ id, label, vacuumWavelengthNm }: SpectralLine, flux: number): RestLine {
+  return { id, label, restWavelengthNm: vacuumWavelengthNm, flux, velocityWidthKmS: NARROW_LINE_WIDTH_KM_S };
 }
 
 export function caution(code: string, message: string, lowNm?: number, highNm?: number): SpectrumCaution {

@@ -1,8 +1,9 @@
 import { OutOfDomainError } from '../domain.js';
-import { LYMAN_LIMIT_NM } from '../lines.js';
+import { type LineId, LYMAN_LIMIT_NM } from '../lines.js';
 import { REST_GRID_LOW_NM, isBelow, restGrid, sampleOn } from '../rest-grid.js';
 import { formatSlope } from './power-law.js';
 import { caution, restLine, type RestLine, type RestSpectrum } from './rest-spectrum.js';
+import type { SourceTemplates, SpectralLines } from './templates.js';
 
 export interface StarFormingSource {
   readonly kind: 'starForming';
@@ -44,7 +45,11 @@ const OXYGEN_III_OVER_H_BETA = 5;
  * The steps are described by Bruzual 1983, ApJ 273, 105; the slope beyond and the shape between are common practice, good to
  * about 0.3 mag in a broad band.
  */
-export function starFormingSpectrum(source: StarFormingSource, jumpsNm: readonly number[]): RestSpectrum {
+export function starFormingSpectrum(
+  source: StarFormingSource,
+  { lines }: Pick<SourceTemplates, 'lines'>,
+  jumpsNm: readonly number[],
+): RestSpectrum {
   const { slopeBeta, breakRatio } = source;
   if (!Number.isFinite(slopeBeta)) throw new OutOfDomainError('slopeBeta', slopeBeta, 'a finite number');
   if (!(breakRatio > 0 && breakRatio < Infinity)) throw new OutOfDomainError('breakRatio', breakRatio, 'above 0');
@@ -55,7 +60,7 @@ export function starFormingSpectrum(source: StarFormingSource, jumpsNm: readonly
     source: 'two power laws joined at the Balmer and 4000 Å breaks, lines by equivalent width',
     provenance: 'commonPractice',
     continuum: sampleOn(grid, (x, side) => (isBelow(x, LYMAN_LIMIT_NM, side) ? 0 : value(x))),
-    lines: linesOf(source, value),
+    lines: linesOf(source, value, lines),
     validLowNm: REST_GRID_LOW_NM,
     validHighNm: HIGHEST_NM,
     cautions: [
@@ -87,13 +92,17 @@ function continuumOf(slopeBeta: number, breakRatio: number): (wavelengthNm: numb
   };
 }
 
-function linesOf(source: StarFormingSource, continuum: (wavelengthNm: number) => number): RestLine[] {
-  const lines: RestLine[] = [];
-  const add = (field: string, equivalentWidthNm: number, shares: Parameters<typeof shareOut>[0]): void => {
+function linesOf(
+  source: StarFormingSource,
+  continuum: (wavelengthNm: number) => number,
+  lines: SpectralLines,
+): RestLine[] {
+  const made: RestLine[] = [];
+  const add = (field: string, equivalentWidthNm: number, shares: readonly LineShare[]): void => {
     if (!(equivalentWidthNm >= 0 && equivalentWidthNm < Infinity)) {
       throw new OutOfDomainError(field, equivalentWidthNm, '0 or more');
     }
-    if (equivalentWidthNm > 0) lines.push(...shareOut(shares, equivalentWidthNm, continuum));
+    if (equivalentWidthNm > 0) made.push(...shareOut(shares, equivalentWidthNm, continuum, lines));
   };
   add('lymanAlphaNm', source.lymanAlphaNm, [['Lya', 1]]);
   add('oxygenIINm', source.oxygenIINm, [
@@ -106,17 +115,19 @@ function linesOf(source: StarFormingSource, continuum: (wavelengthNm: number) =>
     ['OIII_5008', 1],
   ]);
   add('hydrogenAlphaNm', source.hydrogenAlphaNm, [['Ha', 1]]);
-  return lines;
+  return made;
 }
+
+type LineShare = readonly [LineId, number];
 
 /** The flux of an equivalent width against the continuum at the last line, shared out in proportion. */
 function shareOut(
-  shares: readonly (readonly [RestLine['id'], number])[],
+  shares: readonly LineShare[],
   equivalentWidthNm: number,
   continuum: (wavelengthNm: number) => number,
+  lines: SpectralLines,
 ): RestLine[] {
   const total = shares.reduce((sum, [, share]) => sum + share, 0);
-  const last = restLine(shares.at(-1)![0], 0);
-  const flux = equivalentWidthNm * continuum(last.restWavelengthNm);
-  return shares.map(([id, share]) => restLine(id, (flux * share) / total));
+  const flux = equivalentWidthNm * continuum(lines[shares.at(-1)![0]].vacuumWavelengthNm);
+  return shares.map(([id, share]) => restLine(lines[id], (flux * share) / total));
 }

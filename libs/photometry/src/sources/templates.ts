@@ -1,5 +1,6 @@
-import type { Provenance } from '../bands.js';
 import { OutOfDomainError } from '../domain.js';
+import { createLines, type LineId, type LinesTable, type SpectralLine } from '../lines.js';
+import type { Provenance } from '../provenance.js';
 import { sampledCurve, type SampledCurve } from '../sampled-curve.js';
 
 /** A file of reference data: what it is and whose, and the numbers. */
@@ -28,17 +29,21 @@ export interface SpectrumSeriesTable {
   readonly fluxPerWavelength: readonly (readonly number[])[];
 }
 
-/** The template files as parsed from JSON, under `seed/reference`. */
+/** The files that spectra are made from, as parsed from JSON, under `seed/reference`. */
 export interface SourceTemplateFiles {
   readonly quasarHewettWild2010: ReferenceFile<SpectrumTable>;
   readonly supernovaIaHsiao: ReferenceFile<SpectrumSeriesTable>;
+  readonly lines: ReferenceFile<LinesTable>;
 }
 
 /** Their names. */
 export const SOURCE_TEMPLATE_FILE_NAMES: Readonly<Record<keyof SourceTemplateFiles, string>> = {
   quasarHewettWild2010: 'template-quasar-hewett-wild-2010.json',
   supernovaIaHsiao: 'template-supernova-ia-hsiao.json',
+  lines: 'lines.json',
 };
+
+export type SpectralLines = Readonly<Record<LineId, SpectralLine>>;
 
 export interface SpectrumTemplate {
   readonly source: string;
@@ -54,9 +59,11 @@ export interface SpectrumSeries {
   readonly curves: readonly SampledCurve[];
 }
 
+/** What spectra are made from beside a person's parameters. */
 export interface SourceTemplates {
   readonly quasarHewettWild2010: SpectrumTemplate;
   readonly supernovaIaHsiao: SpectrumSeries;
+  readonly lines: SpectralLines;
 }
 
 /**
@@ -73,6 +80,7 @@ export function sourceTemplates(files: SourceTemplateFiles): SourceTemplates {
       curve: sampledCurve(data.wavelengthsNm, data.fluxPerWavelength),
     },
     supernovaIaHsiao: series(files.supernovaIaHsiao),
+    lines: Object.fromEntries(createLines(files.lines).map((line) => [line.id, line])) as SpectralLines,
   };
 }
 
