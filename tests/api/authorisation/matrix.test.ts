@@ -38,6 +38,7 @@ interface Ids {
   panelId: string;
   targetId: string;
   observationId: string;
+  spectrumId: string;
   submissionId: string;
   memberId: string;
   modeId: string;
@@ -85,6 +86,11 @@ const OF_TEAMS: Record<string, Entry> = {
   [`POST ${P}/targets/import`]: { ...TARGETS, body: () => TABLE },
   [`GET ${P}/targets/{targetId}`]: READS,
   [`PATCH ${P}/targets/{targetId}`]: { ...TARGETS, isVersioned: true, body: () => ({ redshift: 9 }) },
+  [`GET ${P}/targets/{targetId}/light`]: READS,
+  [`GET ${P}/cosmologies`]: READS,
+  [`GET ${P}/spectra`]: READS,
+  [`POST ${P}/spectra`]: { ...TARGETS, body: () => ({ name: 'S', text: 'too short' }) },
+  [`DELETE ${P}/spectra/{spectrumId}`]: TARGETS,
   [`GET ${P}/observations`]: READS,
   [`POST ${P}/observations/apply`]: {
     ...TARGETS,
@@ -231,7 +237,13 @@ describe('who is received where', () => {
     await seatElsewhere(semester.id);
     const draft = await aDraft(app, { semesterId: semester.id, principal: people.principal });
     const memberId = await joinTeam(draft.proposalId);
-    const { targetId } = await aTarget(draft);
+    const text = Array.from({ length: 20 }, (_, index) => `${100 + 60 * index} 1`).join('\n');
+    const { body: spectrum } = await draft.pi.post(`${draft.base}/spectra`).send({ name: 'Flat', text }).expect(201);
+    const { spectrumId } = spectrum as { spectrumId: string };
+    // In use, so that nobody can remove it.
+    const { targetId } = await aTarget(draft, {
+      light: { kind: 'apparentMagnitude', magnitude: 22, bandId: 'r', spectrum: { kind: 'uploaded', spectrumId } },
+    });
     const modeId = await planAll(app, draft);
     const { body } = await draft.pi.get(`${draft.base}/observations`).expect(200);
     await app.db.update(proposals).set({ panelId: panel.id }).where(eq(proposals.id, draft.proposalId));
@@ -241,6 +253,7 @@ describe('who is received where', () => {
       panelId: panel.id,
       targetId,
       observationId: body.rows[0].observationId,
+      spectrumId,
       submissionId: NOTHING,
       memberId,
       modeId,
@@ -285,6 +298,7 @@ describe('who is received where', () => {
       panelId: panel.id,
       targetId: NOTHING,
       observationId: NOTHING,
+      spectrumId: NOTHING,
       submissionId: submission?.id ?? NOTHING,
       memberId,
       modeId: mode.id,

@@ -197,7 +197,10 @@ describe('an import', () => {
       for (const row of rows) {
         expect(row.computed.luminosityDistanceMpc).not.toBeNull();
         expect(row.computed.ageGyr).not.toBeNull();
-        expect(row.computed.apparentMagnitudeAb).not.toBeNull();
+        // Far enough away nothing of a source arrives in V, and its notice says so.
+        const isDark = row.computed.notices.some(({ code }: { code: string }) => code === 'beyondLymanBreak');
+        expect(row.computed.apparentMagnitudeAb === null).toBe(isDark);
+        if (row.redshift < 3 || row.redshift > 10) expect(isDark).toBe(row.redshift > 10);
         expect(row.computed.upSummary).not.toBeNull();
         expect(row.computed.inputHash).toMatch(/^[0-9a-f]{64}$/);
         seen += 1;
@@ -227,6 +230,8 @@ describe('an import', () => {
         declinationDeg: -0.000123456789,
         redshift: 7.1234567891,
         notes: '+1 "quoted", yes',
+        redshiftUncertainty: { kind: 'percentiles', p16: 7.07, p50: 7.1234567891, p84: 7.15 },
+        light: { kind: 'starFormationRate', solarMassesPerYear: 8.12345678901, tracer: 'hydrogenAlpha' },
       })
       .expect(201);
     const exported = await draft.pi.get(`${draft.base}/targets/export.csv`).expect(200);
@@ -242,10 +247,89 @@ describe('an import', () => {
       expect(row.name).toBe(before[index].name);
       expect(row.notes).toBe(before[index].notes);
       expect(row.light).toEqual(before[index].light);
+      expect(row.redshiftUncertainty).toEqual(before[index].redshiftUncertainty);
       for (const field of ['rightAscensionDeg', 'declinationDeg', 'redshift']) {
         expect(Math.abs(row[field] - before[index][field])).toBeLessThan(1e-9);
       }
     }
+  });
+});
+
+describe('redshifts in a table', () => {
+  const rowsOf = async (draft: Draft, text: string) => {
+    await load(draft, text).expect(200);
+    return (await list(draft)).rows;
+  };
+
+  it('have their uncertainty in a column, however it is written', async () => {
+    const draft = await aDraft(app);
+    const text = [
+      'name,ra,dec,z,z_err',
+      'A,10,-20,2,0.02',
+      'B,11,-20,2,±0.03',
+      'C,12,-20,2,+0.05 -0.03',
+      'D,13,-20,2,',
+    ];
+    const rows = await rowsOf(draft, text.join('\n'));
+    expect(rows.map((row: { redshiftUncertainty: unknown }) => row.redshiftUncertainty)).toEqual([
+      { kind: 'gaussian', sigma: 0.02 },
+      { kind: 'gaussian', sigma: 0.03 },
+      { kind: 'percentiles', p16: 1.97, p50: 2, p84: 2.05 },
+      null,
+    ]);
+    expect(rows[0].redshiftKind).toBe('spectroscopic');
+  });
+
+  it('under a header of photometric ones are photometric', async () => {
+    const draft = await aDraft(app);
+    const rows = await rowsOf(draft, 'name,ra,dec,zphot\nA,10,-20,2');
+    expect(rows[0].redshiftKind).toBe('photometric');
+  });
+
+  it('with a distribution, of which a table only holds the number of peaks, are imported without it, and say so', async () => {
+    const draft = await aDraft(app);
+    const text = 'name,ra,dec,z,redshift_uncertainty\nA,10,-20,2,"p(z), 2 peaks"';
+    const { body } = await preview(draft, text).expect(200);
+    expect(body.rows[0]).toMatchObject({ isReady: true });
+    expect(body.rows[0].cells[4].warning).toMatch(/without it/);
+    expect((await rowsOf(draft, text))[0].redshiftUncertainty).toBeNull();
+  });
+});
+
+describe('the exported table', () => {
+  it('says of each light what kind it is, and what arrives in each band or of its line', async () => {
+    const draft = await aDraft(app);
+    const target = { rightAscensionDeg: 10, declinationDeg: -20, redshift: 6 };
+    await draft.pi
+      .post(`${draft.base}/targets`)
+      .send({
+        ...target,
+        name: 'Arc',
+        redshiftKind: 'photometric',
+        light: { kind: 'absoluteMagnitude', magnitude: -21, spectrum: { kind: 'starForming' }, magnification: 8 },
+      })
+      .expect(201);
+    await draft.pi
+      .post(`${draft.base}/targets`)
+      .send({ ...target, name: 'Line', light: { kind: 'lineFlux', fluxErgSCm2: 2e-17, restWavelengthNm: 121.567 } })
+      .expect(201);
+    const { text } = await draft.pi.get(`${draft.base}/targets/export.csv`).expect(200);
+    const [header = '', arc = '', line = ''] = text.split(/\r?\n/);
+    const names = header.split(',');
+    const cell = (row: string, name: string) => row.split(',')[names.indexOf(name)];
+    const [stored] = (await list(draft)).rows;
+    expect([cell(arc, 'redshift_kind'), cell(arc, 'light_kind'), cell(arc, 'spectrum_kind')]).toEqual([
+      'photometric',
+      'absoluteMagnitude',
+      'starForming',
+    ]);
+    expect(cell(arc, 'magnification')).toBe('8');
+    expect(Number(cell(arc, 'above_atmosphere_ab_mag_J'))).toBe(stored.computed.bandMagnitudesAb.J);
+    expect(cell(arc, 'above_atmosphere_ab_mag_g')).toBe('');
+    expect(Number(cell(line, 'line_observed_vacuum_nm'))).toBeCloseTo(7 * 121.567, 9);
+    expect(cell(line, 'line_flux_erg_s_cm2')).not.toBe('');
+    expect(cell(line, 'spectrum_kind')).toBe('');
+    expect(names.filter((name) => name.startsWith('above_atmosphere'))).toHaveLength(8);
   });
 });
 

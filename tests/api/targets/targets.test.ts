@@ -1,3 +1,4 @@
+import { Light } from '@faintward/contracts/light';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { aMode } from '../../factories/committee.js';
 import { aPerson, signedInAs } from '../../factories/people.js';
@@ -45,7 +46,9 @@ describe('a target', () => {
     ['redshift', '7,12', /decimal point/],
     ['redshift', '', /needed/],
     ['redshift', 'NaN', /finite/],
-    ['redshiftSigma', '-0.1', /./],
+    ['redshiftUncertainty', '-0.1', /\+0\.05 -0\.03/],
+    ['redshiftUncertainty', '+0.1 -3', /not below the redshift/],
+    ['redshiftUncertainty', 'p(z), 2 peaks', /upload/],
     ['rightAscension', '25:00:00', /24 hours/],
     ['rightAscension', '12:60:00', /./],
     ['declination', '+91', /pole/],
@@ -84,7 +87,11 @@ describe('a target', () => {
     ['24.1 J', { kind: 'apparentMagnitude', magnitude: 24.1, system: 'AB', bandId: 'J' }],
     ['22.30 Vega (J)', { kind: 'apparentMagnitude', magnitude: 22.3, system: 'Vega', bandId: 'J' }],
     ['3.631 uJy', { kind: 'apparentMagnitude', system: 'AB', bandId: 'r' }],
-    ['M -21.5 (150 nm)', { kind: 'absoluteMagnitude', magnitudeAb: -21.5, restWavelengthNm: 150 }],
+    ['M -21.5 (150 nm)', { kind: 'absoluteMagnitude', magnitude: -21.5, restWavelengthNm: 150 }],
+    ['M -21.3 Vega (B)', { kind: 'absoluteMagnitude', magnitude: -21.3, system: 'Vega', restBandId: 'B' }],
+    ['8 Msun/yr', { kind: 'starFormationRate', solarMassesPerYear: 8, tracer: 'ultraviolet' }],
+    ['typical galaxy', { kind: 'typical', of: 'starFormingGalaxy' }],
+    ['typical supernova Ia', { kind: 'typical', of: 'supernovaIa', spectrum: { kind: 'supernovaIa' } }],
     ['2e-17 erg/s/cm^2', { kind: 'lineFlux', fluxErgSCm2: 2e-17, restWavelengthNm: 121.567 }],
     ['1e42 erg/s (656.46 nm)', { kind: 'lineLuminosity', luminosityErgS: 1e42, restWavelengthNm: 656.46 }],
     ['', null],
@@ -99,7 +106,7 @@ describe('a target', () => {
   });
 
   it('answers a changed redshift with recomputed columns, a new version and its ETag, and recomputes its observations', async () => {
-    const target = await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitudeAb: -23 } });
+    const target = await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitude: -23 } });
     const { mode } = await aMode(app);
     await draft.pi
       .post(`${draft.base}/observations/apply`)
@@ -119,6 +126,53 @@ describe('a target', () => {
     });
   });
 
+  it('keeps what a cell cannot say of its light', async () => {
+    const light = Light.parse({
+      kind: 'apparentMagnitude',
+      magnitude: 22,
+      bandId: 'J',
+      spectrum: { kind: 'quasar' },
+      galacticDust: { colourExcessMag: 0.1 },
+      magnification: 4,
+      sigmaMag: 0.1,
+    });
+    const target = await aTarget(draft, { light });
+    const { body } = await patch(target, { cells: { brightness: '21.5' } }).expect(200);
+    expect(body.light).toEqual({ ...light, magnitude: 21.5 });
+  });
+
+  it('takes the uncertainty of its redshift from a cell, around the redshift that comes with it', async () => {
+    const target = await aTarget(draft, { redshiftKind: 'photometric' });
+    expect(target).toMatchObject({
+      redshiftUncertainty: null,
+      redshiftUncertaintyText: '',
+      redshiftKind: 'photometric',
+    });
+    const { body } = await patch(target, { cells: { redshift: '7.1', redshiftUncertainty: '+0.05 -0.03' } }).expect(
+      200,
+    );
+    expect(body.redshiftUncertainty).toEqual({ kind: 'percentiles', p16: 7.07, p50: 7.1, p84: 7.15 });
+    expect(body.redshiftUncertaintyText).toBe('+0.05 −0.03');
+    const { body: moved } = await patch(body, { cells: { redshift: '6.5' } }).expect(200);
+    expect(moved.redshiftUncertainty).toEqual({ kind: 'percentiles', p16: 6.47, p50: 6.5, p84: 6.55 });
+    const table = { kind: 'table', redshifts: [1, 1.5, 2, 6, 6.5, 7], densities: [0, 1, 0, 0, 4, 0] };
+    const { body: two } = await patch(moved, { redshiftUncertainty: table }).expect(200);
+    expect(two.redshiftUncertaintyText).toBe('p(z), 2 peaks');
+    const { body: kept } = await patch(two, {
+      cells: { redshiftUncertainty: 'p(z), 2 peaks', notes: 'Two solutions.' },
+    }).expect(200);
+    expect(kept.redshiftUncertainty).toEqual(table);
+    const { body: cleared } = await patch(kept, { cells: { redshiftUncertainty: '' } }).expect(200);
+    expect(cleared.redshiftUncertainty).toBeNull();
+  });
+
+  it('cannot have percentiles that nothing can be drawn from', async () => {
+    const target = await aTarget(draft);
+    const percentiles = { kind: 'percentiles', p16: 0, p50: 1, p84: 2 };
+    const { body } = await patch(target, { redshiftUncertainty: percentiles }).expect(422);
+    expect(body.fieldErrors[0].path).toBe('redshiftUncertainty.p16');
+  });
+
   it('gives a stale writer what is stored now, and stores nothing', async () => {
     const target = await aTarget(draft);
     await patch(target, { redshift: 4 }).expect(200);
@@ -133,7 +187,7 @@ describe('a target', () => {
   });
 
   it('cannot be a luminosity without a distance', async () => {
-    const target = await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitudeAb: -21 } });
+    const target = await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitude: -21 } });
     const { body } = await patch(target, { cells: { redshift: '0' } }).expect(422);
     expect(body.fieldErrors[0].path).toBe('cells.redshift');
   });

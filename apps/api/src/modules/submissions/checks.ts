@@ -70,7 +70,15 @@ function noBrightness({ targets }: CheckedProposal): CheckFinding[] {
   );
 }
 
-const REPEATED_NOTICES = ['neverUp', 'beyondLymanBreak', 'lightUnusable'];
+const REPEATED_NOTICES = [
+  'neverUp',
+  'beyondLymanBreak',
+  'lineAbsorbed',
+  'lineOutsideAtmosphere',
+  'lineInGap',
+  'typicalLight',
+  'lightUnusable',
+];
 
 function targetNotices({ targets }: CheckedProposal): CheckFinding[] {
   return REPEATED_NOTICES.flatMap((noticeCode) =>

@@ -1,4 +1,3 @@
-import type { Light } from '@faintward/contracts/light';
 import {
   type CosmicTime,
   MAX_TARGET_COUNT,
@@ -13,15 +12,17 @@ import { writeDelimitedText } from '@faintward/tables';
 import { Injectable } from '@nestjs/common';
 import { DatabaseService } from '../../database/transaction.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
+import { lightFaults } from '../../engine/light.js';
+import { ProposalSpectra } from '../../engine/proposal-spectra.service.js';
 import { ProposalSkies } from '../../engine/proposal-sky.service.js';
 import { computeTargetColumns } from '../../engine/target-columns.js';
 import type { Actor } from '../../platform/actor.js';
-import { DomainError, invalidField, notFound, staleVersion } from '../../platform/domain-error.js';
+import { DomainError, notFound, staleVersion } from '../../platform/domain-error.js';
 import { differences, HistoryService } from '../../platform/history.js';
 import { toPage } from '../../platform/pagination.js';
+import { validationFailed } from '../../platform/validation.js';
 import { ObservationEstimates } from '../observations/observation-estimates.service.js';
 import { ProposalAccess, type ProposalForMember } from '../proposals/proposal-access.service.js';
-import { SpectraReadModel } from '../spectra/spectra.read-model.js';
 import { completeInput, inputOf, patchedInput } from './target-inputs.js';
 import { TargetRecomputation } from './target-recomputation.service.js';
 import { EXPORT_COLUMNS, exportRow } from './targets-table.js';
@@ -43,7 +44,7 @@ export class TargetsService {
     private readonly recomputation: TargetRecomputation,
     private readonly observations: ObservationEstimates,
     private readonly skies: ProposalSkies,
-    private readonly spectra: SpectraReadModel,
+    private readonly spectra: ProposalSpectra,
     private readonly history: HistoryService,
   ) {}
 
@@ -90,7 +91,6 @@ export class TargetsService {
       const proposal = await this.access.requireTargetsForChange(actor, proposalId);
       requireRoom((await this.readModel.count(proposalId)) + 1);
       const values = completeInput(input);
-      await this.requireSpectrum(proposalId, values);
       const targetId = await this.queries.insert(proposalId, {
         ...values,
         position: (await this.queries.lastPosition(proposalId)) + 1,
@@ -129,7 +129,6 @@ export class TargetsService {
       const after = patchedInput(before, patch);
       const details = differences(before, after);
       if (Object.keys(details).length === 0) return this.getStored(proposalId, targetId);
-      if ('light' in details) await this.requireSpectrum(proposalId, after);
       await this.queries.update(targetId, { ...after, computed: await this.compute(proposal, after) });
       if ('redshift' in details || 'light' in details || 'extent' in details) {
         await this.observations.recompute(proposalId, proposal.cosmology, [targetId]);
@@ -176,19 +175,12 @@ export class TargetsService {
     });
   }
 
-  /** @throws {DomainError} `validation-failed` where the light names a spectrum that the proposal does not have */
-  private async requireSpectrum(proposalId: string, { light }: Pick<TargetInput, 'light'>): Promise<void> {
-    const spectrumId = uploadedSpectrumOf(light);
-    if (spectrumId === undefined || (await this.spectra.exists(proposalId, spectrumId))) return;
-    throw invalidField(
-      'light.spectrum.spectrumId',
-      'This proposal has no such spectrum. Upload it, or choose another one.',
-    );
-  }
-
   private async compute(proposal: ProposalForMember, values: TargetInput) {
     const sky = await this.skies.ofSemester(proposal.semesterId);
-    const [computed] = await computeTargetColumns([values], chooseCosmology(proposal.cosmology), sky);
+    const uploaded = await this.spectra.ofLights(proposal.proposalId, [values.light]);
+    const faults = lightFaults({ ...values, uploaded });
+    if (faults.length > 0) throw validationFailed(faults);
+    const [computed] = await computeTargetColumns([values], chooseCosmology(proposal.cosmology), sky, uploaded);
     if (computed === undefined) throw new Error('A target got no columns.');
     return computed;
   }
@@ -207,9 +199,4 @@ export function requireRoom(targetCount: number): void {
     'conflict',
     `A proposal holds at most ${MAX_TARGET_COUNT} targets; this would make it ${targetCount}. Nothing was stored.`,
   );
-}
-
-function uploadedSpectrumOf(light: Light | null): string | undefined {
-  if (light === null || !('spectrum' in light)) return undefined;
-  return light.spectrum.kind === 'uploaded' ? light.spectrum.spectrumId : undefined;
 }
