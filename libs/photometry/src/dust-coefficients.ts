@@ -1,7 +1,7 @@
 /**
  * Coefficients of three published laws of dust, with wavelengths as x = 1/λ in µm⁻¹ where not said otherwise, and
- * polynomials from the constant term upwards. `seed/reference/dust-laws.json` shows them with their sources, and is
- * compared with them whenever the application starts.
+ * polynomials from the constant term upwards. They stand here and nowhere else, beside the formulas of `dust-laws.ts` without
+ * which they mean nothing; `seed/reference/dust-laws.json` says where they come from.
  */
 export const DUST_LAW_COEFFICIENTS = {
   /** Cardelli, Clayton & Mathis 1989: A(λ)/A(V) = a(x) + b(x)/R_V, each part below its bound in x. */

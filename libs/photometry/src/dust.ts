@@ -4,6 +4,11 @@ import { calzetti, cardelliClaytonMathis, fitzpatrick, type LawInInverseMicron }
 
 export type DustLaw = 'ccm1989' | 'fitzpatrick1999' | 'calzetti2000';
 
+/** `dust-laws.json`: which laws there are. Their coefficients stand with their formulas in the program. */
+export interface DustLawsTable {
+  readonly laws: readonly DustLaw[];
+}
+
 export interface DustLawDescription {
   readonly id: DustLaw;
   readonly label: string;

@@ -76,9 +76,9 @@ describe('reference files', () => {
     ['a band twice', 'bands.json', 'in the table once', 'data.bands', firstTwice],
     ['a line without wavelength', 'lines.json', 'vacuumWavelengthNm', 'data.lines.0.vacuumWavelengthNm', () => 0],
     ['an atmosphere cut short', 'atmosphere-windows.json', '5500', 'data.windows', shortened],
-    ['a changed dust law', 'dust-laws.json', 'differs', 'data.calzetti2000.scale', () => 2.695],
-    ['a dust law left out', 'dust-laws.json', 'differs', 'data.ccm1989', () => undefined],
-    ['a dust law too many', 'dust-laws.json', 'differs', 'data.another', () => ({})],
+    ['a dust law left out', 'dust-laws.json', 'each of', 'data.laws', shortened],
+    ['a dust law twice', 'dust-laws.json', 'each of', 'data.laws', firstTwice],
+    ['a dust law that nobody knows', 'dust-laws.json', 'laws.0', 'data.laws.0', () => 'mine'],
     [
       'a coefficient too few',
       'igm-inoue2014.json',
@@ -99,10 +99,10 @@ describe('reference files', () => {
   });
 
   it('are accepted with keys in another order, and with files that photometry does not know', () => {
-    const reordered = changed('dust-laws.json', 'data', (data) =>
+    const reordered = changed('typical-values.json', 'data', (data) =>
       Object.fromEntries(Object.entries(data as object).reverse()),
     );
-    expect(photometryFilesFrom(reordered.set('other.json', {})).dustLaws.data).toEqual(files.dustLaws.data);
+    expect(photometryFilesFrom(reordered.set('other.json', {})).typicalValues.data).toEqual(files.typicalValues.data);
   });
 
   it('have their description read without their data', () => {

@@ -2,7 +2,7 @@
 import { z } from 'zod';
 import type { AtmosphereTable } from './atmosphere-data.js';
 import type { BandsTable } from './bands.js';
-import type { DUST_LAW_COEFFICIENTS } from './dust-coefficients.js';
+import type { DustLawsTable } from './dust.js';
 import type { IntergalacticTable } from './intergalactic-table.js';
 import {
   AtmosphereData,
@@ -23,7 +23,7 @@ import { TYPICAL_VALUES_FILE_NAME, type TypicalValuesFile } from './typical-valu
 export interface PhotometryFiles extends SourceTemplateFiles {
   readonly intergalacticInoue2014: ReferenceFile<IntergalacticTable>;
   readonly intergalacticMadau1995: ReferenceFile<IntergalacticTable>;
-  readonly dustLaws: ReferenceFile<typeof DUST_LAW_COEFFICIENTS>;
+  readonly dustLaws: ReferenceFile<DustLawsTable>;
   readonly bands: ReferenceFile<BandsTable>;
   readonly atmosphere: ReferenceFile<AtmosphereTable>;
   readonly typicalValues: TypicalValuesFile;

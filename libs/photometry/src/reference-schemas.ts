@@ -2,7 +2,7 @@
 import { z } from 'zod';
 import { createAtmosphere, type AtmosphereTable } from './atmosphere-data.js';
 import { BAND_IDS, createBands, type BandsTable } from './bands.js';
-import { DUST_LAW_COEFFICIENTS } from './dust-coefficients.js';
+import { DUST_LAWS, type DustLaw, type DustLawsTable } from './dust.js';
 import type { ContinuumBranch, IntergalacticTable, LineBranch } from './intergalactic-table.js';
 import { createLines, LINE_IDS, type LinesTable } from './lines.js';
 import { sampledCurve } from './sampled-curve.js';
@@ -136,18 +136,13 @@ export const AtmosphereData: z.ZodType<AtmosphereTable> = checkedBy(
   (data) => createAtmosphere({ data }),
 );
 
-/** The laws are calculated with as the program has them; a file that says something else would be a lie. */
-export const DustLawsData = z.custom<typeof DUST_LAW_COEFFICIENTS>((data) => isSame(data, DUST_LAW_COEFFICIENTS), {
-  error: 'differs from the coefficients in the program, which are what is calculated with',
+const LawIds = Object.keys(DUST_LAWS) as DustLaw[];
+/** The laws that the program has, each once: their coefficients stand with their formulas in the program. */
+export const DustLawsData: z.ZodType<DustLawsTable> = z.strictObject({
+  laws: z.array(z.enum(LawIds)).refine((laws) => laws.toSorted().join() === LawIds.toSorted().join(), {
+    error: `must name each of ${LawIds.join(', ')} once`,
+  }),
 });
-
-/** Whether two values of JSON are equal, whatever the order of their keys. */
-function isSame(a: unknown, b: unknown): boolean {
-  if (typeof a !== 'object' || typeof b !== 'object' || a === null || b === null) return Object.is(a, b);
-  const [keysA, keysB] = [Object.keys(a), Object.keys(b)];
-  if (Array.isArray(a) !== Array.isArray(b) || keysA.length !== keysB.length) return false;
-  return keysA.every((key) => Object.hasOwn(b, key) && isSame(Reflect.get(a, key), Reflect.get(b, key)));
-}
 
 const sourced = { source: Text, provenance: Provenance };
 const DerivedWith = z.strictObject({ presetId: Text, hubbleConstantKmSMpc: Positive, omegaMatter: Positive });
