@@ -29,7 +29,7 @@ export function aSuggestion(change: Partial<LightSuggestion> = {}): LightSuggest
     spreadText: '± 0.3 mag',
     source: 'An invented survey',
     provenance: 'published',
-    validText: 'z 2 to 9',
+    validText: 'z 2 to 9.',
     isExtrapolated: false,
     light: Light.parse({ kind: 'absoluteMagnitude', magnitude: -20.9, restWavelengthNm: 160 }),
     extent: null,

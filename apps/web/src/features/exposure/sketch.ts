@@ -43,13 +43,19 @@ export type SketchErrors = Partial<Record<SketchField, string>>;
 
 const defaults = Sketch.parse({});
 
+/** Marks addresses in which an apparent value contains its magnification unless they say otherwise. */
+const addressVersion = '2';
+
 export function readSketch(address: URLSearchParams): Sketch {
-  return Sketch.parse(Object.fromEntries(address));
+  const texts = Object.fromEntries(address);
+  // Links without the mark were made when a magnification always came on top of the value.
+  const isOlder = texts['v'] === undefined && texts['magnification'] !== undefined;
+  return Sketch.parse(isOlder ? { withLensing: 'no', ...texts } : texts);
 }
 
 /** Names in the address whose content this sketchpad does not know: of another version, or mistyped. */
 export function unknownInAddress(address: URLSearchParams): string[] {
-  const sketch: Record<string, unknown> = readSketch(address);
+  const sketch: Record<string, unknown> = { ...readSketch(address), v: addressVersion };
   return [...address].filter(([name, value]) => sketch[name] !== value).map(([name]) => name);
 }
 
@@ -58,6 +64,7 @@ export function writeSketch(sketch: Sketch): URLSearchParams {
   for (const [name, value] of Object.entries(sketch)) {
     if (value !== defaults[name as SketchField]) address.set(name, value);
   }
+  if (address.size > 0) address.set('v', addressVersion);
   return address;
 }
 

@@ -3,7 +3,6 @@ import type { TargetComputed } from '@faintward/contracts/targets';
 import type { NumberFormat } from '../../lib/format';
 
 const hogg = (section: number) => `Hogg 1999, arXiv:astro-ph/9905116, section ${section}`;
-const tolman = 'Tolman 1930, PNAS 16, 511: four powers of 1+z for energy; the rest follows from the width of the band';
 
 interface Defined {
   label: string;
@@ -69,49 +68,5 @@ export const targetQuantities: readonly (Defined & { field: keyof TargetComputed
     meaning: 'How long the light has travelled.',
     formula: 't_L = (1 / H₀) ∫₀ᶻ dz′ / [(1 + z′) E(z′)]',
     source: hogg(10),
-  },
-];
-
-/** The same surface, four ways to count its light: each loses another power of 1+z. */
-export const dimmingQuantities: readonly (Defined & { field: keyof DistanceRow; powers: string })[] = [
-  {
-    field: 'bolometricDimmingMag',
-    label: 'In energy: bolometric, or a whole line',
-    powers: '(1+z)⁴',
-    unit: 'mag/″²',
-    format: { decimals: 3 },
-    meaning: 'One power each for the energy and the rate of the photons, two for the angle that the surface spans.',
-    formula: '10 log₁₀(1 + z)',
-    source: tolman,
-  },
-  {
-    field: 'perFrequencyDimmingMag',
-    label: 'Per unit frequency: AB magnitudes',
-    powers: '(1+z)³',
-    unit: 'mag/″²',
-    format: { decimals: 3 },
-    meaning: 'A band of frequency narrows on its way, which gives one power back. The column in the table is this one.',
-    formula: '7.5 log₁₀(1 + z)',
-    source: tolman,
-  },
-  {
-    field: 'perWavelengthDimmingMag',
-    label: 'Per unit wavelength: f_λ, Vega magnitudes',
-    powers: '(1+z)⁵',
-    unit: 'mag/″²',
-    format: { decimals: 3 },
-    meaning: 'A band of wavelength widens on its way, which takes one power more.',
-    formula: '12.5 log₁₀(1 + z)',
-    source: tolman,
-  },
-  {
-    field: 'photonRateDimmingMag',
-    label: 'In photons of a line, or of all wavelengths',
-    powers: '(1+z)³',
-    unit: 'mag/″²',
-    format: { decimals: 3 },
-    meaning: 'A counter does not mind the energy that each photon lost.',
-    formula: '7.5 log₁₀(1 + z)',
-    source: tolman,
   },
 ];

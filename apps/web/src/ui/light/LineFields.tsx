@@ -37,6 +37,7 @@ export function LineFields({ redshift, ...props }: DraftProps<LightDraft> & { re
               ? `observed at ${formatNumber(chosen.observedWavelengthNm, { significant: 5 })} nm`
               : undefined
           }
+          sx={{ gridColumn: '1 / -1' }}
           slotProps={{ select: { displayEmpty: true }, inputLabel: { shrink: true } }}
         >
           <MenuItem value="" disabled={chosen !== undefined}>

@@ -77,6 +77,7 @@ export function Suggestions({
                   <Row
                     key={row.id}
                     row={row}
+                    draft={draft}
                     disabled={disabled}
                     onUse={() => {
                       setFilled({ title: row.title, before: draft });
@@ -94,8 +95,31 @@ export function Suggestions({
   );
 }
 
-function Row({ row, disabled, onUse }: { row: LightSuggestion; disabled: boolean; onUse: () => void }) {
-  const canFill = row.light !== null || row.extent !== null || row.velocityWidthKmS !== null;
+/** Where it is from, and how far that may be trusted. */
+function attribution({ source, provenance }: LightSuggestion): string {
+  const words = provenanceWords[provenance];
+  return source === words ? source : `${source} (${words})`;
+}
+
+/** Whether a width says anything of what is described: only lines have one. */
+function hasWidth({ light, tracer }: LightDraft): boolean {
+  return (
+    light === 'lineFlux' || light === 'lineLuminosity' || (light === 'starFormationRate' && tracer !== 'ultraviolet')
+  );
+}
+
+function Row({
+  row,
+  draft,
+  disabled,
+  onUse,
+}: {
+  row: LightSuggestion;
+  draft: LightDraft;
+  disabled: boolean;
+  onUse: () => void;
+}) {
+  const canFill = row.light !== null || row.extent !== null || (row.velocityWidthKmS !== null && hasWidth(draft));
   return (
     <Box
       component="li"
@@ -118,7 +142,7 @@ function Row({ row, disabled, onUse }: { row: LightSuggestion; disabled: boolean
           {row.spreadText && `, ${row.spreadText}`}
         </Typography>
         <Typography variant="body2" color="textSecondary">
-          {row.source} ({provenanceWords[row.provenance]}).{' '}
+          {attribution(row)}.{' '}
           {row.isExtrapolated ? (
             <Box component="span" sx={{ color: 'warning.main', fontWeight: 600 }}>
               ▲ outside its range: {row.validText}
@@ -156,7 +180,7 @@ export function SuggestionLine({
     <Box sx={{ gridColumn: '1 / -1' }}>
       <Note>
         A suggestion, not a measurement{row ? `: ${row.valueText}` : ''}.{row && ` ${row.source}.`}
-        {row?.isExtrapolated && ` Outside its range: ${row.validText}.`}
+        {row?.isExtrapolated && ` Outside its range: ${row.validText}`}
         {!row && ' It follows the redshift; its source is named with the result.'}
       </Note>
     </Box>

@@ -3,9 +3,9 @@ import type { Target } from '@faintward/contracts/targets';
 import Box from '@mui/material/Box';
 import type { ReactNode } from 'react';
 import { formatNumber } from '../../../lib/format';
-import { Loaded, type QueryState } from '../../../ui/PageStates';
+import type { QueryState } from '../../../ui/PageStates';
 import { Explained, Quantity } from '../../../ui/Quantity';
-import { dimmingQuantities, targetQuantities } from '../quantities';
+import { targetQuantities } from '../quantities';
 
 /** A quiet table: a name on the left, its values on the right. */
 function Values({ children }: { children: ReactNode }) {
@@ -70,46 +70,6 @@ export function DistanceFigures({ target, beside }: { target: Target; beside: Qu
             </td>
             <td className="beside">
               <Quantity value={conventional?.[quantity.field]} unit={quantity.unit} {...quantity.format} />
-            </td>
-          </tr>
-        ))}
-      </tbody>
-    </Values>
-  );
-}
-
-/** How much dimmer a surface looks, by what is counted. */
-export function DimmingFigures({ target, beside }: { target: Target; beside: QueryState<DistancesResponse> }) {
-  const conventional = beside.data?.rows[0];
-  if (!conventional) {
-    return (
-      <Loaded query={beside} what="The dimming">
-        {() => null}
-      </Loaded>
-    );
-  }
-  return (
-    <Values>
-      <tbody>
-        {dimmingQuantities.map((quantity) => (
-          <tr key={quantity.field}>
-            <th scope="row">
-              {quantity.label} <span className="soft">{quantity.powers}</span>
-            </th>
-            <td>
-              <Quantity
-                value={conventional[quantity.field]}
-                unit={quantity.unit}
-                strong
-                {...quantity.format}
-                explanation={{
-                  title: quantity.label,
-                  meaning: quantity.meaning,
-                  formula: quantity.formula,
-                  inputs: [redshiftInput(target)],
-                  source: quantity.source,
-                }}
-              />
             </td>
           </tr>
         ))}

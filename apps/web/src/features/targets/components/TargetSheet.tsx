@@ -3,9 +3,10 @@ import type { BandId } from '@faintward/contracts/light';
 import type { LightReport } from '@faintward/contracts/light-report';
 import type { Target } from '@faintward/contracts/targets';
 import Box from '@mui/material/Box';
+import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
-import type { ReactNode } from 'react';
+import { useId, type ReactNode } from 'react';
 import { formatNumber } from '../../../lib/format';
 import { Note } from '../../../ui/Note';
 import { Loaded, SkeletonBlock, type QueryState } from '../../../ui/PageStates';
@@ -15,12 +16,12 @@ import { RedshiftWithUncertainty } from '../../../ui/light/RedshiftWithUncertain
 import { LightReportView } from '../../../ui/lightReport/LightReportView';
 import { bySeverity, redshiftDecimals } from '../cells';
 import { SourceForm } from './SourceForm';
-import { DimmingFigures, DistanceFigures, HoursUp } from './TargetFigures';
+import { DistanceFigures, HoursUp } from './TargetFigures';
 
 export interface TargetSheetProps {
   proposalId: string;
   target: Target;
-  /** The conventional model beside the proposal's, and the dimming of this redshift. */
+  /** The conventional model beside the proposal's. */
   beside: QueryState<DistancesResponse>;
   canEdit: boolean;
   /** Why nothing can be changed. */
@@ -42,7 +43,8 @@ export function TargetLine({ target }: { target: Target }) {
         {target.rightAscensionText} {target.declinationText}
       </Typography>
       <Box component="span" sx={{ color: 'text.primary' }}>
-        z <RedshiftWithUncertainty target={target} decimals={redshiftDecimals(target.redshift)} />
+        z{'\u2002'}
+        <RedshiftWithUncertainty target={target} decimals={redshiftDecimals(target.redshift)} />
         {target.redshiftKind !== 'spectroscopic' && `, ${target.redshiftKind}`}
       </Box>
       {ageGyr !== null && (
@@ -59,6 +61,7 @@ export function TargetLine({ target }: { target: Target }) {
 export function TargetSheet(props: TargetSheetProps) {
   const { proposalId, target, beside, canEdit, readOnlyReason, report, onBandChange, observations } = props;
   const { computed } = target;
+  const formId = useId();
   return (
     <Box
       sx={{
@@ -68,7 +71,7 @@ export function TargetSheet(props: TargetSheetProps) {
         alignItems: 'start',
       }}
     >
-      <Stack sx={{ gap: 2.5, minWidth: 0, order: { xs: 2, md: 1 } }}>
+      <Stack id={formId} sx={{ gap: 2.5, minWidth: 0, order: { xs: 2, md: 1 }, scrollMarginTop: 72 }}>
         <Panel
           title="Describe its light"
           note={canEdit ? 'Saved by itself; the numbers beside it follow.' : readOnlyReason}
@@ -82,6 +85,9 @@ export function TargetSheet(props: TargetSheetProps) {
         )}
       </Stack>
       <Stack sx={{ gap: 2.5, minWidth: 0, order: { xs: 1, md: 2 } }}>
+        <Button href={`#${formId}`} sx={{ display: { md: 'none' }, alignSelf: 'flex-start' }}>
+          {canEdit ? 'Describe its light' : 'Its light as described'}
+        </Button>
         <TargetNotices target={target} report={report.data} />
         <Loaded
           query={report}
@@ -95,12 +101,6 @@ export function TargetSheet(props: TargetSheetProps) {
         </Loaded>
         <Panel title="Distances and times" note="In the cosmology of this proposal, beside the conventional one.">
           <DistanceFigures target={target} beside={beside} />
-        </Panel>
-        <Panel
-          title="Dimming of its surface"
-          note="How many magnitudes per square arcsecond expansion takes depends on what is counted. It is the same in every cosmology."
-        >
-          <DimmingFigures target={target} beside={beside} />
         </Panel>
         <Panel title="Observations">{observations}</Panel>
         {computed.upHoursByMonth.length > 0 && (

@@ -29,7 +29,7 @@ export function lightColumns(): TableColumn<TargetRow>[] {
   });
   return [
     computed(
-      { field: 'apparentMagnitudeAb', headerName: 'm', unit: 'AB', width: 96, sortable: true },
+      { field: 'apparentMagnitudeAb', headerName: 'm', unit: 'AB', width: 92, sortable: true },
       (target) => target.computed.apparentMagnitudeAb,
       (target) => <Magnitude target={target} />,
     ),
@@ -39,7 +39,7 @@ export function lightColumns(): TableColumn<TargetRow>[] {
       (target) => formatNumber(target.computed.lineFluxErgSCm2, { significant: 3 }),
     ),
     computed(
-      { field: 'lineObservedWavelengthNm', headerName: 'Line at', unit: 'nm, observed', width: 96 },
+      { field: 'lineObservedWavelengthNm', headerName: 'Line at', unit: 'nm, observed', width: 88 },
       (target) => target.computed.lineObservedWavelengthNm,
       (target) => formatNumber(target.computed.lineObservedWavelengthNm, { decimals: 2 }),
     ),

@@ -78,7 +78,7 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     renderCell: ({ row }) => formatNumber(read(row.target), format),
   });
   return [
-    typed('name', { headerName: 'Target', width: 184, sortable: true }, ({ name, target }) => (
+    typed('name', { headerName: 'Target', width: 170, sortable: true }, ({ name, target }) => (
       <Link
         component="button"
         tabIndex={-1}
@@ -89,19 +89,20 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
         {name}
       </Link>
     )),
-    typed('rightAscensionDeg', { headerName: 'Right ascension', unit: 'ICRS', width: 114, sortable: true }, coordinate),
-    typed('declinationDeg', { headerName: 'Declination', unit: 'ICRS', width: 114, sortable: true }, (row) =>
+    typed('rightAscensionDeg', { headerName: 'Right ascension', unit: 'ICRS', width: 118, sortable: true }, coordinate),
+    typed('declinationDeg', { headerName: 'Declination', unit: 'ICRS', width: 106, sortable: true }, (row) =>
       coordinate(row, 'declinationDeg'),
     ),
     typed('redshift', { headerName: 'Redshift', width: 86, sortable: true, numeric: true }, ({ target }) => (
       <RedshiftValue redshift={target.redshift} decimals={redshiftDecimals(target.redshift)} />
     )),
-    typed('redshiftUncertainty', { headerName: '± z', unit: '1 σ', width: 104, numeric: true }, (row) =>
+    typed('redshiftUncertainty', { headerName: '± z', unit: '1 σ', width: 96, numeric: true }, (row) =>
       row.redshiftUncertainty === '' ? '—' : <Clipped text={row.redshiftUncertainty} />,
     ),
-    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 196 }, ({ brightnessText }) =>
+    typed('brightnessText', { headerName: 'Brightness', unit: 'as known', width: 232 }, ({ brightnessText }) =>
       brightnessText === '' ? <Quiet>not given</Quiet> : <Clipped text={brightnessText} />,
     ),
+    ...lightColumns(),
     {
       field: 'extent',
       headerName: 'Size',
@@ -123,7 +124,6 @@ export function targetColumns({ canEdit, onOpen, onMenu }: ColumnActions): Table
     computed('ageGyr', 'Age', 'Gyr', 60, (t) => t.computed.ageGyr, { decimals: 3 }, true),
     computed('distanceModulusMag', 'μ', 'mag', 72, (t) => t.computed.distanceModulusMag, { decimals: 2 }),
     computed('dimming', 'Dimming', 'AB mag/″²', 80, (t) => t.computed.perFrequencyDimmingMag, { decimals: 2 }),
-    ...lightColumns(),
     computed(
       'requestedSeconds',
       'Time',
