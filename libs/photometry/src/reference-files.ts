@@ -16,10 +16,12 @@ import {
   Text,
   TypicalValuesData,
 } from './reference-schemas.js';
+import { DarkSkyData, ExtinctionData, OhLinesData, SunlightData, TwilightData } from './sky-schemas.js';
+import type { DarkSkyTable, ExtinctionTable, OhLinesTable, SunlightTable, TwilightTable } from './sky-tables.js';
 import { SOURCE_TEMPLATE_FILE_NAMES, type ReferenceFile, type SourceTemplateFiles } from './sources/templates.js';
 import { TYPICAL_VALUES_FILE_NAME, type TypicalValuesFile } from './typical-values.js';
 
-/** The files that photometry calculates with, as parsed from JSON and checked. */
+/** The files that photometry and exposures calculate with, as parsed from JSON and checked. */
 export interface PhotometryFiles extends SourceTemplateFiles {
   readonly intergalacticInoue2014: ReferenceFile<IntergalacticTable>;
   readonly intergalacticMadau1995: ReferenceFile<IntergalacticTable>;
@@ -27,6 +29,11 @@ export interface PhotometryFiles extends SourceTemplateFiles {
   readonly bands: ReferenceFile<BandsTable>;
   readonly atmosphere: ReferenceFile<AtmosphereTable>;
   readonly typicalValues: TypicalValuesFile;
+  readonly extinction: ReferenceFile<ExtinctionTable>;
+  readonly darkSky: ReferenceFile<DarkSkyTable>;
+  readonly sunlight: ReferenceFile<SunlightTable>;
+  readonly twilight: ReferenceFile<TwilightTable>;
+  readonly ohLines: ReferenceFile<OhLinesTable>;
 }
 
 /** Their names under `seed/reference`. */
@@ -38,6 +45,11 @@ export const PHOTOMETRY_FILE_NAMES: Readonly<Record<keyof PhotometryFiles, strin
   bands: 'bands.json',
   atmosphere: 'atmosphere-windows.json',
   typicalValues: TYPICAL_VALUES_FILE_NAME,
+  extinction: 'extinction-curves.json',
+  darkSky: 'dark-sky.json',
+  sunlight: 'sunlight.json',
+  twilight: 'twilight.json',
+  ohLines: 'oh-lines.json',
 };
 
 /** A file of reference data cannot be used. The message names the file, and the place in it where it has one. */
@@ -75,6 +87,11 @@ const DATA_SCHEMAS: DataSchemas = {
   lines: LinesData,
   atmosphere: AtmosphereData,
   typicalValues: TypicalValuesData,
+  extinction: ExtinctionData,
+  darkSky: DarkSkyData,
+  sunlight: SunlightData,
+  twilight: TwilightData,
+  ohLines: OhLinesData,
 };
 
 /**
