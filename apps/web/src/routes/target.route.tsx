@@ -37,7 +37,7 @@ export function Component() {
         // Back to the page, the order and the search that the table had.
         { label: 'Targets', to: `${paths.proposalSection.to(proposalId, 'targets')}${searchOf(state)}` },
       ]}
-      {...(target.data ? { eyebrow: <TargetLine target={target.data} /> } : {})}
+      below={target.data && <TargetLine target={target.data} />}
     >
       <Loaded query={proposal} what="The proposal" skeleton={<SkeletonBlock label="The proposal: loading" />}>
         {(own) => (

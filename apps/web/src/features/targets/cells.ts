@@ -65,6 +65,9 @@ const shortNotices: Record<string, string> = {
   brieflyUp: 'briefly up',
   smallerThanSeeing: 'unresolved',
   duplicate: 'twice in list',
+  lineAbsorbed: 'line absorbed',
+  lineOutsideAtmosphere: 'line never arrives',
+  lineInGap: 'line in a gap',
 };
 
 export function shortNotice(notice: { code: string; message: string }): string {

@@ -38,20 +38,31 @@ export interface TargetSheetProps {
 export function TargetLine({ target }: { target: Target }) {
   const { ageGyr } = target.computed;
   return (
-    <Box sx={{ display: 'flex', columnGap: 2.5, rowGap: 0.25, flexWrap: 'wrap', alignItems: 'center' }}>
-      <Typography variant="figure" component="span" sx={{ color: 'text.primary' }}>
+    <Box
+      sx={{
+        display: 'flex',
+        columnGap: 2.5,
+        rowGap: 0.25,
+        flexWrap: 'wrap',
+        alignItems: 'center',
+        fontSize: '0.875rem',
+        mt: -1.75,
+        mb: 2.5,
+      }}
+    >
+      <Typography variant="figure" component="span">
         {target.rightAscensionText} {target.declinationText}
       </Typography>
-      <Box component="span" sx={{ color: 'text.primary' }}>
+      <Box component="span">
         z{'\u2002'}
         <RedshiftWithUncertainty target={target} decimals={redshiftDecimals(target.redshift)} />
         {target.redshiftKind !== 'spectroscopic' && `, ${target.redshiftKind}`}
       </Box>
       {ageGyr !== null && (
-        <span>
+        <Box component="span" sx={{ color: 'text.secondary' }}>
           the light set out when the Universe was {formatNumber(ageGyr, { significant: 3 })}
           {'\u202f'}Gyr old
-        </span>
+        </Box>
       )}
     </Box>
   );

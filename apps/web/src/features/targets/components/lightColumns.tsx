@@ -92,11 +92,7 @@ function BandMagnitude({ target, band }: { target: Target; band: ShownBand }) {
 function whyNoMagnitude({ light, extent, computed }: Target, band: ShownBand): string {
   if (light === null) return 'Nothing is known of its light yet.';
   if (computed.bandMagnitudesAb[band] === null) {
-    const said = computed.notices.find((notice) => notice.field === `bandMagnitudesAb.${band}`);
-    return (
-      said?.message ??
-      `None of its light arrives in ${band}: it is absorbed on the way, or its spectrum says nothing there. The target sheet names which.`
-    );
+    return `None of its light arrives in ${band}: it is absorbed on the way, or its spectrum says nothing there. The target sheet names which.`;
   }
   if (light.kind === 'lineFlux' || light.kind === 'lineLuminosity') return 'A line has no magnitude in a band.';
   if (extent.kind === 'uniform') return 'An even surface has a magnitude per square arcsecond only.';
