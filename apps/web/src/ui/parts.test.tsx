@@ -179,6 +179,51 @@ it('cosmic time places targets and gives the numbers behind them', async () => {
   expect(await screen.findByRole('row', { name: /CLR J0216−0418 10\.310 0\.4540 —/ })).toBeInTheDocument();
 });
 
+it('cosmic time is one stop of the tab key, walked with the arrows from the earliest light on', async () => {
+  const onChoose = vi.fn();
+  renderPart(
+    <CosmicTimeStrip
+      points={[
+        { targetId: 'near', name: 'Near', redshift: 1, ageGyr: 5.85, hours: 2 },
+        { targetId: 'far', name: 'Far', redshift: 8, ageGyr: 0.64, hours: 3.1 },
+      ]}
+      ticks={[]}
+      ageTicks={[]}
+      ageTodayGyr={13.79}
+      onChoose={onChoose}
+    />,
+  );
+  const far = screen.getByRole('button', { name: 'Far, z 8.000' });
+  expect(far).toHaveAttribute('tabindex', '0');
+  far.focus();
+  expect(await screen.findByRole('tooltip')).toHaveTextContent('Far8.000 · 0.640 Gyr · 3.1 h');
+  await userEvent.keyboard('{ArrowRight}{Enter}');
+  expect(screen.getByRole('button', { name: 'Near, z 1.000' })).toHaveFocus();
+  expect(onChoose).toHaveBeenCalledWith('near');
+});
+
+it('cosmic time counts very many targets in columns', () => {
+  renderPart(
+    <CosmicTimeStrip
+      points={Array.from({ length: 600 }, (_, index) => ({
+        targetId: String(index),
+        name: `T${index}`,
+        redshift: 1 + index / 300,
+        ageGyr: 5 - index / 200,
+        hours: null,
+      }))}
+      ticks={[]}
+      ageTicks={[]}
+      ageTodayGyr={13.79}
+    />,
+  );
+  expect(
+    screen.getByRole('img', { name: /600 targets along cosmic time, even in time: z 1\.00 to 3\.00/ }),
+  ).toBeVisible();
+  expect(screen.queryByRole('list')).not.toBeInTheDocument();
+  expect(screen.getByText(/columns: number of targets/)).toBeInTheDocument();
+});
+
 it('a plot has a text alternative and its numbers behind it', async () => {
   renderPart(
     <PlotFrame
