@@ -101,7 +101,7 @@ export function Component() {
           alignItems: 'start',
         }}
       >
-        <Stack sx={{ gap: 3 }}>
+        <Box sx={{ position: { lg: 'sticky' }, top: 16 }}>
           <Panel title="What goes in">
             <CalculatorForm state={state} errors={errors} presets={presets.data?.rows ?? []} onChange={setState} />
             {state.redshiftText.length > longestSharedText && (
@@ -110,6 +110,8 @@ export function Component() {
               </Box>
             )}
           </Panel>
+        </Box>
+        <Stack sx={{ gap: 3, minWidth: 0 }}>
           <Panel>
             <Loaded query={curve} what="The curves">
               {(data) => (
@@ -129,39 +131,39 @@ export function Component() {
               )}
             </Loaded>
           </Panel>
+          <Loaded query={main} what="The distances">
+            {(data) => {
+              const index = Math.min(opened, data.rows.length - 1);
+              const row = data.rows[index];
+              return (
+                <Stack sx={{ gap: 3 }}>
+                  {data.notices.map((notice) => (
+                    <Note key={notice.code} tone={notice.severity}>
+                      {notice.message}
+                    </Note>
+                  ))}
+                  {row && (
+                    <Panel
+                      title={`At z = ${String(row.redshift).replace('-', '−')}`}
+                      note={
+                        data.rows.length > 1
+                          ? `${counted(data.rows.length, 'redshift')}; choose a row of the table below to see it here`
+                          : `engine ${data.engineVersion}`
+                      }
+                    >
+                      <DistanceSheet
+                        row={row}
+                        modelTitle={data.cosmology.title}
+                        beside={besideRows?.rows[index]}
+                        besideTitle={besideRows?.cosmology.title}
+                      />
+                    </Panel>
+                  )}
+                </Stack>
+              );
+            }}
+          </Loaded>
         </Stack>
-        <Loaded query={main} what="The distances">
-          {(data) => {
-            const index = Math.min(opened, data.rows.length - 1);
-            const row = data.rows[index];
-            return (
-              <Stack sx={{ gap: 3 }}>
-                {data.notices.map((notice) => (
-                  <Note key={notice.code} tone={notice.severity}>
-                    {notice.message}
-                  </Note>
-                ))}
-                {row && (
-                  <Panel
-                    title={`At z = ${String(row.redshift).replace('-', '−')}`}
-                    note={
-                      data.rows.length > 1
-                        ? `${counted(data.rows.length, 'redshift')}; choose a row of the table below to see it here`
-                        : `engine ${data.engineVersion}`
-                    }
-                  >
-                    <DistanceSheet
-                      row={row}
-                      modelTitle={data.cosmology.title}
-                      beside={besideRows?.rows[index]}
-                      besideTitle={besideRows?.cosmology.title}
-                    />
-                  </Panel>
-                )}
-              </Stack>
-            );
-          }}
-        </Loaded>
       </Box>
       {main.data && main.data.rows.length > 1 && (
         <Box sx={{ mt: 3 }}>

@@ -3,7 +3,7 @@ import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useQuery } from '@tanstack/react-query';
 import { sourceQueries } from '../features/sources/api/sources';
-import { ReferenceDataTable } from '../features/sources/components/ReferenceDataTable';
+import { ReferenceDataFiles } from '../features/sources/components/ReferenceDataFiles';
 import { downloadText, toCsv } from '../lib/csv';
 import { counted } from '../lib/format';
 import { EmptyState } from '../ui/EmptyState';
@@ -64,7 +64,7 @@ export function Component() {
                 }
                 flush
               >
-                <ReferenceDataTable rows={list.rows} />
+                <ReferenceDataFiles rows={list.rows} />
               </Panel>
             </Stack>
           )

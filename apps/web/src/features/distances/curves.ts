@@ -71,7 +71,7 @@ const together: readonly CurveChoice[] = [
     group: 'Together',
     label: 'angle',
     unit: '″',
-    scale: 'linear',
+    scale: 'log',
     lines: [{ name: 'angle', value: angleArcsec }],
     compares: 'ratio',
   },

@@ -91,5 +91,5 @@ export function BandSpans({
 
 function magnitudeText(band: BandLight, width: number): string {
   if (band.magnitudeAb === null) return width >= 44 ? 'no light' : 'none';
-  return formatNumber(band.magnitudeAb, { decimals: width >= 34 ? 2 : 1 });
+  return formatNumber(band.magnitudeAb, { decimals: width >= 31 ? 2 : 1 });
 }

@@ -8,7 +8,7 @@ import { useId, useRef, useState, type KeyboardEvent } from 'react';
 import { formatNumber } from '../../lib/format';
 import { colour } from '../../theme/theme';
 import { visuallyHidden } from '../visuallyHidden';
-import { stageWords, type LedgerLayout, type LedgerRow } from './ledger';
+import { inputWords, stageWords, type LedgerLayout, type LedgerRow } from './ledger';
 
 /**
  * The rows of a ledger as a list of buttons over its drawing. A step shows its formula, inputs and source when the keyboard
@@ -181,7 +181,11 @@ function StepCard({ row }: { row: LedgerRow }) {
         sx={{ display: 'grid', gridTemplateColumns: 'auto 1fr', columnGap: 2, my: 1, fontSize: '0.875rem' }}
       >
         {(row.inputs ?? []).map((input) => (
-          <Line key={input.name} label={input.name} value={`${formatNumber(input.value)} ${input.unit}`} />
+          <Line
+            key={input.name}
+            label={inputWords(input.name, input.unit)}
+            value={`${formatNumber(input.value)} ${input.unit}`}
+          />
         ))}
         {row.kind !== 'start' && (
           <Line label="change" value={`${formatNumber(row.deltaMag, { decimals: 4, signed: true })} mag`} />

@@ -7,6 +7,7 @@ import { renderPart } from '../../testing/renderRoute';
 import { placeBands } from './BandSpans';
 import { timeText } from './CosmologiesTable';
 import { LightReportView } from './LightReportView';
+import { placeLines } from './SpectrumDrawing';
 
 const view = (report = lightReport, compact = false) => {
   const onBandChange = vi.fn();
@@ -114,4 +115,19 @@ it.each([260, 700, 1300])('bands keep apart in their lanes on %i px', (width) =>
     );
     expect(touching).toEqual([]);
   }
+});
+
+it('names two lines of an ion once where they are close, and each where they are not', () => {
+  const [first] = lightReport.lines;
+  const doublet = [
+    { ...first!, lineId: 'a', label: 'Mg II 2796', observedWavelengthNm: 2237 },
+    { ...first!, lineId: 'b', label: 'Mg II 2804', observedWavelengthNm: 2243 },
+    { ...first!, lineId: 'c', label: 'Hα', observedWavelengthNm: 2246 },
+  ];
+  const labels = (pixelsPerNm: number) =>
+    placeLines(doublet, [2000, 2400], (nm) => (nm - 2000) * pixelsPerNm, 0, 400 * pixelsPerNm)
+      .placed.map((label) => label.item.label)
+      .toSorted();
+  expect(labels(2)).toEqual(['Hα', 'Mg II']);
+  expect(labels(20)).toEqual(['Hα', 'Mg II 2796', 'Mg II 2804']);
 });

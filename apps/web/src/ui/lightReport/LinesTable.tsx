@@ -4,7 +4,7 @@ import TableRow from '@mui/material/TableRow';
 import { formatNumber } from '../../lib/format';
 import { ReportTable } from './ReportTable';
 
-const nm = (value: number | null) => formatNumber(value, { decimals: 2 });
+const nm = (value: number | null) => formatNumber(value, { decimals: value !== null && value >= 10_000 ? 0 : 2 });
 
 /** Where the lines arrive, and whether the atmosphere lets them through. */
 export function LinesTable({ lines }: { lines: readonly ObservedLine[] }) {
@@ -66,5 +66,5 @@ export function LinesTable({ lines }: { lines: readonly ObservedLine[] }) {
 function placeText(line: ObservedLine): string {
   if (line.place === 'window') return `window: ${line.placeLabel}`;
   if (line.place === 'gap') return `does not come through: ${line.placeLabel}`;
-  return `outside: ${line.placeLabel}`;
+  return line.placeLabel;
 }

@@ -45,6 +45,7 @@ export function SpectrumDrawing({
   const left = spectrumMargin.left;
   const right = width - spectrumMargin.right;
   const { placed, leftOut } = useMemo(() => placeLines(lines, range, x, left, right), [lines, range, x, left, right]);
+  const unnamed = leftOut.flatMap((group) => group.lines);
   const laneCount = Math.max(0, ...placed.map((label) => label.lane + 1));
   const top = laneCount * lineLane + 8;
   const bottom = top + plotHeight;
@@ -121,15 +122,15 @@ export function SpectrumDrawing({
         />
         {placed.map(({ item, lane, from, to }) => (
           <LineMark
-            key={item.lineId}
-            line={item}
-            x={x(item.observedWavelengthNm)}
+            key={item.lines[0]!.lineId}
+            group={item}
+            at={x}
             labelX={(from + to) / 2}
             labelY={lane * lineLane + 11}
             bottom={bottom}
           />
         ))}
-        {leftOut.map((line) => (
+        {unnamed.map((line) => (
           <line
             key={line.lineId}
             x1={x(line.observedWavelengthNm)}
@@ -168,16 +169,27 @@ export function SpectrumDrawing({
           />
         )}
       </svg>
-      {leftOut.length > 0 && (
+      {unnamed.length > 0 && (
         <Box sx={{ fontSize: '0.8125rem', color: 'text.secondary' }}>
-          {counted(leftOut.length, 'line')} without room for a name here; all stand in the table of lines.
+          {counted(unnamed.length, 'line')} without room for a name here; all stand in the table of lines.
         </Box>
       )}
     </>
   );
 }
 
-/** Names of the lines inside the range, each centred over its line, in lanes. */
+/** Lines drawn under one name: several of one ion, when they are too close to tell apart. */
+export interface LineGroup {
+  label: string;
+  lines: readonly ObservedLine[];
+}
+
+/** `Mg II 2796` is of Mg II. */
+function ionOf(label: string): string {
+  return label.replace(/\s\d+$/, '');
+}
+
+/** Names of the lines inside the range, each centred over its lines, in lanes. */
 export function placeLines(
   lines: readonly ObservedLine[],
   range: readonly [number, number],
@@ -185,14 +197,26 @@ export function placeLines(
   left: number,
   right: number,
 ) {
-  const spans = lines
-    .filter((line) => line.observedWavelengthNm >= range[0] && line.observedWavelengthNm <= range[1])
-    .map((line) => {
-      const width = textWidth(line.label) + 4;
-      const from = Math.min(Math.max(left, at(line.observedWavelengthNm) - width / 2), right - width);
-      return { item: line, from, to: from + width };
-    });
-  return intoLanes(spans, 3);
+  const groups: { label: string; lines: ObservedLine[] }[] = [];
+  for (const line of lines.toSorted((a, b) => a.observedWavelengthNm - b.observedWavelengthNm)) {
+    if (line.observedWavelengthNm < range[0] || line.observedWavelengthNm > range[1]) continue;
+    const near = groups.find(
+      (group) =>
+        ionOf(group.label) === ionOf(line.label) &&
+        at(line.observedWavelengthNm) - at(group.lines.at(-1)!.observedWavelengthNm) < 30,
+    );
+    if (near) {
+      near.lines.push(line);
+      near.label = ionOf(near.label);
+    } else groups.push({ label: line.label, lines: [line] });
+  }
+  const spans = groups.map((group) => {
+    const width = textWidth(group.label) + 4;
+    const middle = (at(group.lines[0]!.observedWavelengthNm) + at(group.lines.at(-1)!.observedWavelengthNm)) / 2;
+    const from = Math.min(Math.max(left, middle - width / 2), right - width);
+    return { item: group, from, to: from + width };
+  });
+  return intoLanes<LineGroup>(spans, 3);
 }
 
 function clampLabel(x: number, text: string, left: number, right: number): number {
@@ -217,32 +241,35 @@ function CurveLabel({ text, x, y, anchor }: { text: string; x: number; y: number
   );
 }
 
-/** A line: full where the atmosphere lets it through, dotted where it does not. */
+/** Lines under their name: full where the atmosphere lets them through, dotted and slanted where it does not. */
 function LineMark({
-  line,
-  x,
+  group: { label, lines },
+  at,
   labelX,
   labelY,
   bottom,
 }: {
-  line: ObservedLine;
-  x: number;
+  group: LineGroup;
+  at: (nm: number) => number;
   labelX: number;
   labelY: number;
   bottom: number;
 }) {
-  const comesThrough = line.place === 'window';
+  const comesThrough = lines.some((line) => line.place === 'window');
   return (
     <g>
-      <line
-        x1={x}
-        x2={x}
-        y1={labelY + 4}
-        y2={bottom}
-        stroke={colour.inkSoft}
-        strokeOpacity={comesThrough ? 0.7 : 0.5}
-        {...(comesThrough ? {} : { strokeDasharray: '1 4' })}
-      />
+      {lines.map((line) => (
+        <line
+          key={line.lineId}
+          x1={at(line.observedWavelengthNm)}
+          x2={at(line.observedWavelengthNm)}
+          y1={labelY + 4}
+          y2={bottom}
+          stroke={colour.inkSoft}
+          strokeOpacity={line.place === 'window' ? 0.7 : 0.5}
+          {...(line.place === 'window' ? {} : { strokeDasharray: '1 4' })}
+        />
+      ))}
       <text
         x={labelX}
         y={labelY}
@@ -254,8 +281,15 @@ function LineMark({
         strokeWidth="3"
         paintOrder="stroke"
       >
-        {line.label}
-        <title>{`${line.label}, ${formatNumber(line.observedWavelengthNm, { decimals: 1 })} nm: ${line.placeLabel}`}</title>
+        {label}
+        <title>
+          {lines
+            .map(
+              (line) =>
+                `${line.label}, ${formatNumber(line.observedWavelengthNm, { decimals: 1 })} nm: ${line.placeLabel}`,
+            )
+            .join('; ')}
+        </title>
       </text>
     </g>
   );

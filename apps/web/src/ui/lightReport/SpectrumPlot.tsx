@@ -25,11 +25,11 @@ export interface SpectrumPlotProps {
 /** The light as it arrives above the atmosphere, with bands, lines and what the atmosphere lets through. */
 export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBandChange }: SpectrumPlotProps) {
   const [box, width] = useWidth(760);
-  const [rangeId, setRangeId] = useState<RangeId>('all');
+  const [rangeId, setRangeId] = useState<RangeId>('bands');
   const [quantity, setQuantity] = useState<'flux' | 'magnitude'>('flux');
   const [kind, setKind] = useState<'log' | 'linear'>('log');
 
-  const shownRange: RangeId = rangeId === 'band' && bandId === null ? 'all' : rangeId;
+  const shownRange: RangeId = rangeId === 'band' && bandId === null ? 'bands' : rangeId;
   const range = useMemo(
     () => wavelengthRange(shownRange, spectrum, bands, atmosphere, bandId),
     [shownRange, spectrum, bands, atmosphere, bandId],
@@ -66,9 +66,10 @@ export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBan
             value={shownRange}
             onChange={setRangeId}
             options={[
-              ['all', 'All'],
+              ['bands', 'Bands'],
               ['optical', 'Optical'],
               ['nearInfrared', 'Near infrared'],
+              ['all', 'All'],
               ...(bandId ? [['band', `Around ${bandId}`] as const] : []),
             ]}
           />
@@ -139,7 +140,10 @@ export function Switch<Value extends string>({
       aria-label={label}
       value={value}
       onChange={(_event, next: Value | null) => next !== null && onChange(next)}
-      sx={{ '& .MuiToggleButton-root': { textTransform: 'none', py: 0.25, px: 1.25, fontSize: '0.8125rem' } }}
+      sx={{
+        flexWrap: 'wrap',
+        '& .MuiToggleButton-root': { textTransform: 'none', py: 0.25, px: 1.25, fontSize: '0.8125rem' },
+      }}
     >
       {options.map(([option, text]) => (
         <ToggleButton key={option} value={option}>

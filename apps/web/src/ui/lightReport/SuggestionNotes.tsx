@@ -19,7 +19,7 @@ export function SuggestionNotes({ suggestions }: { suggestions: readonly LightSu
           </Typography>
           <Typography variant="body2" color="textSecondary" component="div">
             {suggestion.isExtrapolated && <strong>Beyond the range it was measured in. </strong>}
-            {suggestion.validText}. {suggestion.source} ({provenanceWords[suggestion.provenance]}).
+            {suggestion.validText.replace(/\.$/, '')}. {suggestion.source} ({provenanceWords[suggestion.provenance]}).
           </Typography>
         </Box>
       ))}

@@ -5,8 +5,16 @@ import { formatNumber } from '../../lib/format';
 import { colour } from '../../theme/theme';
 import { textWidth } from '../plot/labels';
 import { PlotFrame } from '../plot/PlotFrame';
+import { LineOddsTable } from './LineOddsTable';
 import { MagnitudeHistogram } from './MagnitudeHistogram';
-import { decimalsFor, percentText, quantilesText, shownRange, uncertaintySentences } from './uncertainty';
+import {
+  decimalsFor,
+  mostLinesInWords,
+  percentText,
+  quantilesText,
+  shownRange,
+  uncertaintySentences,
+} from './uncertainty';
 
 /** How well the redshift is known, and what that makes of lines and magnitudes. */
 export function UncertaintyBlock({
@@ -109,6 +117,11 @@ export function UncertaintyBlock({
           />
         )}
       </Box>
+      {uncertainty.lines.length > mostLinesInWords && (
+        <Box sx={{ mt: 2 }}>
+          <LineOddsTable lines={uncertainty.lines} bandLabel={bandLabel} />
+        </Box>
+      )}
       <Typography variant="body2" color="textSecondary" sx={{ mt: 1.5 }}>
         {formatNumber(uncertainty.sampleCount, { decimals: 0 })} draws, seed {uncertainty.seed}. Probabilities are good
         to about {formatNumber(100 * uncertainty.probabilityError, { significant: 1 })} % by their number.

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { estimateSteps, ledgerSteps, lightReport } from '../../testing/lightReportExample';
-import { brokenAxis, ledgerLayout, ledgerRows, ledgerSentence } from './ledger';
+import { brokenAxis, inputWords, ledgerLayout, ledgerRows, ledgerSentence } from './ledger';
 
 describe('the broken axis', () => {
   it('breaks once at the distance modulus, and leaves most of the width to the small steps', () => {
@@ -85,4 +85,11 @@ it('says the ledger in a sentence, with its end and the reason for it', () => {
   expect(ledgerSentence(ledgerRows(ledgerSteps.slice(0, 2)), 'Light budget in z', 'no light.')).toContain(
     'It stops there: no light.',
   );
+});
+
+it('says inputs in words, without repeating their unit', () => {
+  expect(inputWords('luminosityDistanceMpc', 'Mpc')).toBe('luminosity distance');
+  expect(inputWords('absoluteMagnitude', 'mag')).toBe('absolute magnitude');
+  expect(inputWords('seeing, FWHM', '″')).toBe('seeing, FWHM');
+  expect(inputWords('redshift', '')).toBe('redshift');
 });

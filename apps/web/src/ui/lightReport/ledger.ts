@@ -207,6 +207,14 @@ export function ledgerLayout(rows: readonly LedgerRow[], width: number): LedgerL
   };
 }
 
+/** The name of an input in words: `luminosityDistanceMpc` in Mpc is a luminosity distance. Names in words stay. */
+export function inputWords(name: string, unit: string): string {
+  if (!/^[a-z]+(?:[A-Z0-9][a-z0-9]*)+$/.test(name)) return name;
+  const words = name.replace(/([A-Z])/g, (letter) => ` ${letter.toLowerCase()}`);
+  const end = ` ${unit.toLowerCase()}`;
+  return unit !== '' && words.endsWith(end) ? words.slice(0, -end.length) : words;
+}
+
 /** The whole ledger in a sentence, for those who do not see it. */
 export function ledgerSentence(rows: readonly LedgerRow[], what: string, reason?: string): string {
   const first = rows[0];

@@ -19,6 +19,7 @@ describe('ranges', () => {
     expect(low).toBeLessThan(1170);
     expect(high).toBeGreaterThan(1330);
     expect(wavelengthRange('all', spectrum!, bands, atmosphere, 'J')).toEqual([320, 2400]);
+    expect(wavelengthRange('bands', spectrum!, bands, [{ lowNm: 4000, highNm: 5000 }], 'J')).toEqual([320, 2346]);
   });
   it('all never goes beyond what the spectrum says', () => {
     expect(wavelengthRange('all', { validLowNm: 500, validHighNm: 900 }, bands, atmosphere, null)).toEqual([500, 900]);

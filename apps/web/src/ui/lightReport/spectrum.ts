@@ -3,9 +3,9 @@ import type { BandId } from '@faintward/contracts/light';
 import { spacedTicks } from '../plot/labels';
 import { linearTicks } from '../plot/scale';
 
-export type RangeId = 'optical' | 'nearInfrared' | 'all' | 'band';
+export type RangeId = 'bands' | 'optical' | 'nearInfrared' | 'all' | 'band';
 
-/** Wavelengths to look at, in nm. `all` is where there are bands or windows, as far as the spectrum says something. */
+/** Wavelengths to look at, in nm. `bands` and `all` (bands and windows) go as far as the spectrum says something. */
 export function wavelengthRange(
   id: RangeId,
   spectrum: Pick<LightSpectrum, 'validLowNm' | 'validHighNm'>,
@@ -20,8 +20,9 @@ export function wavelengthRange(
   }
   if (id === 'optical') return [300, 1080];
   if (id === 'nearInfrared') return [880, 2500];
-  const lows = [...bands.map((one) => one.wavelengthLowNm), ...atmosphere.map((one) => one.lowNm)];
-  const highs = [...bands.map((one) => one.wavelengthHighNm), ...atmosphere.map((one) => one.highNm)];
+  const windows = id === 'bands' && bands.length > 0 ? [] : atmosphere;
+  const lows = [...bands.map((one) => one.wavelengthLowNm), ...windows.map((one) => one.lowNm)];
+  const highs = [...bands.map((one) => one.wavelengthHighNm * 1.02), ...windows.map((one) => one.highNm)];
   if (lows.length === 0) return [spectrum.validLowNm, spectrum.validHighNm];
   const low = Math.max(spectrum.validLowNm, Math.min(...lows));
   const high = Math.min(spectrum.validHighNm, Math.max(...highs));

@@ -43,3 +43,9 @@ it('speaks of no magnitude where no draw has light', () => {
   );
   expect(sentences).toEqual(['100 % of the draws have no light in z.']);
 });
+
+it('leaves many lines to a table', () => {
+  const [line] = lightReport.uncertainty!.lines;
+  const sentences = uncertaintySentences({ ...lightReport.uncertainty!, lines: [line!, line!, line!] }, 'J');
+  expect(sentences.filter((sentence) => sentence.includes('Lyα'))).toEqual([]);
+});

@@ -37,10 +37,13 @@ export function percentText(probability: number): string {
   return `${formatNumber(100 * probability, { decimals: 0 })} %`;
 }
 
+/** More lines than this are a table. */
+export const mostLinesInWords = 2;
+
 /** What the draws say, sentence by sentence. `bandLabel` is that of the ledger. */
 export function uncertaintySentences(uncertainty: LightUncertainty, bandLabel: string | null): string[] {
   const sentences: string[] = [];
-  for (const line of uncertainty.lines) {
+  for (const line of uncertainty.lines.length > mostLinesInWords ? [] : uncertainty.lines) {
     const at = quantilesText(line.observedWavelengthNm, Math.min(1, decimalsFor(line.observedWavelengthNm)));
     const inBand = bandLabel
       ? `${percentText(line.insideBandProbability)} that ${line.label} falls in ${bandLabel}; `

@@ -25,17 +25,19 @@ export function SourceForm({
   return (
     <Stack sx={{ gap: 3 }}>
       <FieldGroup title="Redshift">
-        <RedshiftFields
-          draft={{ ...state, table }}
-          errors={errors}
-          onChange={({ table: nextTable, ...change }) => {
-            if (nextTable !== undefined) onTableChange(nextTable);
-            onChange(change);
-          }}
-        />
-        <FieldGrid>
-          <DraftChoice {...props} name="cosmology" label="Cosmology" options={cosmologyOptions} />
-        </FieldGrid>
+        <Stack sx={{ gap: 1.75 }}>
+          <RedshiftFields
+            draft={{ ...state, table }}
+            errors={errors}
+            onChange={({ table: nextTable, ...change }) => {
+              if (nextTable !== undefined) onTableChange(nextTable);
+              onChange(change);
+            }}
+          />
+          <FieldGrid>
+            <DraftChoice {...props} name="cosmology" label="Cosmology" options={cosmologyOptions} />
+          </FieldGrid>
+        </Stack>
       </FieldGroup>
       <LightFields
         draft={state}
