@@ -1,3 +1,5 @@
+import { redshiftDistribution } from '@faintward/photometry';
+import { uncertaintyFaults } from '../../../apps/api/src/modules/targets/redshift-uncertainty-text.js';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { angularSeparationDeg } from '@faintward/astronomy';
 import { ModeConfigurationInput, TargetInput } from '@faintward/contracts';
@@ -108,6 +110,34 @@ describe('the demo scenario', () => {
         expect(TargetInput.safeParse(input).error, `${key} ${input.name}`).toBeUndefined();
       }
     }
+  });
+
+  it('knows its sources in every way that the contract has words for', () => {
+    const all = scenario.proposals.flatMap(({ targets }) => targets);
+    const lights = all.flatMap(({ light }) => (light === null ? [] : [light]));
+    const kindsOf = (values: readonly { kind: string }[]) => new Set(values.map(({ kind }) => kind));
+    expect(kindsOf(lights)).toEqual(new Set(['apparentMagnitude', 'absoluteMagnitude', 'lineFlux', 'typical']));
+    expect(kindsOf(lights.flatMap((light) => ('spectrum' in light ? [light.spectrum] : [])))).toEqual(
+      new Set(['powerLaw', 'starForming', 'passive', 'quasar', 'supernovaIa', 'blackbody', 'uploaded']),
+    );
+    expect(
+      kindsOf(all.flatMap(({ redshiftUncertainty }) => (redshiftUncertainty === null ? [] : [redshiftUncertainty]))),
+    ).toEqual(new Set(['gaussian', 'percentiles', 'table']));
+    const lensed = lights.filter(({ magnification }) => magnification !== 1);
+    expect(lensed.every(({ sigmaLnMagnification }) => (sigmaLnMagnification ?? 0) > 0)).toBe(true);
+    expect(new Set(lensed.map(({ includes }) => includes.lensing))).toEqual(new Set([true, false]));
+    for (const target of all) expect(uncertaintyFaults(target), target.name).toEqual([]);
+  });
+
+  it('gives two redshifts to a galaxy that may be a nearer one', () => {
+    const [target] = scenario.proposals.find(({ key }) => key === 'V02')?.targets ?? [];
+    const peaks = redshiftDistribution(target?.redshift ?? 0, target?.redshiftUncertainty ?? null).peaks;
+    expect(peaks).toHaveLength(2);
+    expect(peaks[0]?.redshift).toBeCloseTo(target?.redshift ?? 0, 1);
+    expect(peaks[1]?.redshift).toBeCloseTo(3.3, 1);
+    // Its recipe says between 12 and 30 per cent; the table ends at four standard deviations.
+    expect(peaks[1]?.probability).toBeGreaterThan(0.11);
+    expect(peaks[1]?.probability).toBeLessThan(0.31);
   });
 
   it('gives its targets names of its own, made from where they are', () => {

@@ -13,6 +13,9 @@ import { readDemoData } from '../../../apps/api/src/demo/demo-data.js';
 import { demoId } from '../../../apps/api/src/demo/identifiers.js';
 import { DEMO_PASSWORD, seedDemo } from '../../../apps/api/src/demo/index.js';
 import { buildScenario, type Scenario } from '../../../apps/api/src/demo/scenario.js';
+import { canonicalJson, sha256 } from '../../../apps/api/src/engine/canonical-json.js';
+import { SpectraReadModel } from '../../../apps/api/src/modules/spectra/spectra.read-model.js';
+import { SubmissionsReadModel } from '../../../apps/api/src/modules/submissions/submissions.read-model.js';
 import { TargetRecomputation } from '../../../apps/api/src/modules/targets/target-recomputation.service.js';
 import { DatabaseService } from '../../../apps/api/src/database/transaction.js';
 import { createTestApp, type TestApp } from '../support/app.js';
@@ -86,6 +89,22 @@ describe('a database filled with the demo', () => {
     expect(before.observations.length).toBeGreaterThan(10);
   });
 
+  it('shows a spectrum that was uploaded, and what uses it', async () => {
+    const [spectrum, ...others] = await app.get(SpectraReadModel).list(demoId('proposal', 'O10'));
+    expect(others).toEqual([]);
+    expect(spectrum?.usedByCount).toBe(10);
+    expect(spectrum?.source).toMatch(/^Invented/);
+  });
+
+  it('labels as such a brightness that is only typical of its kind', async () => {
+    const rows = await app.db
+      .select({ light: targets.light, computed: targets.computed })
+      .from(targets)
+      .where(sql`${targets.light} ->> 'kind' = 'typical'`);
+    expect(rows).toHaveLength(3);
+    for (const { computed } of rows) expect(computed.notices.map(({ code }) => code)).toContain('typicalLight');
+  });
+
   it('asks for hours that can be argued about', async () => {
     const rows = await app.db
       .select({
@@ -106,11 +125,15 @@ describe('a database filled with the demo', () => {
     const rows = await app.db.select().from(submissions);
     const submitted = scenario.proposals.filter(({ submittedAt }) => submittedAt !== null);
     expect(rows).toHaveLength(submitted.length);
-    for (const { fingerprint, content, requestedHours, targetCount, proposalId } of rows) {
+    for (const { id, fingerprint, requestedHours, targetCount, proposalId } of rows) {
+      const content = await app.get(SubmissionsReadModel).contentOf(id);
+      if (content === undefined) throw new Error('A submission has no content.');
       const proposal = submitted.find(({ id }) => id === proposalId);
       expect(fingerprint).toMatch(/^[0-9a-f]{64}$/);
       expect(targetCount).toBe(proposal?.targets.length);
       expect(content.title).toBe(proposal?.title);
+      expect(sha256(canonicalJson(content))).toBe(fingerprint);
+      expect(content.targets).toHaveLength(targetCount);
       expect(content.observations).toHaveLength(proposal?.observations.length ?? 0);
       expect(content.observations.every(({ totalSeconds }) => totalSeconds !== null)).toBe(true);
       expect(requestedHours).toEqual(content.timeRequest.totals);

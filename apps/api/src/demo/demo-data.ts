@@ -9,6 +9,7 @@ import type {
   Goal,
   HoursByMoonClass,
   ModeConfiguration,
+  RedshiftKind,
   TeamAccess,
 } from '@faintward/contracts';
 
@@ -78,9 +79,47 @@ export interface SemestersData {
   }[];
 }
 
-export type LightRecipe =
-  | { kind: 'apparentMagnitude'; bandId: BandId; magnitude: Span; spectralSlopeBeta: Span }
-  | { kind: 'lineFlux'; restWavelengthNm: number; fluxErgSCm2: Span; velocityWidthKmS: Span };
+/** The shape of a source's spectrum; spans are drawn for each target. */
+export type SpectrumRecipe =
+  | { kind: 'powerLaw'; slopeBeta: Span }
+  | { kind: 'starForming'; slopeBeta: Span; breakRatio: Span }
+  | { kind: 'passive' }
+  | { kind: 'quasar'; template: 'powerLaws' | 'hewettWild2010' }
+  | { kind: 'supernovaIa'; phaseDays: Span }
+  | { kind: 'blackbody'; temperatureK: Span }
+  /** One of the proposal's own, by its key. */
+  | { kind: 'uploaded'; spectrum: string };
+
+/** What lies between a source and us, where a recipe says it. */
+interface WayRecipe {
+  /** E(B−V) of the host. */
+  hostDust?: Span;
+  /** E(B−V) of the Milky Way, read off a map. */
+  galacticDust?: Span;
+  magnification?: Span;
+  sigmaLnMagnification?: number;
+}
+
+export type LightRecipe = WayRecipe &
+  (
+    | { kind: 'apparentMagnitude'; bandId: BandId; magnitude: Span; spectrum: SpectrumRecipe }
+    /** At 150 nm at rest. */
+    | { kind: 'absoluteMagnitude'; magnitude: Span; spectrum: SpectrumRecipe }
+    | { kind: 'lineFlux'; restWavelengthNm: number; fluxErgSCm2: Span; velocityWidthKmS: Span }
+    | { kind: 'typical'; of: 'starFormingGalaxy' | 'supernovaIa'; spectrum: SpectrumRecipe }
+  );
+
+export interface RedshiftRecipe {
+  low: number;
+  high: number;
+  /** With it the redshifts are photometric. */
+  sigma?: number;
+  /** Photometric ones are quoted by percentiles, wider above than below. */
+  isSkewed?: boolean;
+  /** A second solution, so that the whole distribution is given. */
+  interloper?: { redshift: number; sigma: number; share: Span };
+  kind?: RedshiftKind;
+}
 
 export type ExtentRecipe =
   | { kind: 'point' }
@@ -91,8 +130,7 @@ export interface TargetGroupData {
   count: number;
   /** Our own acronym, put before the designation by position. */
   designation: string;
-  /** With `sigma` the redshifts are photometric. */
-  redshift: { low: number; high: number; sigma?: number };
+  redshift: RedshiftRecipe;
   light: LightRecipe;
   extent: ExtentRecipe;
   /** The targets lie in so many fields; absent: each for itself. */
@@ -126,6 +164,8 @@ export interface ProposalData {
   case: Record<CaseSectionId, string>;
   targets: TargetGroupData[];
   setups: SetupData[];
+  /** Uploaded by the team; `text` is read from the file. */
+  spectra?: { key: string; name: string; source: string; file: string; observedAtRedshift: number; text: string }[];
   team?: { person: string; access: TeamAccess }[];
   fate: 'draft' | 'submitted' | 'withdrawn';
   cosmology?: CosmologyChoice;
@@ -169,7 +209,11 @@ export async function readDemoData(folder = DEMO_FOLDER): Promise<DemoData> {
     readJson<ProposalData[]>(folder, 'proposals-reviewing.json'),
     readJson<ProposalData[]>(folder, 'proposals-open.json'),
   ]);
-  return { facilities, people, semesters, comments, proposals: proposals.flat() };
+  const all = proposals.flat();
+  for (const spectrum of all.flatMap(({ spectra }) => spectra ?? [])) {
+    spectrum.text = await readFile(path.join(folder, spectrum.file), 'utf8');
+  }
+  return { facilities, people, semesters, comments, proposals: all };
 }
 
 /** The files belong to this code and are held to these shapes by its tests. */

@@ -12,16 +12,20 @@ import { institutions, partners, people } from '../database/schema/people.js';
 import { caseSections, proposalMembers, proposals } from '../database/schema/proposals.js';
 import { reviews } from '../database/schema/reviews.js';
 import { semesterHours, semesters } from '../database/schema/semesters.js';
+import { spectra } from '../database/schema/spectra.js';
 import { submissions } from '../database/schema/submissions.js';
 import { targets } from '../database/schema/targets.js';
 import { DatabaseService } from '../database/transaction.js';
-import { canonicalJson, sha256 } from '../engine/canonical-json.js';
 import { chooseProposalCosmology } from '../engine/cosmologies.js';
+import type { UploadedSpectra } from '../engine/light.js';
+import { ProposalSpectra } from '../engine/proposal-spectra.service.js';
 import { ProposalSkies } from '../engine/proposal-sky.service.js';
 import { computeTargetColumns, type SkyOfSemester } from '../engine/target-columns.js';
 import { FacilitiesReadModel } from '../modules/facilities/facilities.read-model.js';
 import { ObservationEstimates } from '../modules/observations/observation-estimates.service.js';
 import { ConflictsQueries } from '../modules/panels/conflicts.queries.js';
+import { readSpectrumText } from '../modules/spectra/spectrum-text.js';
+import { fingerprintOfParts, SubmissionRows } from '../modules/submissions/submission-rows.service.js';
 import { SubmissionsService } from '../modules/submissions/submissions.service.js';
 import { TargetRecomputation } from '../modules/targets/target-recomputation.service.js';
 import { daysFrom } from './calendar.js';
@@ -32,6 +36,7 @@ import { type Contender, decide, type Decision } from './opinions.js';
 import { changesOf } from './past-changes.js';
 import { randomStream } from './random.js';
 import type { PanelRow, ProposalRow, Scenario, SemesterRow } from './scenario.js';
+import { demoSpectrumId } from './target-light.js';
 
 /** Rows in one statement: large enough to be quick, small enough for one message to the embedded database. */
 const ROWS_PER_STATEMENT = 200;
@@ -106,6 +111,7 @@ export class DemoWriter {
     for (const semester of scenario.semesters) {
       const sky = await this.app.get(ProposalSkies, { strict: false }).ofSemester(semester.id);
       for (const proposal of scenario.proposals.filter(({ semesterId }) => semesterId === semester.id)) {
+        await this.writeSpectra(proposal);
         await this.writeTargets(proposal, sky);
         await this.writeObservations(proposal);
         if (proposal.submittedAt !== null) await this.writeSubmission(proposal, proposal.submittedAt);
@@ -114,8 +120,52 @@ export class DemoWriter {
     await this.insert(changes, changesOf(scenario, this.now));
   }
 
+  /** Read as they would be if the team uploaded them. */
+  private async writeSpectra(proposal: ProposalRow): Promise<void> {
+    const createdBy = principalOf(proposal);
+    if (createdBy === null) throw new RangeError(`Proposal ${proposal.key} has no principal investigator.`);
+    const rows = proposal.spectra.map(({ key, name, source, text, observedAtRedshift }) => {
+      const { wavelengthsNm, fluxPerNm, contentHash, notices } = readSpectrumText({
+        text,
+        wavelengthUnit: null,
+        fluxKind: 'perWavelength',
+        isAirWavelength: false,
+        observedAtRedshift,
+      });
+      return {
+        id: demoSpectrumId(proposal.key, key),
+        proposalId: proposal.id,
+        name,
+        source,
+        wavelengthsNm,
+        fluxPerNm,
+        pointCount: wavelengthsNm.length,
+        restLowNm: wavelengthsNm[0] ?? 0,
+        restHighNm: wavelengthsNm.at(-1) ?? 0,
+        observedAtRedshift,
+        contentHash,
+        notices,
+        createdBy,
+        createdAt: daysFrom(proposal.createdAt, 0.05),
+      };
+    });
+    await this.insert(spectra, rows);
+  }
+
+  private uploadedOf(proposal: ProposalRow): Promise<UploadedSpectra> {
+    return this.app.get(ProposalSpectra, { strict: false }).ofLights(
+      proposal.id,
+      proposal.targets.map(({ light }) => light),
+    );
+  }
+
   private async writeTargets(proposal: ProposalRow, sky: SkyOfSemester): Promise<void> {
-    const columns = await computeTargetColumns(proposal.targets, chooseProposalCosmology(proposal.cosmology), sky);
+    const columns = await computeTargetColumns(
+      proposal.targets,
+      chooseProposalCosmology(proposal.cosmology),
+      sky,
+      await this.uploadedOf(proposal),
+    );
     await this.insert(
       targets,
       proposal.targets.flatMap(({ targetId, proposalKey: _key, groupIndex: _group, position, ...input }, index) => {
@@ -136,6 +186,7 @@ export class DemoWriter {
     const facilities = this.app.get(FacilitiesReadModel, { strict: false });
     const estimates = this.app.get(ObservationEstimates, { strict: false });
     const byId = new Map(proposal.targets.map((target) => [target.targetId, target]));
+    const uploaded = await this.uploadedOf(proposal);
     const columnsByPlan = new Map<string, ReturnType<ObservationEstimates['columnsFor']>>();
     const rows: PgInsertValue<typeof observations>[] = [];
     for (const observation of proposal.observations) {
@@ -147,7 +198,7 @@ export class DemoWriter {
       if (columnsOf === undefined) {
         const mode = await facilities.findMode(modeId, this.versionInForce(modeId, proposal.submittedAt ?? this.now));
         if (mode === undefined) throw new RangeError(`There is no mode ${modeId}.`);
-        columnsOf = estimates.columnsFor(mode, proposal.cosmology, { goal, conditions, repeatCount });
+        columnsOf = estimates.columnsFor(mode, proposal.cosmology, { goal, conditions, repeatCount }, uploaded);
         columnsByPlan.set(key, columnsOf);
       }
       rows.push({
@@ -324,11 +375,14 @@ export class DemoWriter {
     const actor = { personId, email, isStaff, isAdministrator, sessionId: demoId('no session') };
     const content = await this.app
       .get(SubmissionsService, { strict: false })
-      .freeze(actor, { proposalId: proposal.id, cosmology: proposal.cosmology });
+      .freezeHead(actor, { proposalId: proposal.id, cosmology: proposal.cosmology });
     const requestedHours = content.timeRequest.totals;
     this.requestedHours.set(proposal.id, requestedHours);
-    const fingerprint = sha256(canonicalJson(content));
     const submissionId = demoId('submission', proposal.id);
+    const { texts, targetCount } = await this.app
+      .get(SubmissionRows, { strict: false })
+      .store(proposal.id, submissionId);
+    const fingerprint = await fingerprintOfParts(content, texts);
     await this.insert(submissions, [
       {
         id: submissionId,
@@ -339,7 +393,7 @@ export class DemoWriter {
         content,
         fingerprint,
         requestedHours,
-        targetCount: content.targets.length,
+        targetCount,
         isCurrent: proposal.fate !== 'withdrawn',
       },
     ]);

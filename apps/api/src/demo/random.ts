@@ -51,3 +51,8 @@ function fnv1a(text: string): number {
   for (const byte of new TextEncoder().encode(text)) hash = Math.imul(hash ^ byte, 0x01000193);
   return hash >>> 0;
 }
+
+/** Rounded as people round what they type. */
+export function roundTo(value: number, decimals: number): number {
+  return Number(value.toFixed(decimals));
+}

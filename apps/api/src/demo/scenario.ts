@@ -134,6 +134,7 @@ export interface ProposalRow {
   submittedAt: Date | null;
   members: MemberRow[];
   case: { sectionId: CaseSectionId; body: string }[];
+  spectra: NonNullable<ProposalData['spectra']>;
   targets: DemoTarget[];
   observations: PlannedObservation[];
 }
@@ -347,6 +348,7 @@ function layOutProposal(
       const body = lacking.has(sectionId) ? '' : proposal.case[sectionId];
       return body === '' ? [] : [{ sectionId, body }];
     }),
+    spectra: proposal.spectra ?? [],
     targets,
     observations: proposal.setups.flatMap((setup, setupIndex) => {
       const { groups } = setup;

@@ -1,8 +1,9 @@
 import { designationFromPosition, julianDateFromUnixMs, localSiderealTimeDeg } from '@faintward/astronomy';
-import type { Extent, Light, TargetInput } from '@faintward/contracts';
-import type { CommentsData, ExtentRecipe, LightRecipe, ProposalData, Span, TargetGroupData } from './demo-data.js';
+import type { Extent, TargetInput } from '@faintward/contracts';
+import type { CommentsData, ExtentRecipe, ProposalData, Span, TargetGroupData } from './demo-data.js';
 import { demoId } from './identifiers.js';
-import { randomStream, type RandomStream } from './random.js';
+import { randomStream, type RandomStream, roundTo } from './random.js';
+import { lightOf, redshiftOf } from './target-light.js';
 
 export interface DemoTarget extends TargetInput {
   targetId: string;
@@ -43,9 +44,8 @@ export function targetsOf(
         name = nameAt(group.designation, place);
       }
       takenNames.add(name);
-      const isPhotometric = group.redshift.sigma !== undefined;
-      const redshift = roundTo(random.between(group.redshift.low, group.redshift.high), isPhotometric ? 2 : 4);
-      const light = lightOf(group.light, random);
+      const redshift = redshiftOf(group.redshift, random);
+      const light = lightOf(group.light, proposal.key, random);
       const remarks = notes[group.designation] ?? [];
       targets.push({
         targetId: demoId('target', proposal.key, name),
@@ -54,12 +54,7 @@ export function targetsOf(
         position: targets.length,
         name,
         ...place,
-        redshift,
-        redshiftSigma: isPhotometric
-          ? roundTo((group.redshift.sigma ?? 0) * random.between(0.7, 1.4), 2)
-          : random.next() < 0.7
-            ? 0.0003
-            : null,
+        ...redshift,
         light: index >= group.count - (group.withoutLight ?? 0) ? null : light,
         extent: extentOf(group.extent, random),
         notes: remarks.length > 0 && random.next() < NOTED_SHARE ? random.pick(remarks) : '',
@@ -133,28 +128,6 @@ export function galacticLatitudeDeg(place: Place): number {
   return Math.asin(sine) / radians;
 }
 
-function lightOf(recipe: LightRecipe, random: RandomStream): Light {
-  if (recipe.kind === 'apparentMagnitude') {
-    return {
-      kind: 'apparentMagnitude',
-      magnitude: roundTo(random.between(...recipe.magnitude), 2),
-      system: 'AB',
-      bandId: recipe.bandId,
-      spectralSlopeBeta: roundTo(random.between(...recipe.spectralSlopeBeta), 2),
-      sigmaMag: roundTo(random.between(0.03, 0.15), 2),
-    };
-  }
-  const [lowFlux, highFlux] = recipe.fluxErgSCm2;
-  return {
-    kind: 'lineFlux',
-    // Evenly in the logarithm, as faint lines outnumber bright ones.
-    fluxErgSCm2: Number((lowFlux * (highFlux / lowFlux) ** random.next()).toPrecision(3)),
-    restWavelengthNm: recipe.restWavelengthNm,
-    velocityWidthKmS: Math.round(random.between(...recipe.velocityWidthKmS) / 5) * 5,
-    sigmaMag: roundTo(random.between(0.05, 0.2), 2),
-  };
-}
-
 function extentOf(recipe: ExtentRecipe, random: RandomStream): Extent {
   if (recipe.kind !== 'sersic') return { kind: recipe.kind };
   return {
@@ -164,8 +137,4 @@ function extentOf(recipe: ExtentRecipe, random: RandomStream): Extent {
     sersicIndex: roundTo(random.between(...recipe.sersicIndex), 1),
     axisRatio: roundTo(random.between(...recipe.axisRatio), 2),
   };
-}
-
-function roundTo(value: number, decimals: number): number {
-  return Number(value.toFixed(decimals));
 }

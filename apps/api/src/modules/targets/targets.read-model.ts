@@ -76,11 +76,9 @@ export class TargetsReadModel {
   }
 
   async find(proposalId: string, targetId: string): Promise<Target | undefined> {
-    const [row] = await this.select(
-      proposalId,
-      and(eq(targets.proposalId, proposalId), eq(targets.id, targetId)),
+    const [row] = await this.select(proposalId, and(eq(targets.proposalId, proposalId), eq(targets.id, targetId)), [
       targetId,
-    );
+    ]);
     return row === undefined ? undefined : toTarget(row);
   }
 
@@ -102,10 +100,8 @@ export class TargetsReadModel {
       .orderBy(asc(targets.position), asc(targets.id));
     await inBatches(ids, size, async (batch) => {
       const wanted = batch.map(({ targetId }) => targetId);
-      const rows = await this.select(proposalId, and(eq(targets.proposalId, proposalId), isOneOf(wanted))).orderBy(
-        asc(targets.position),
-        asc(targets.id),
-      );
+      const isWanted = and(eq(targets.proposalId, proposalId), isOneOf(targets.id, wanted));
+      const rows = await this.select(proposalId, isWanted, wanted).orderBy(asc(targets.position), asc(targets.id));
       await work(rows.map(toTarget));
     });
   }
@@ -125,7 +121,7 @@ export class TargetsReadModel {
         version: targets.version,
       })
       .from(targets)
-      .where(and(eq(targets.proposalId, proposalId), targetIds === 'all' ? undefined : isOneOf(targetIds)))
+      .where(and(eq(targets.proposalId, proposalId), targetIds === 'all' ? undefined : isOneOf(targets.id, targetIds)))
       .orderBy(asc(targets.position), asc(targets.id));
   }
 
@@ -201,7 +197,7 @@ export class TargetsReadModel {
   }
 
   /** Counts and sums of observations by target, as one grouped join instead of a query for each row. */
-  private sums(proposalId: string, targetId?: string) {
+  private sums(proposalId: string, targetIds?: readonly string[]) {
     const sums = this.database
       .current()
       .select({
@@ -213,7 +209,7 @@ export class TargetsReadModel {
       .where(
         and(
           eq(observations.proposalId, proposalId),
-          targetId === undefined ? undefined : eq(observations.targetId, targetId),
+          targetIds === undefined ? undefined : isOneOf(observations.targetId, targetIds),
         ),
       )
       .groupBy(observations.targetId)
@@ -221,8 +217,9 @@ export class TargetsReadModel {
     return { sums, requestedSeconds: sql<number | null>`${sums.requestedSeconds}` };
   }
 
-  private select(proposalId: string, where: SQL | undefined, targetId?: string) {
-    const { sums } = this.sums(proposalId, targetId);
+  /** @param targetIds  those that `where` selects, if they are known: their observations alone are then summed */
+  private select(proposalId: string, where: SQL | undefined, targetIds?: readonly string[]) {
+    const { sums } = this.sums(proposalId, targetIds);
     return this.database
       .current()
       .select({
@@ -239,9 +236,9 @@ export class TargetsReadModel {
 
 const hasNotices = sql`(jsonb_array_length(${targets.computed} -> 'notices') > 0 or ${targets.nearestDuplicateName} is not null)`;
 
-function isOneOf(targetIds: readonly string[]): SQL {
+function isOneOf(column: typeof targets.id | typeof observations.targetId, targetIds: readonly string[]): SQL {
   // One parameter for any number of ids; a list of placeholders ends at 65 535.
   return targetIds.length <= 1
-    ? inArray(targets.id, [...targetIds])
-    : sql`${targets.id} = any(array(select jsonb_array_elements_text(${JSON.stringify(targetIds)}::jsonb)::uuid))`;
+    ? inArray(column, [...targetIds])
+    : sql`${column} = any(array(select jsonb_array_elements_text(${JSON.stringify(targetIds)}::jsonb)::uuid))`;
 }
