@@ -15,7 +15,7 @@ import { lightReport } from '../../engine/light-report.js';
 import { suggestionsAt } from '../../engine/suggestions.js';
 import { invalidField } from '../../platform/domain-error.js';
 import { validationFailed } from '../../platform/validation.js';
-import { readRedshiftDistribution } from '../targets/redshift-distribution-text.js';
+import { readRedshiftDistribution } from './redshift-distribution-text.js';
 import { readTypedLight } from './typed-light.js';
 
 /** What can be said of a light without an account. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { readRedshiftDistribution } from '../../../apps/api/src/modules/targets/redshift-distribution-text.js';
+import { readRedshiftDistribution } from '../../../apps/api/src/modules/light/redshift-distribution-text.js';
 import { DomainError } from '../../../apps/api/src/platform/domain-error.js';
 
 const fault = (text: string): string => {
