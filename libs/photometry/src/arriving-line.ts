@@ -1,18 +1,18 @@
 import { CM_PER_MPC } from './constants.js';
-import { DARK_TRANSMISSION, inMicrons, type LightCaution } from './arriving-continuum.js';
+import { DARK_TRANSMISSION, inMicrons, type LightCaution, NO_DISTANCE } from './arriving-continuum.js';
 import { attenuationMag, defaultTotalToSelective, DUST_LAWS } from './dust.js';
 import { LYMAN_ALPHA_NM } from './lines.js';
 import { type Ledger, ledgerInput, type LedgerInput } from './ledger.js';
 import { LIGHT_STEPS, type LightStepId } from './light-steps.js';
 import { lensingMag } from './lensing.js';
+import { LINE_MARGIN } from './seen-spectrum.js';
+import { curveValueAt } from './sampled-curve.js';
 import type { LineLight, LuminosityDistances, NoLight } from './source-light.js';
 import { abMagnitudeAt, abMagnitudeOfPhotons, linePhotonIntegral, type Response } from './synthetic.js';
 import { galacticDustOf } from './way.js';
 
 /** Area of the sphere of 10 pc: luminosities become fluxes at the distance of absolute magnitudes. */
 const TEN_PARSEC_SPHERE_CM2 = 4 * Math.PI * (1e-5 * CM_PER_MPC) ** 2;
-/** Lyα itself is at the edge of the forest, not in it; line lists give it in one decimal less or more. */
-const LINE_MARGIN = 1e-4;
 
 /** A line as it arrives above the atmosphere: every step takes the same part of all its light. */
 export class ArrivingLine {
@@ -39,16 +39,16 @@ export class ArrivingLine {
 
   /** Flux above the atmosphere in erg s⁻¹ cm⁻²; undefined where nothing arrives. */
   fluxErgSCm2(): number | undefined {
-    if (this.whyAbsorbed() !== undefined) return undefined;
+    if (this.whyNone() !== undefined) return undefined;
     const { amount } = this.light.quoted;
     const atTenParsec = this.light.frame === 'rest' ? amount / TEN_PARSEC_SPHERE_CM2 : amount;
-    return 10 ** (-0.4 * this.sumMag(-2.5 * Math.log10(atTenParsec)));
+    return atTenParsec * 10 ** (-0.4 * this.sumMag(0));
   }
 
   /** Adds the steps to a ledger, up to the top of the atmosphere; answers why there is no light, if so. */
   addSteps(ledger: Ledger, response: Response): NoLight | undefined {
-    const outside = this.whyOutside(response);
-    if (outside !== undefined) return outside;
+    const without = this.whyOutside(response) ?? this.whyNoDistance();
+    if (without !== undefined) return without;
     const { quoted } = this.light;
     ledger.add(
       QUOTED_STEPS[quoted.kind],
@@ -164,7 +164,7 @@ export class ArrivingLine {
     if (galacticDust !== null && !(includes.galacticDust && light.frame === 'observed')) {
       steps.push({
         id: 'galactic-dust',
-        mag: galacticDustOf(galacticDust)(this.observedWavelengthNm),
+        mag: galacticDustOf(galacticDust)(Math.log(this.observedWavelengthNm)),
         inputs: [ledgerInput('colourExcessMag', galacticDust.colourExcessMag, 'mag')],
         source: DUST_LAWS[galacticDust.law].source,
       });
@@ -179,14 +179,30 @@ export class ArrivingLine {
   }
 
   private whyDark(response: Response): NoLight | undefined {
-    return this.whyOutside(response) ?? this.whyAbsorbed();
+    return this.whyOutside(response) ?? this.whyNone();
   }
 
-  private whyOutside({ passLowNm: lowNm, passHighNm: highNm }: Response): NoLight | undefined {
-    if (this.observedWavelengthNm >= lowNm && this.observedWavelengthNm <= highNm) return undefined;
+  private whyNone(): NoLight | undefined {
+    return this.whyNoDistance() ?? this.whyAbsorbed();
+  }
+
+  private whyNoDistance(): NoLight | undefined {
+    return this.light.frame === 'rest' && this.redshift === 0 ? NO_DISTANCE : undefined;
+  }
+
+  private whyOutside({ curve, passLowNm: lowNm, passHighNm: highNm }: Response): NoLight | undefined {
+    const nm = this.observedWavelengthNm;
+    const isInside = nm >= lowNm && nm <= highNm;
+    if (isInside && curveValueAt(curve, nm) > 0) return undefined;
+    if (isInside) {
+      return {
+        code: 'lineOutsideBand',
+        message: `The line falls at ${nm.toFixed(1)} nm, where this range lets nothing through.`,
+      };
+    }
     return {
       code: 'lineOutsideBand',
-      message: `The line falls at ${this.observedWavelengthNm.toFixed(1)} nm, outside ${inNanometres(lowNm)} to ${inNanometres(highNm)} nm.`,
+      message: `The line falls at ${nm.toFixed(1)} nm, outside ${inNanometres(lowNm)} to ${inNanometres(highNm)} nm.`,
     };
   }
 
