@@ -1,20 +1,13 @@
 import { DUST_LAWS } from './dust.js';
 import { LYMAN_ALPHA_NM, LYMAN_LIMIT_NM } from './lines.js';
-import { Ledger, ledgerInput, type LedgerInput } from './ledger.js';
+import { type Ledger, ledgerInput, type LedgerInput } from './ledger.js';
 import { LIGHT_STEPS, type LightStepId } from './light-steps.js';
 import { lensingMag } from './lensing.js';
-import { curveValueAt, firstAbove, type SampledCurve } from './sampled-curve.js';
+import { curveValueAt } from './sampled-curve.js';
+import { AT_SOURCE, EVERYTHING, type Met, NOTHING, SeenSpectrum } from './seen-spectrum.js';
 import type { RestLine } from './source-spectra.js';
-import type { ContinuumLight, LuminosityDistances, NoLight } from './source-light.js';
-import {
-  abMagnitudeOfFrequency,
-  abMagnitudeOfPhotons,
-  frequencyIntegral,
-  linePhotonIntegral,
-  responseShare,
-  type Response,
-} from './synthetic.js';
-import { forestTransmission, galacticDustOf, hostDustOn, perFrequency } from './way.js';
+import type { ContinuumLight, LuminosityDistances, NoLight, QuotedAt } from './source-light.js';
+import { abMagnitudeOfFrequency, abMagnitudeOfPhotons, responseShare, type Response } from './synthetic.js';
 
 /** Below this share of its photons a band is dark: the mean models say nothing reliable about the rest. */
 export const DARK_TRANSMISSION = 0.01;
@@ -22,15 +15,7 @@ export const DARK_TRANSMISSION = 0.01;
 const NEEDED_COVERAGE = 0.5;
 const FULL_COVERAGE = 0.99;
 
-/** Which parts of the way are taken into account. */
-interface Met {
-  hostDust: boolean;
-  intergalactic: boolean;
-  galacticDust: boolean;
-}
-const NOTHING: Met = { hostDust: false, intergalactic: false, galacticDust: false };
-const EVERYTHING: Met = { hostDust: true, intergalactic: true, galacticDust: true };
-
+/** What a person must know before he trusts a value. */
 export interface LightCaution {
   code: string;
   message: string;
@@ -47,14 +32,8 @@ export interface LightCaution {
  */
 export class ArrivingContinuum {
   readonly kind = 'continuum';
+  private readonly seen: SeenSpectrum;
   private readonly stretch: number;
-  /** g = λ² f_λ ∝ f_ν at rest wavelengths, which is straight between its points. */
-  private readonly shape: SampledCurve;
-  private readonly nodesNm: Float64Array;
-  private readonly values: Float64Array;
-  private forest: Float64Array | undefined;
-  private host: { shape: Float64Array; visualMag: number } | undefined;
-  private galactic: ((observedNm: number) => number) | undefined;
   private quoted: number | NoLight | undefined;
 
   /**
@@ -68,18 +47,15 @@ export class ArrivingContinuum {
     private readonly isSurface = false,
   ) {
     this.stretch = 1 + redshift;
-    this.shape = perFrequency(light.spectrum.continuum);
-    this.nodesNm = this.shape.wavelengthsNm;
-    this.values = this.shape.values;
+    this.seen = new SeenSpectrum(light, redshift);
   }
 
   /** AB magnitude above the atmosphere, or why there is none. */
   magnitudeIn(response: Response): number | NoLight {
-    const dark = this.whyDark(response);
-    if (dark !== undefined) return dark;
+    const arriving = this.arrivingMag(response);
+    if (typeof arriving === 'object') return arriving;
     const quoted = this.quotedMag();
     if (typeof quoted === 'object') return quoted;
-    const arriving = this.spectrumMag(response, EVERYTHING);
     const reference = quoted ?? this.spectrumMag(response, this.included());
     return this.abMagnitude() + this.distanceMag() + this.bandwidthMag() + arriving - reference + this.lensingStepMag();
   }
@@ -95,6 +71,7 @@ export class ArrivingContinuum {
     if (light.quoted.toAbMag !== 0)
       add('vega-to-ab', light.quoted.toAbMag, [ledgerInput('vegaToAbMag', light.quoted.toAbMag, 'mag')]);
     if (light.frame === 'rest') {
+      if (redshift === 0) return NO_DISTANCE;
       const now = this.modulus(this.distances);
       if (light.derivedWith !== undefined) {
         const then = this.modulus(light.derivedWith);
@@ -109,8 +86,7 @@ export class ArrivingContinuum {
       ]);
       add('redshift-bandwidth', this.bandwidthMag(), [ledgerInput('redshift', redshift)]);
     }
-    const dark = this.whyDark(response) ?? this.whyQuotedDark();
-    if (dark !== undefined) return dark;
+    for (const mag of [this.arrivingMag(response), this.quotedMag()]) if (typeof mag === 'object') return mag;
 
     const included = this.included();
     let met = NOTHING;
@@ -170,20 +146,20 @@ export class ArrivingContinuum {
 
   /** Part of the photons of a range that the intergalactic medium lets through; undefined where the source emits none. */
   intergalacticTransmission(response: Response): number | undefined {
-    const emitted = this.photons(response, this.stretch, { ...EVERYTHING, intergalactic: false });
-    return emitted > 0 ? this.photons(response, this.stretch, EVERYTHING) / emitted : undefined;
+    const emitted = this.seen.photons(response, this.stretch, { ...EVERYTHING, intergalactic: false });
+    return emitted > 0 ? this.seen.photons(response, this.stretch, EVERYTHING) / emitted : undefined;
   }
 
   /** λ² f_λ on the spectrum's scale at the point of an index, as it arrives or without absorption outside the source. */
   perFrequencyAtNode(index: number, isAbsorbed: boolean): number {
-    return this.values[index]! * this.factorAt(index, isAbsorbed ? EVERYTHING : { ...NOTHING, hostDust: true });
+    return this.seen.valueAtNode(index, isAbsorbed ? EVERYTHING : AT_SOURCE);
   }
 
   /** What of a narrow line of the spectrum comes through, as it arrives and without absorption outside the source. */
   lineFactors(restNm: number): { arrives: number; unabsorbed: number } {
     return {
-      arrives: this.factorAtRest(restNm, EVERYTHING),
-      unabsorbed: this.factorAtRest(restNm, { ...NOTHING, hostDust: true }),
+      arrives: this.seen.factorAt(restNm, EVERYTHING),
+      unabsorbed: this.seen.factorAt(restNm, AT_SOURCE),
     };
   }
 
@@ -216,10 +192,10 @@ export class ArrivingContinuum {
    */
   absoluteMagnitudeAt(restNm: number): number | undefined {
     const quoted = this.quotedMag();
-    const value = curveValueAt(this.shape, restNm);
+    const value = this.seen.valueAt(restNm, AT_SOURCE);
     if (typeof quoted !== 'number' || !(value > 0) || this.isSurface || this.redshift === 0) return undefined;
     const { light } = this;
-    const emitted = abMagnitudeOfFrequency(value * this.factorAtRest(restNm, { ...NOTHING, hostDust: true }));
+    const emitted = abMagnitudeOfFrequency(value);
     const now = this.modulus(this.distances);
     const unlensed = light.includes.lensing ? -lensingMag(light.magnification) : 0;
     const toSource = light.frame === 'observed' ? -now + 2.5 * Math.log10(this.stretch) : this.distanceMag() - now;
@@ -235,9 +211,11 @@ export class ArrivingContinuum {
       .map(({ code, message }) => ({ code, message }));
     const coverage = this.coverage(response);
     if (coverage < FULL_COVERAGE && coverage >= NEEDED_COVERAGE) {
+      const beyondNm = restLowNm < spectrum.validLowNm ? restLowNm : restHighNm;
+      const beyond = curveValueAt(spectrum.continuum, beyondNm) > 0 ? 'is its continuation, a guess' : 'counts as dark';
       cautions.push({
         code: 'spectrumCoversPart',
-        message: `The spectrum covers ${Math.round(100 * coverage)} % of this range; what lies beyond it counts as dark.`,
+        message: `The spectrum covers ${Math.round(100 * coverage)} % of this range; what lies beyond it ${beyond}.`,
       });
     }
     const lymanAlphaNm = LYMAN_ALPHA_NM * this.stretch;
@@ -281,12 +259,9 @@ export class ArrivingContinuum {
     return this.isSurface || includes.lensing || magnification === 1 ? 0 : lensingMag(magnification);
   }
 
-  /**
-   * Magnitude of the spectrum on its own scale. As f_ν it keeps its values when it is stretched, so that a flat one has the
-   * same magnitude at any redshift.
-   */
+  /** Magnitude of the spectrum on its own scale. */
   private spectrumMag(response: Response, met: Met): number {
-    return abMagnitudeOfPhotons(this.photons(response, this.stretch, met), response);
+    return abMagnitudeOfPhotons(this.seen.photons(response, this.stretch, met), response);
   }
 
   /** The same where the magnitude was quoted; undefined where that is the range looked at. */
@@ -297,11 +272,9 @@ export class ArrivingContinuum {
       case 'range':
         return undefined;
       case 'response':
-        return abMagnitudeOfPhotons(this.photons(at.response, stretch, met), at.response);
-      case 'wavelength': {
-        const restNm = at.wavelengthNm / stretch;
-        return abMagnitudeOfFrequency(curveValueAt(this.shape, restNm) * this.factorAtRest(restNm, met));
-      }
+        return abMagnitudeOfPhotons(this.seen.photons(at.response, stretch, met), at.response);
+      case 'wavelength':
+        return abMagnitudeOfFrequency(this.seen.valueAt(at.wavelengthNm / stretch, met));
     }
   }
 
@@ -312,52 +285,52 @@ export class ArrivingContinuum {
   }
 
   private whyQuotedDark(): NoLight | undefined {
-    const { at, frame, medium } = this.light;
+    const { at, frame } = this.light;
     if (at.kind === 'range') return undefined;
-    const stretch = frame === 'observed' ? this.stretch : 1;
+    if (frame === 'rest' && this.redshift === 0) return NO_DISTANCE;
+    if (!this.isQuotedDark(at)) return undefined;
     const place = at.kind === 'response' ? at.label : `${Number(at.wavelengthNm.toPrecision(4))} nm`;
-    if (at.kind === 'response') {
-      const plain = this.photons(at.response, stretch, NOTHING);
-      if (!(plain > 0)) {
-        return {
-          code: 'noFluxInQuotedBand',
-          message: `The spectrum chosen has no light in ${place}, where the magnitude is quoted.`,
-        };
-      }
-      if (frame === 'observed' && medium !== null) {
-        const left = this.photons(at.response, stretch, { ...NOTHING, intergalactic: true });
-        if (left < DARK_TRANSMISSION * plain) {
-          return {
-            code: 'noFluxInQuotedBand',
-            message: `The magnitude is quoted in ${place}, where no light of redshift ${this.redshift} arrives: ${this.breakText()}.`,
-          };
-        }
-      }
-      return undefined;
-    }
-    const restNm = at.wavelengthNm / stretch;
-    if (curveValueAt(this.shape, restNm) > 0) return undefined;
+    const isEmitted = (this.quotedSpectrumMag(NOTHING) ?? 0) < Infinity;
     return {
       code: 'noFluxInQuotedBand',
-      message: `The spectrum chosen has no light at ${place}, where the magnitude is quoted.`,
+      message:
+        frame === 'observed' && isEmitted
+          ? `The magnitude is quoted in ${place}, where no light of redshift ${this.redshift} arrives: ${this.breakText()}.`
+          : `The spectrum chosen has no light in ${place}, where the magnitude is quoted.`,
     };
   }
 
-  private whyDark(response: Response): NoLight | undefined {
-    const coverage = this.coverage(response);
-    if (coverage < NEEDED_COVERAGE) {
+  private isQuotedDark(at: Exclude<QuotedAt, { kind: 'range' }>): boolean {
+    const stretch = this.light.frame === 'observed' ? this.stretch : 1;
+    const included = this.included();
+    if (at.kind === 'response') return this.isDark(at.response, stretch, included);
+    const restNm = at.wavelengthNm / stretch;
+    const transmission = included.intergalactic ? this.seen.factorAt(restNm, ONLY_HYDROGEN) : 1;
+    return !(curveValueAt(this.seen.shape, restNm) > 0 && transmission >= DARK_TRANSMISSION);
+  }
+
+  /** Magnitude of the spectrum as it arrives, on its own scale, or why nothing does. */
+  private arrivingMag(response: Response): number | NoLight {
+    if (this.coverage(response) < NEEDED_COVERAGE) {
       const { validLowNm, validHighNm } = this.light.spectrum;
       return {
         code: 'spectrumEnds',
         message: `The spectrum reaches from ${inMicrons(validLowNm * this.stretch)} to ${inMicrons(validHighNm * this.stretch)} at this redshift and says nothing about this range.`,
       };
     }
-    const plain = this.photons(response, this.stretch, NOTHING);
-    if (!(plain > 0)) return this.noFlux();
-    if (this.light.medium === null || this.redshift === 0) return undefined;
-    if (response.lowNm >= LYMAN_ALPHA_NM * this.stretch) return undefined;
-    const left = this.photons(response, this.stretch, { ...NOTHING, intergalactic: true });
-    return left < DARK_TRANSMISSION * plain ? this.noFlux() : undefined;
+    return this.isDark(response, this.stretch, EVERYTHING) ? this.noFlux() : this.spectrumMag(response, EVERYTHING);
+  }
+
+  /**
+   * Whether less than {@link DARK_TRANSMISSION} of what the source would shine in the range, were there no hydrogen in it or on the
+   * way, is left. Where its spectrum begins inside the range, at the Lyman limit, a flat f_ν stands for what is missing.
+   */
+  private isDark(response: Response, stretch: number, met: Met): boolean {
+    const emitted = this.seen.photons(response, stretch, { ...met, intergalactic: false });
+    if (!(emitted > 0)) return true;
+    const litFromNm = this.seen.shape.litFromNm * stretch;
+    const lit = litFromNm > response.lowNm ? responseShare(response, litFromNm, response.highNm) : 1;
+    return this.seen.photons(response, stretch, met) * lit < DARK_TRANSMISSION * emitted;
   }
 
   private noFlux(): NoLight {
@@ -379,91 +352,15 @@ export class ArrivingContinuum {
     if (low <= response.lowNm && high >= response.highNm) return 1;
     return responseShare(response, low, high);
   }
-
-  private photons(response: Response, stretch: number, met: Met): number {
-    const { nodesNm } = this;
-    const first = Math.max(firstAbove(nodesNm, response.lowNm / stretch) - 1, 0);
-    const end = Math.min(firstAbove(nodesNm, response.highNm / stretch) + 1, nodesNm.length);
-    if (end - first < 2) return 0;
-    const seen = this.seen(first, end, stretch, met);
-    return frequencyIntegral(response, nodesNm, seen, stretch, first) + this.linePhotons(response, stretch, met);
-  }
-
-  /** Values from one point to before another, with what they met. */
-  private seen(first: number, end: number, stretch: number, met: Met): Float64Array {
-    const seen = this.values.slice(first, end);
-    const { light } = this;
-    if (met.hostDust && light.hostDust !== null) {
-      const { shape, visualMag } = this.hostDust();
-      for (let i = first; i < end; i++) seen[i - first]! *= 10 ** (-0.4 * visualMag * shape[i]!);
-    }
-    if (met.intergalactic && light.medium !== null && this.redshift > 0) {
-      const forest = this.forestOf();
-      const last = Math.min(end, forest.length);
-      for (let i = first; i < last; i++) seen[i - first]! *= forest[i]!;
-    }
-    if (met.galacticDust && light.galacticDust !== null) {
-      const attenuationMag = this.galacticDust();
-      for (let i = first; i < end; i++) {
-        seen[i - first]! *= 10 ** (-0.4 * attenuationMag(this.nodesNm[i]! * stretch));
-      }
-    }
-    return seen;
-  }
-
-  private linePhotons(response: Response, stretch: number, met: Met): number {
-    let sum = 0;
-    for (const line of this.light.spectrum.lines) {
-      const observedNm = line.restWavelengthNm * stretch;
-      if (observedNm < response.lowNm || observedNm > response.highNm) continue;
-      // λ² f_λ at rest wavelengths keeps λ F of a line at its rest wavelength.
-      const flux = (line.flux / stretch) * this.factorAtRest(line.restWavelengthNm, met);
-      sum += linePhotonIntegral(response, observedNm, flux);
-    }
-    return sum;
-  }
-
-  private factorAt(index: number, met: Met): number {
-    const { light } = this;
-    let mag = 0;
-    let factor = 1;
-    if (met.hostDust && light.hostDust !== null) mag += this.hostDust().visualMag * this.hostDust().shape[index]!;
-    if (met.intergalactic && light.medium !== null && this.redshift > 0) factor = this.forestOf()[index] ?? 1;
-    if (met.galacticDust && light.galacticDust !== null)
-      mag += this.galacticDust()(this.nodesNm[index]! * this.stretch);
-    return factor * 10 ** (-0.4 * mag);
-  }
-
-  private factorAtRest(restNm: number, met: Met): number {
-    const { light, nodesNm } = this;
-    let mag = 0;
-    let depth = 0;
-    if (met.hostDust && light.hostDust !== null) {
-      const { shape, visualMag } = this.hostDust();
-      mag += visualMag * curveValueAt({ wavelengthsNm: nodesNm, values: shape }, restNm);
-    }
-    if (met.intergalactic && light.medium !== null && restNm < LYMAN_ALPHA_NM * (1 - LINE_MARGIN)) {
-      depth = light.medium.opticalDepth(restNm * this.stretch, this.redshift);
-    }
-    if (met.galacticDust && light.galacticDust !== null) mag += this.galacticDust()(restNm * this.stretch);
-    return Math.exp(-depth) * 10 ** (-0.4 * mag);
-  }
-
-  private forestOf(): Float64Array {
-    return (this.forest ??= forestTransmission(this.light.medium!, this.nodesNm, this.redshift));
-  }
-
-  private hostDust() {
-    return (this.host ??= hostDustOn(this.light.hostDust!, this.nodesNm));
-  }
-
-  private galacticDust() {
-    return (this.galactic ??= galacticDustOf(this.light.galacticDust!));
-  }
 }
 
-/** Lyα itself is at the edge of the forest, not in it; line lists give it in one decimal less or more. */
-const LINE_MARGIN = 1e-4;
+const ONLY_HYDROGEN: Met = { ...NOTHING, intergalactic: true };
+
+/** A luminosity at redshift 0. */
+export const NO_DISTANCE: NoLight = {
+  code: 'noDistance',
+  message: 'At redshift 0 there is no distance, which a luminosity needs.',
+};
 
 const QUOTED_STEPS = {
   apparentMagnitude: 'apparent-magnitude',

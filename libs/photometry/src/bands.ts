@@ -3,8 +3,6 @@ import type { Provenance } from './provenance.js';
 import { sampledCurve, type SampledCurve } from './sampled-curve.js';
 import { responseOf } from './synthetic.js';
 
-export type { Provenance } from './provenance.js';
-
 /** Every band there is; the table of a file has each of them once. Case matters: `r` and `R` are different bands. */
 export const BAND_IDS = ['U', 'B', 'V', 'R', 'I', 'u', 'g', 'r', 'i', 'z', 'Y', 'J', 'H', 'Ks'] as const;
 export type BandId = (typeof BAND_IDS)[number];

@@ -158,7 +158,8 @@ function shapeOf(law: DustLaw, totalToSelective: number): (wavelengthNm: number)
   };
 }
 
-function requireColourExcess(colourExcessMag: number): void {
+/** @throws {OutOfDomainError} if the colour excess is negative or not finite */
+export function requireColourExcess(colourExcessMag: number): void {
   if (!(colourExcessMag >= 0 && colourExcessMag < Infinity)) {
     throw new OutOfDomainError('colourExcessMag', colourExcessMag, 'a finite number, 0 or more');
   }

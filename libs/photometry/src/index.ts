@@ -127,17 +127,17 @@ export {
   abMagnitudeAt,
   abMagnitudeOfPhotons,
   fluxPerNmOfAbMagnitude,
-  frequencyIntegral,
   halfPowerEdgesNm,
   janskyOfFrequency,
   linePhotonIntegral,
   photonIntegral,
   photonsOfAbMagnitude,
+  pointWeights,
   responseOf,
   responseShare,
   syntheticAbMagnitude,
 } from './synthetic.js';
-export type { Response } from './synthetic.js';
+export type { PointWeights, Response } from './synthetic.js';
 export { Ledger, ledgerInput } from './ledger.js';
 export type { LedgerInput, LedgerStage, LedgerStep, StepText } from './ledger.js';
 export type * from './source-light.js';

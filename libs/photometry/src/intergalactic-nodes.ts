@@ -6,10 +6,11 @@ export interface NodeTransmission {
   /**
    * Writes e^−τ at each rest node for a source at a redshift.
    *
-   * @param out  as long as the nodes
+   * @param out   as long as the nodes from `first` on
+   * @param first  index of the first node that is wanted
    * @throws {OutOfDomainError} if `out` has another length, or the redshift is negative
    */
-  transmission(redshift: number, out: Float64Array): void;
+  transmission(redshift: number, out: Float64Array, first?: number): void;
 }
 
 /**
@@ -30,14 +31,16 @@ export function transmissionOnNodes(
   const branches = lineSeries.flatMap((series) => preparedBranches(series, linesNm, restNm, absorbedCount));
   const addContinuum = continuumAdder(table, restNm, limitedCount);
   return {
-    transmission: (redshift, out) => {
+    transmission: (redshift, out, first = 0) => {
       requireRedshift(redshift);
-      if (out.length !== restNm.length) throw new OutOfDomainError('out.length', out.length, String(restNm.length));
-      const depths = out.fill(0, 0, absorbedCount);
-      for (const branch of branches) addLines(branch, restNm, lineCounts, absorbedCount, 1 + redshift, depths);
-      addContinuum(redshift, depths);
-      for (let i = 0; i < absorbedCount; i++) out[i] = depths[i]! > 0 ? Math.exp(-depths[i]!) : 1;
-      out.fill(1, absorbedCount);
+      const count = restNm.length - first;
+      if (out.length !== count) throw new OutOfDomainError('out.length', out.length, String(count));
+      const absorbed = Math.max(0, absorbedCount - first);
+      const depths = out.fill(0, 0, absorbed);
+      for (const branch of branches) addLines(branch, restNm, lineCounts, first, absorbedCount, 1 + redshift, depths);
+      addContinuum(redshift, first, depths);
+      for (let i = 0; i < absorbed; i++) out[i] = depths[i]! > 0 ? Math.exp(-depths[i]!) : 1;
+      out.fill(1, absorbed);
     },
   };
 }
@@ -112,6 +115,7 @@ function addLines(
   { power, fromNm, toNm, isFirst, sums, nodePowers }: PreparedBranch,
   restNm: Float64Array,
   lineCounts: Uint16Array,
+  first: number,
   absorbedCount: number,
   stretch: number,
   depths: Float64Array,
@@ -120,14 +124,14 @@ function addLines(
   // Lines from `entered` up to `leaving` are in the branch. Towards longer wavelengths both only fall.
   let entered = fromNm.length;
   let leaving = toNm.length;
-  const start = Math.max(0, firstAbove(restNm, fromNm[fromNm.length - 1]! / stretch) - 1);
+  const start = Math.max(first, firstAbove(restNm, fromNm[fromNm.length - 1]! / stretch) - 1);
   for (let i = start; i < absorbedCount; i++) {
     const observedNm = restNm[i]! * stretch;
     while (entered > 0 && (isFirst ? observedNm > fromNm[entered - 1]! : observedNm >= fromNm[entered - 1]!)) entered--;
     while (leaving > 0 && observedNm >= toNm[leaving - 1]!) leaving--;
     if (leaving === 0) return;
     const end = Math.min(leaving, lineCounts[i]!);
-    if (end > entered) depths[i]! += stretchPower * nodePowers[i]! * (sums[end]! - sums[entered]!);
+    if (end > entered) depths[i - first]! += stretchPower * nodePowers[i]! * (sums[end]! - sums[entered]!);
   }
 }
 
@@ -136,16 +140,16 @@ function continuumAdder(
   { lymanLimitNm, continuum }: IntergalacticTable,
   restNm: Float64Array,
   limitedCount: number,
-): (redshift: number, depths: Float64Array) => void {
+): (redshift: number, first: number, depths: Float64Array) => void {
   const powers = new Map<number, Float64Array>();
   for (const { ratioPower } of allTerms(continuum)) {
     if (powers.has(ratioPower)) continue;
     const ofNodes = restNm.slice(0, limitedCount).map((rest) => (rest / lymanLimitNm) ** ratioPower);
     powers.set(ratioPower, ofNodes);
   }
-  return (redshift, depths) => {
+  return (redshift, first, depths) => {
     const stretch = 1 + redshift;
-    const firstInside = firstFrom(restNm, limitedCount, 0, (rest) => rest * stretch > lymanLimitNm);
+    const firstInside = firstFrom(restNm, limitedCount, first, (rest) => rest * stretch > lymanLimitNm);
     for (const series of continuum) {
       let start = firstInside;
       for (const { ratioBelow, terms } of branchesAt(series, redshift)) {
@@ -154,7 +158,7 @@ function continuumAdder(
         for (const { coefficient, redshiftPower, ratioPower } of terms) {
           const weight = coefficient * stretch ** (redshiftPower + ratioPower);
           const ofNodes = powers.get(ratioPower)!;
-          for (let i = start; i < end; i++) depths[i]! += weight * ofNodes[i]!;
+          for (let i = start; i < end; i++) depths[i - first]! += weight * ofNodes[i]!;
         }
         start = end;
       }

@@ -24,9 +24,8 @@ const SAME_NODE = 1e-9;
 export function restGrid(jumpsNm: readonly number[], extraNodesNm: ArrayLike<number> = []): Float64Array {
   const jumps = sortedInside('jumpsNm', jumpsNm);
   const extras = sortedInside('extraNodesNm', extraNodesNm);
-  if (extras.length > 0) return makeGrid(jumps, extras);
   // What is worked out on the points of a spectrum is kept with them, so spectra with the same points share one array.
-  const key = jumps.join(' ');
+  const key = `${jumps.join(' ')} and ${extras.join(' ')}`;
   const known = keptGrids.get(key);
   if (known !== undefined) return known;
   const made = makeGrid(jumps, extras);

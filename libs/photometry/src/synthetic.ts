@@ -84,93 +84,100 @@ function simpson(x0: number, x1: number, s0: number, s1: number, f0: number, f1:
 
 /** Half the distance of the two Gauss–Legendre points on [−1, 1] from the middle, as a part of the whole width. */
 const GAUSS_OFFSET = 0.5 / Math.sqrt(3);
+const GAUSS_LOW = 0.5 - GAUSS_OFFSET;
+const GAUSS_HIGH = 0.5 + GAUSS_OFFSET;
+
+const NO_SCRATCH = new Float64Array(0);
+
+/** What each point of a spectrum counts for in an integral over a response. */
+export interface PointWeights {
+  /** Index of the point that the first weight belongs to. */
+  readonly first: number;
+  readonly weights: Float64Array;
+}
 
 /**
- * ∫ g S d ln λ of a spectrum g = λ² f_λ ∝ f_ν, both straight in λ between their points: the pieces of both are merged. A flat
- * f_ν comes out exactly; Gauss's rule with two points leaves an error of 5e-15 where points are 1e-3 apart in ln λ.
+ * Weights w of the points for which Σ w_i g_i = ∫ g S d ln λ, for any spectrum g = λ² f_λ ∝ f_ν on these points that is straight in
+ * λ between them, as the response is between its own: the pieces of both are merged. The same weights serve for the spectrum with
+ * and without each thing on its way. Zero outside the points.
  *
- * The spectrum is handed over as arrays so that thousands of them need no copies: point `first + i` stands at
- * `nodesNm[first + i] · stretch` and has the value `values[i]`. Zero outside the points given.
+ * A flat f_ν comes out exactly; Gauss's rule with two points leaves an error of 5e-15 where points are 1e-3 apart in ln λ.
  *
- * @param stretch  1 + z for a spectrum on rest wavelengths
+ * @param nodesNm  ascending, at most two equal neighbours
+ * @param stretch  1 + z for a spectrum on rest wavelengths: point i is seen at nodesNm[i] · stretch
+ * @param scratch  written to and handed back as the weights if it is long enough; for callers that ask thousands of times
  */
-export function frequencyIntegral(
+export function pointWeights(
   { curve }: Response,
   nodesNm: Float64Array,
-  values: ArrayLike<number>,
   stretch = 1,
-  first = 0,
-): number {
-  return pieceByPiece(curve, nodesNm, values, stretch, first, gaussOverLog);
-}
-
-function gaussOverLog(x0: number, x1: number, s0: number, s1: number, g0: number, g1: number): number {
-  const width = x1 - x0;
-  const low = 0.5 - GAUSS_OFFSET;
-  const high = 0.5 + GAUSS_OFFSET;
-  const atLow = ((s0 * high + s1 * low) * (g0 * high + g1 * low)) / (x0 + width * low);
-  const atHigh = ((s0 * low + s1 * high) * (g0 * low + g1 * high)) / (x0 + width * high);
-  return 0.5 * width * (atLow + atHigh);
-}
-
-/** Photon integral ∫ λ f_λ S dλ, exact for curves that are straight between their points. */
-export function photonIntegral(response: Response, spectrum: SampledCurve): number {
-  return pieceByPiece(response.curve, spectrum.wavelengthsNm, spectrum.values, 1, 0, simpson);
-}
-
-type Piece = (x0: number, x1: number, s0: number, s1: number, f0: number, f1: number) => number;
-
-/** Sum over the pieces on which both the response and the spectrum are straight. */
-function pieceByPiece(
-  curve: SampledCurve,
-  nodesNm: Float64Array,
-  values: ArrayLike<number>,
-  stretch: number,
-  first: number,
-  piece: Piece,
-): number {
+  scratch: Float64Array = NO_SCRATCH,
+): PointWeights {
   const { wavelengthsNm: x, values: s } = curve;
-  const count = Math.min(values.length, nodesNm.length - first);
-  if (count < 2) return 0;
-  const low = Math.max(x[0]!, nodesNm[first]! * stretch);
-  const high = Math.min(x[x.length - 1]!, nodesNm[first + count - 1]! * stretch);
-  if (!(low < high)) return 0;
+  const low = Math.max(x[0]!, nodesNm[0]! * stretch);
+  const high = Math.min(x[x.length - 1]!, nodesNm[nodesNm.length - 1]! * stretch);
+  if (!(low < high)) return { first: 0, weights: NO_SCRATCH };
 
   // i and j: the piece of the spectrum and of the response that begin at or before `left` and end beyond it.
-  let i = pieceAt(nodesNm, low / stretch, first, first + count - 1) - first;
-  let j = pieceAt(x, low, 0, x.length - 1);
+  let i = pieceAt(nodesNm, low / stretch);
+  let j = pieceAt(x, low);
+  const first = i;
+  const end = Math.min(firstAbove(nodesNm, high / stretch) + 1, nodesNm.length);
+  const weights =
+    scratch.length < end - first ? new Float64Array(end - first) : scratch.subarray(0, end - first).fill(0);
+  let nodeLeft = nodesNm[i]! * stretch;
+  let nodeRight = nodesNm[i + 1]! * stretch;
   let left = low;
-  let nodeLeft = nodesNm[first + i]! * stretch;
-  let nodeRight = nodesNm[first + i + 1]! * stretch;
-  let fLeft = between(left, nodeLeft, nodeRight, values[i]!, values[i + 1]!);
-  let sLeft = between(left, x[j]!, x[j + 1]!, s[j]!, s[j + 1]!);
-  let sum = 0;
   for (;;) {
     const right = Math.min(nodeRight, x[j + 1]!, high);
-    const fRight = between(right, nodeLeft, nodeRight, values[i]!, values[i + 1]!);
-    const sRight = between(right, x[j]!, x[j + 1]!, s[j]!, s[j + 1]!);
-    sum += piece(left, right, sLeft, sRight, fLeft, fRight);
-    if (right >= high) return sum;
+    const slope = (s[j + 1]! - s[j]!) / (x[j + 1]! - x[j]!);
+    const half = 0.5 * (right - left);
+    const xLow = left + (right - left) * GAUSS_LOW;
+    const xHigh = left + (right - left) * GAUSS_HIGH;
+    const atLow = (half * (s[j]! + slope * (xLow - x[j]!))) / xLow;
+    const atHigh = (half * (s[j]! + slope * (xHigh - x[j]!))) / xHigh;
+    const toRight = (atLow * (xLow - nodeLeft) + atHigh * (xHigh - nodeLeft)) / (nodeRight - nodeLeft);
+    weights[i - first]! += atLow + atHigh - toRight;
+    weights[i + 1 - first]! += toRight;
+    if (right >= high) return { first, weights };
     left = right;
-    fLeft = fRight;
-    sLeft = sRight;
     // Two points at one wavelength are a jump: the empty piece between them is passed over.
     while (nodeRight <= left) {
       i++;
       nodeLeft = nodeRight;
-      nodeRight = nodesNm[first + i + 1]! * stretch;
-      fLeft = values[i]!;
+      nodeRight = nodesNm[i + 1]! * stretch;
     }
-    while (x[j + 1]! <= left) {
-      j++;
-      sLeft = s[j]!;
-    }
+    while (x[j + 1]! <= left) j++;
+  }
+}
+
+/** Photon integral ∫ λ f_λ S dλ, exact for curves that are straight between their points. */
+export function photonIntegral({ curve }: Response, spectrum: SampledCurve): number {
+  const { wavelengthsNm: x, values: s } = curve;
+  const { wavelengthsNm: nodesNm, values } = spectrum;
+  const low = Math.max(x[0]!, nodesNm[0]!);
+  const high = Math.min(x[x.length - 1]!, nodesNm[nodesNm.length - 1]!);
+  if (!(low < high)) return 0;
+  let i = pieceAt(nodesNm, low);
+  let j = pieceAt(x, low);
+  let sum = 0;
+  for (let left = low; ;) {
+    const right = Math.min(nodesNm[i + 1]!, x[j + 1]!, high);
+    const f = (nm: number) => between(nm, nodesNm[i]!, nodesNm[i + 1]!, values[i]!, values[i + 1]!);
+    const response = (nm: number) => between(nm, x[j]!, x[j + 1]!, s[j]!, s[j + 1]!);
+    sum += simpson(left, right, response(left), response(right), f(left), f(right));
+    if (right >= high) return sum;
+    left = right;
+    // Two points at one wavelength are a jump: the empty piece between them is passed over.
+    while (nodesNm[i + 1]! <= left) i++;
+    while (x[j + 1]! <= left) j++;
   }
 }
 
 /** Index of the last non-empty piece that begins at or before x. */
-function pieceAt(ascending: Float64Array, x: number, first: number, last: number): number {
-  let index = Math.min(Math.max(firstAbove(ascending, x) - 1, first), last - 1);
+function pieceAt(ascending: Float64Array, x: number): number {
+  const last = ascending.length - 1;
+  let index = Math.min(Math.max(firstAbove(ascending, x) - 1, 0), last - 1);
   while (index < last - 1 && ascending[index + 1]! <= ascending[index]!) index++;
   return index;
 }

@@ -1,1 +1,0 @@
-export { BAND_IDS } from './bands.js';
