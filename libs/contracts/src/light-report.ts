@@ -366,6 +366,8 @@ export const ProposalCosmologies = z
     observationCount: z.int(),
     /** Targets given by an apparent brightness: cosmology does not change their time, except through a size in kpc. */
     apparentCount: z.int(),
+    /** Targets given by a luminosity; the others have no brightness yet. */
+    intrinsicCount: z.int(),
     rows: z.array(ProposalInCosmology),
   })
   .meta({ id: 'ProposalCosmologies' });

@@ -63,10 +63,7 @@ export class ArrivingContinuum {
   /** Adds the steps to a ledger, up to the top of the atmosphere; answers why there is no light, if so. */
   addSteps(ledger: Ledger, response: Response): NoLight | undefined {
     const { light, redshift } = this;
-    const add = (id: LightStepId, deltaMag: number, inputs: LedgerInput[], source?: string): void => {
-      const text = LIGHT_STEPS[id];
-      ledger.add(id, source === undefined ? text : { ...text, source }, deltaMag, inputs);
-    };
+    const add = adderTo(ledger);
     add(QUOTED_STEPS[light.quoted.kind], light.quoted.magnitude, [...light.quoted.inputs], light.quoted.source);
     if (light.quoted.toAbMag !== 0)
       add('vega-to-ab', light.quoted.toAbMag, [ledgerInput('vegaToAbMag', light.quoted.toAbMag, 'mag')]);
@@ -88,17 +85,70 @@ export class ArrivingContinuum {
     }
     for (const mag of [this.arrivingMag(response), this.quotedMag()]) if (typeof mag === 'object') return mag;
 
-    const included = this.included();
+    if (light.at.kind !== 'range') {
+      const quoted = this.quotedSpectrumMag(NOTHING) ?? NaN;
+      this.addSpectrum(add, response, quoted, quotedWavelengthNm(light));
+    }
+    const quotedMag = (met: Met): number => this.quotedSpectrumMag(met) ?? this.spectrumMag(response, met);
+    this.addWay(add, response, this.included(), quotedMag, this.lensingStepMag());
+    return undefined;
+  }
+
+  /**
+   * The same way from its beginning, where an observed brightness was given: from the luminosity that it implies, through all that
+   * lies between, to the same total. The luminosity is that at the rest wavelength seen in the middle of the range, before host
+   * dust and lensing.
+   *
+   * Only for a light with a distance that has a scale of its own; otherwise as {@link addSteps}.
+   */
+  addStepsFromSource(ledger: Ledger, response: Response): NoLight | undefined {
+    const { light, redshift } = this;
+    const normalisation = this.normalisationMag();
+    const restNm = response.pivotWavelengthNm / this.stretch;
+    const emitted = this.seen.valueAt(restNm, NOTHING);
+    const isPossible = light.frame === 'observed' && redshift > 0 && !this.isSurface && emitted > 0;
+    if (!isPossible || typeof normalisation !== 'number') return this.addSteps(ledger, response);
+    const dark = this.arrivingMag(response);
+    if (typeof dark === 'object') return this.addSteps(ledger, response);
+    const add = adderTo(ledger);
+    const quoted = abMagnitudeOfFrequency(emitted);
+    const modulus = this.modulus(this.distances);
+    const bandwidth = -2.5 * Math.log10(this.stretch);
+    const lensing = light.magnification === 1 ? 0 : lensingMag(light.magnification);
+    add('implied-magnitude', normalisation + quoted - lensing - modulus - bandwidth, [
+      ...light.quoted.inputs,
+      ledgerInput('restWavelengthNm', restNm, 'nm'),
+    ]);
+    add('distance-modulus', modulus, [
+      ledgerInput('redshift', redshift),
+      ledgerInput('luminosityDistanceMpc', this.distances.luminosityDistanceMpc(redshift), 'Mpc'),
+    ]);
+    add('redshift-bandwidth', bandwidth, [ledgerInput('redshift', redshift)]);
+    this.addSpectrum(add, response, quoted, restNm * this.stretch);
+    this.addWay(add, response, NOTHING, () => NaN, lensing);
+    return undefined;
+  }
+
+  private addSpectrum(add: Adder, response: Response, quotedMag: number, quotedAtNm: number): void {
+    add('spectrum', this.spectrumMag(response, NOTHING) - quotedMag, [
+      ledgerInput('quotedAtNm', quotedAtNm, 'nm'),
+      ledgerInput('pivotWavelengthNm', response.pivotWavelengthNm, 'nm'),
+    ]);
+  }
+
+  /** Dust, hydrogen and lenses, in the order the light meets them. What the value given contains only adds its colour. */
+  private addWay(
+    add: Adder,
+    response: Response,
+    included: Met,
+    quotedMag: (met: Met) => number,
+    lensing: number,
+  ): void {
+    const { light, redshift } = this;
     let met = NOTHING;
     let quotedMet = NOTHING;
     let here = this.spectrumMag(response, met);
-    let quoted = this.quotedSpectrumMag(quotedMet) ?? here;
-    if (light.at.kind !== 'range') {
-      add('spectrum', here - quoted, [
-        ledgerInput('quotedAtNm', quotedWavelengthNm(light), 'nm'),
-        ledgerInput('pivotWavelengthNm', response.pivotWavelengthNm, 'nm'),
-      ]);
-    }
+    let quoted = quotedMag(quotedMet);
     const pass = (id: LightStepId, part: keyof Met, isIncluded: boolean, inputs: LedgerInput[], source: string) => {
       met = { ...met, [part]: true };
       const next = this.spectrumMag(response, met);
@@ -106,7 +156,7 @@ export class ArrivingContinuum {
       here = next;
       if (isIncluded) {
         quotedMet = { ...quotedMet, [part]: true };
-        const nextQuoted = this.quotedSpectrumMag(quotedMet) ?? this.spectrumMag(response, quotedMet);
+        const nextQuoted = quotedMag(quotedMet);
         deltaMag -= nextQuoted - quoted;
         quoted = nextQuoted;
       }
@@ -130,7 +180,6 @@ export class ArrivingContinuum {
         light.medium.source,
       );
     }
-    const lensing = this.lensingStepMag();
     if (lensing !== 0) add('lensing', lensing, [ledgerInput('magnification', light.magnification)]);
     if (light.galacticDust !== null) {
       pass(
@@ -141,7 +190,6 @@ export class ArrivingContinuum {
         DUST_LAWS[light.galacticDust.law].source,
       );
     }
-    return undefined;
   }
 
   /** Part of the photons of a range that the intergalactic medium lets through; undefined where the source emits none. */
@@ -377,4 +425,13 @@ function quotedWavelengthNm({ at }: ContinuumLight): number {
 /** A wavelength for a sentence: `1.13 µm`. */
 export function inMicrons(wavelengthNm: number): string {
   return `${Number((wavelengthNm / 1000).toPrecision(3))} µm`;
+}
+
+type Adder = (id: LightStepId, deltaMag: number, inputs: LedgerInput[], source?: string) => void;
+
+function adderTo(ledger: Ledger): Adder {
+  return (id, deltaMag, inputs, source) => {
+    const text = LIGHT_STEPS[id];
+    ledger.add(id, source === undefined ? text : { ...text, source }, deltaMag, inputs);
+  };
 }

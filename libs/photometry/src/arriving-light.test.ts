@@ -209,6 +209,47 @@ describe('a light above the atmosphere', () => {
     expect(compared).toBeGreaterThan(100);
   });
 
+  it('tells the way of an observed light from the luminosity it implies, to the same total', () => {
+    const lights = fc.record({
+      redshift: fc.double({ min: 0.05, max: 5, noNaN: true }),
+      hostMag: fc.constantFrom(0, 0.3),
+      galacticMag: fc.constantFrom(0, 0.2),
+      magnification: fc.constantFrom(1, 8),
+      includes: fc.record({ hostDust: fc.boolean(), galacticDust: fc.boolean(), lensing: fc.boolean() }),
+      isLine: fc.boolean(),
+    });
+    fc.assert(
+      fc.property(lights, ({ redshift, hostMag, galacticMag, magnification, includes, isLine }) => {
+        const way = {
+          hostDust: hostMag === 0 ? null : ({ law: 'calzetti2000', colourExcessMag: hostMag } as const),
+          galacticDust:
+            galacticMag === 0 ? null : ({ law: 'ccm1989', colourExcessMag: galacticMag, scale: 'true' } as const),
+          magnification,
+          includes,
+        };
+        const restWavelengthNm = 1250 / (1 + redshift);
+        const light = isLine
+          ? line({
+              ...way,
+              frame: 'observed',
+              quoted: { kind: 'lineFlux', amount: 1e-17, inputs: [] },
+              restWavelengthNm,
+            })
+          : apparent({ ...way, at: { kind: 'response', response: responseOf(boxCurve(970, 1070)), label: 'Y' } });
+        const arriving = arrivingLight(light, redshift, PLANCK18);
+        const [given, whole] = [new Ledger(), new Ledger()];
+        expect(arriving.addSteps(given, J_BAND)).toBeUndefined();
+        expect(arriving.addStepsFromSource(whole, J_BAND)).toBeUndefined();
+        expect(whole.totalMag).toBeCloseTo(given.totalMag, 9);
+        expect(whole.steps[1]).toMatchObject({ id: 'distance-modulus' });
+        // All of the lens, whether or not the value given contained it.
+        const lensing = whole.steps.find(({ id }) => id === 'lensing')?.deltaMag ?? 0;
+        expect(lensing).toBeCloseTo(-2.5 * Math.log10(magnification), 12);
+      }),
+      { numRuns: 60 },
+    );
+  });
+
   it('converts a luminosity from the cosmology it was derived with: the apparent light stays', () => {
     const there = arrivingLight(absolute(), 7, CONV70).magnitudeIn(J_BAND);
     const here = magnitude(absolute({ derivedWith: CONV70 }), 7, J_BAND);

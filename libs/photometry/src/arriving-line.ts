@@ -68,6 +68,35 @@ export class ArrivingLine {
     return this.whyAbsorbed();
   }
 
+  /**
+   * The same way from its beginning, where a flux was given: from the luminosity that it implies, before host dust and lensing,
+   * through all that lies between, to the same total. Otherwise as {@link addSteps}.
+   */
+  addStepsFromSource(ledger: Ledger, response: Response): NoLight | undefined {
+    const flux = this.fluxErgSCm2();
+    if (this.light.frame === 'rest' || this.redshift === 0 || this.isSurface || flux === undefined) {
+      return this.addSteps(ledger, response);
+    }
+    const emitting = (amount: number): ArrivingLine =>
+      new ArrivingLine(
+        {
+          ...this.light,
+          frame: 'rest',
+          includes: { hostDust: false, galacticDust: false, lensing: false },
+          quoted: {
+            kind: 'implied',
+            amount,
+            inputs: [...this.light.quoted.inputs, ledgerInput('lineLuminosityErgS', amount, 'erg/s')],
+          },
+        },
+        this.redshift,
+        this.distances,
+      );
+    const ofUnit = emitting(TEN_PARSEC_SPHERE_CM2).fluxErgSCm2();
+    if (ofUnit === undefined) return this.addSteps(ledger, response);
+    return emitting((TEN_PARSEC_SPHERE_CM2 * flux) / ofUnit).addSteps(ledger, response);
+  }
+
   /** AB magnitude at the line of what is seen under it, as it arrives; undefined without a continuum. */
   continuumMagnitudeAb(): number | undefined {
     const { continuum } = this.light;
@@ -227,4 +256,5 @@ const QUOTED_STEPS = {
   lineFlux: 'line-flux',
   lineLuminosity: 'line-luminosity',
   starFormationRate: 'line-star-formation-rate',
+  implied: 'implied-line-luminosity',
 } as const satisfies Record<LineLight['quoted']['kind'], LightStepId>;

@@ -6,6 +6,8 @@ export type LightStepId =
   | 'apparent-magnitude'
   | 'absolute-magnitude'
   | 'typical-magnitude'
+  | 'implied-magnitude'
+  | 'implied-line-luminosity'
   | 'star-formation-rate'
   | 'vega-to-ab'
   | 'line-flux'
@@ -40,6 +42,18 @@ export const LIGHT_STEPS: Readonly<Record<LightStepId, StepText>> = {
     title: 'Absolute magnitude typical of its kind: a suggestion, not a measurement',
     formula: 'M, at 10 pc',
     source: 'the literature',
+  },
+  'implied-magnitude': {
+    stage: 'source',
+    title: 'Absolute magnitude that the brightness given implies',
+    formula: 'M, at 10 pc and the rest wavelength seen in the middle of the range, before all that follows',
+    source: 'from the investigator’s magnitude, by the steps that follow',
+  },
+  'implied-line-luminosity': {
+    stage: 'source',
+    title: 'Line luminosity that the flux given implies, as the AB magnitude with as many photons at 10 pc',
+    formula: '−2.5 log10[λ L / (4π (10 pc)²) S(λ) / (c ∫ S d ln λ)] − 48.60',
+    source: 'from the investigator’s flux, by the steps that follow',
   },
   'star-formation-rate': {
     stage: 'source',

@@ -80,7 +80,8 @@ export interface ContinuumLight extends OnTheWay {
 }
 
 export interface QuotedLine {
-  readonly kind: 'lineFlux' | 'lineLuminosity' | 'starFormationRate';
+  /** `implied`: worked out backwards from a flux. */
+  readonly kind: 'lineFlux' | 'lineLuminosity' | 'starFormationRate' | 'implied';
   /** erg s⁻¹ cm⁻² in the observed frame, erg s⁻¹ in the rest frame. */
   readonly amount: number;
   readonly inputs: readonly LedgerInput[];

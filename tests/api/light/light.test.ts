@@ -192,7 +192,7 @@ describe('the light of a stored target', () => {
       .send({ targetIds: 'all', modeId: mode.id, goal: GOAL, conditions: CONDITIONS, repeatCount: 1 })
       .expect(200);
     const { body } = await other.pi.get(`${other.base}/cosmologies`).expect(200);
-    expect(body).toMatchObject({ targetCount: 2, observationCount: 2, apparentCount: 1 });
+    expect(body).toMatchObject({ targetCount: 2, observationCount: 2, apparentCount: 1, intrinsicCount: 1 });
     const row = (id: string) => body.rows.find((each: { cosmologyId: string }) => each.cosmologyId === id);
     expect(row('planck18')).toMatchObject({ isChosen: true, changedObservationCount: 0, medianScaleRatio: 1 });
     expect(row('conv70').changedObservationCount).toBe(1);

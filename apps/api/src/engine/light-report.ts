@@ -141,7 +141,8 @@ function ledgerOf(
   apertureRadiusArcsec: number | null,
 ): LightLedger {
   const ledger = new Ledger();
-  const reason = arriving.addSteps(ledger, response) ?? null;
+  // From the luminosity on, also where that is only implied: where every magnitude went.
+  const reason = arriving.addStepsFromSource(ledger, response) ?? null;
   const total = reason === null ? ledger.totalMag : null;
   const aperture =
     total === null || extent.kind === 'uniform' ? null : apertureOf(size, fwhmArcsec, apertureRadiusArcsec);

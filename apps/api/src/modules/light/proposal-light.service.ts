@@ -79,6 +79,7 @@ export class ProposalLightService {
       targetCount: targets.length,
       observationCount: reference.size,
       apparentCount: targets.filter(({ light }) => light !== null && !isIntrinsic(light)).length,
+      intrinsicCount: targets.filter(({ light }) => light !== null && isIntrinsic(light)).length,
       rows,
     };
   }

@@ -33,13 +33,14 @@ it('says what becomes infeasible or feasible', () => {
 
 it('says that an apparent brightness does not depend on the cosmology', () => {
   const base = { observationCount: 5, rows: [] };
-  expect(whatDependsText({ ...base, targetCount: 5, apparentCount: 5 })).toMatch(
+  expect(whatDependsText({ ...base, targetCount: 5, apparentCount: 5, intrinsicCount: 0 })).toMatch(
     /^All targets are given by their apparent/,
   );
-  const mixed = whatDependsText({ ...base, targetCount: 5, apparentCount: 4 });
+  const mixed = whatDependsText({ ...base, targetCount: 5, apparentCount: 4, intrinsicCount: 1 });
   expect(mixed).toMatch(/^4 targets are given by their apparent brightness\./);
   expect(mixed).toMatch(/1 target is given by what it emits/);
-  expect(whatDependsText({ ...base, targetCount: 2, apparentCount: 0 })).toMatch(
+  expect(whatDependsText({ ...base, targetCount: 2, apparentCount: 0, intrinsicCount: 2 })).toMatch(
     /^2 targets are given by what they emit/,
   );
+  expect(whatDependsText({ ...base, targetCount: 3, apparentCount: 2, intrinsicCount: 0 })).not.toMatch(/emit/);
 });

@@ -28,17 +28,18 @@ export function infeasibleText(row: Row, chosen: Row): string {
 }
 
 /** Which targets' time depends on the cosmology at all, and why. */
-export function whatDependsText({ targetCount, apparentCount }: ProposalCosmologies): string {
+export function whatDependsText({ targetCount, apparentCount, intrinsicCount }: ProposalCosmologies): string {
   const why =
     'Where the apparent brightness is given, the light that arrives is known and a cosmology changes no exposure time, except through a size that is given in kiloparsec.';
   if (targetCount === 0) return why;
   if (apparentCount === targetCount) return `All targets are given by their apparent brightness. ${why}`;
-  const rest = targetCount - apparentCount;
-  const intrinsic = `${counted(rest, 'target')} ${rest === 1 ? 'is' : 'are'} given by what ${
-    rest === 1 ? 'it emits' : 'they emit'
+  const intrinsic = `${counted(intrinsicCount, 'target')} ${intrinsicCount === 1 ? 'is' : 'are'} given by what ${
+    intrinsicCount === 1 ? 'it emits' : 'they emit'
   }: farther is fainter there, and asks for more time.`;
-  if (apparentCount === 0) return `${intrinsic} ${why}`;
-  return `${counted(apparentCount, 'target')} ${apparentCount === 1 ? 'is' : 'are'} given by ${
+  const apparent = `${counted(apparentCount, 'target')} ${apparentCount === 1 ? 'is' : 'are'} given by ${
     apparentCount === 1 ? 'its' : 'their'
-  } apparent brightness. ${why} ${intrinsic}`;
+  } apparent brightness. ${why}`;
+  // The others have no brightness yet.
+  if (intrinsicCount === 0) return apparentCount === 0 ? why : apparent;
+  return apparentCount === 0 ? `${intrinsic} ${why}` : `${apparent} ${intrinsic}`;
 }
