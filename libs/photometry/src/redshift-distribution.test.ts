@@ -128,11 +128,24 @@ describe('percentiles', () => {
     expect(quantile(0.84)).toBeCloseTo(p84, 11);
   });
 
-  it('far from the limits are two half-normals of their own widths', () => {
-    const { density } = redshiftDistribution(7, { kind: 'percentiles', p16: 6.8, p50: 7, p84: 7.5 });
-    // Half of the probability each, σ = distance / Φ⁻¹(0.84): density at the median 1 / (σ √(2π)).
-    expect(density(7 - 1e-12)).toBeCloseTo(0.994457883 / (0.2 * Math.sqrt(2 * Math.PI)), 6);
-    expect(density(7)).toBeCloseTo(0.994457883 / (0.5 * Math.sqrt(2 * Math.PI)), 6);
+  it('far from the limits are a smooth bell, even where the sides are', () => {
+    const even = redshiftDistribution(7, { kind: 'percentiles', p16: 6.8, p50: 7, p84: 7.2 });
+    // σ = distance / Φ⁻¹(0.84): density at the median 1 / (σ √(2π)).
+    expect(even.density(7)).toBeCloseTo(0.994457883 / (0.2 * Math.sqrt(2 * Math.PI)), 6);
+    const skewed = redshiftDistribution(7, { kind: 'percentiles', p16: 6.8, p50: 7, p84: 7.5 });
+    expect(skewed.density(7 + 1e-9) / skewed.density(7 - 1e-9)).toBeCloseTo(1, 6);
+    const [peak] = skewed.peaks;
+    expect(peak!.redshift).toBeLessThan(7);
+    for (const offset of [-0.02, 0.02]) {
+      expect(skewed.density(peak!.redshift + offset)).toBeLessThan(skewed.density(peak!.redshift));
+    }
+  });
+
+  it('near a limit are two half-normals of their own widths', () => {
+    const { density } = redshiftDistribution(1, { kind: 'percentiles', p16: 0.8, p50: 1, p84: 1.01 });
+    // Half of the probability each; the left one ends at 0, five of its σ away.
+    expect(density(1 - 1e-12)).toBeCloseTo(0.994457883 / (0.2 * Math.sqrt(2 * Math.PI)), 4);
+    expect(density(1)).toBeCloseTo(0.994457883 / (0.01 * Math.sqrt(2 * Math.PI)), 4);
   });
 
   it('are refused where they do not ascend between 0 and 30', () => {

@@ -51,10 +51,10 @@ interface Shape {
  *
  * - `null`: exact.
  * - `gaussian`: normal around the redshift, cut at 0 and 30 and scaled to 1.
- * - `percentiles`: two half-normals, one on each side of the median, each holding one half and of its own width, so that the 16th,
- *   50th and 84th percentile are exactly those given. The density jumps at the median. A half that would reach below 0 (or above 30)
- *   ends there and is widened to keep its percentile; where the percentile is too near the limit for that, two even pieces.
- *   The redshift itself is not used.
+ * - `percentiles`: a skewed bell, the exponential of a normal variable shifted and scaled, whose 16th, 50th and 84th percentile are
+ *   exactly those given. Where that would reach below 0 or above 30, two half-normals, one on each side of the median: a half
+ *   ends at the limit and is widened to keep its percentile; where that is too near the limit, two even pieces. Then the density
+ *   jumps at the median. The redshift itself is not used.
  * - `table`: straight between the points; the redshift itself is not used.
  *
  * @param redshift  0 to 30
@@ -132,6 +132,8 @@ function twoHalves(p16: number, p50: number, p84: number): Shape {
   if (!(p84 > p50 && p84 < HIGHEST_REDSHIFT)) {
     throw new OutOfDomainError('p84', p84, `above p50 = ${p50} and below ${HIGHEST_REDSHIFT}`);
   }
+  const bell = skewedBell(p16, p50, p84);
+  if (bell.cutProbability < NEGLIGIBLE_CUT) return bell;
   const left = halfOf(p50 - p16, p50);
   const right = halfOf(p84 - p50, HIGHEST_REDSHIFT - p50);
   return {
@@ -152,6 +154,45 @@ function twoHalves(p16: number, p50: number, p84: number): Shape {
         above: outer / 2,
       })),
     ],
+  };
+}
+
+/** A tail beyond the limits that is as small as this is drawn as the limit itself, so that no percentile moves. */
+const NEGLIGIBLE_CUT = 1e-4;
+/** Φ^−1(0.84). */
+const SIGMAS_TO_PERCENTILE = normalQuantile(0.84);
+/** Nearly equal sides make a normal distribution: the skewness would be lost to rounding. */
+const LEAST_SKEWNESS = 1e-6;
+
+/**
+ * z = p50 + A (e^(g x) − 1) / g with a standard normal x: g from the ratio of the two sides, A from their size, so that the
+ * percentiles are met.
+ *
+ * @see Tukey's g distribution: Hoaglin, in Exploring Data Tables, Trends and Shapes, Wiley 1985 (cited from memory)
+ */
+function skewedBell(p16: number, p50: number, p84: number): Shape {
+  const ratio = (p84 - p50) / (p50 - p16);
+  const g = Math.log(ratio) / SIGMAS_TO_PERCENTILE;
+  const isEven = Math.abs(g) < LEAST_SKEWNESS;
+  const scale = isEven ? (p84 - p16) / (2 * SIGMAS_TO_PERCENTILE) : ((p84 - p50) * g) / (ratio - 1);
+  const redshiftAt = (x: number): number => p50 + scale * (isEven ? x : Math.expm1(g * x) / g);
+  const normalAt = (redshift: number): number => {
+    const distance = (redshift - p50) / scale;
+    if (isEven) return distance;
+    // Beyond the end that a skewed bell has on one side there is nothing.
+    return g * distance <= -1 ? -Math.sign(g) * Infinity : Math.log1p(g * distance) / g;
+  };
+  const density = (redshift: number): number => {
+    const x = normalAt(redshift);
+    return Number.isFinite(x) ? normalDensity(x) / (scale * (isEven ? 1 : Math.exp(g * x))) : 0;
+  };
+  return {
+    quantile: (p) => redshiftAt(normalQuantile(p)),
+    density,
+    // The mode of φ(x) e^(−g x) is at x = −g.
+    peaks: [{ redshift: redshiftAt(-g), probability: 1 }],
+    cutProbability: normalCdf(normalAt(0)) + normalCdf(-normalAt(HIGHEST_REDSHIFT)),
+    jumps: [],
   };
 }
 
