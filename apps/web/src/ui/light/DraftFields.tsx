@@ -100,6 +100,7 @@ export function DraftChoice<Draft>({
   draft,
   errors,
   disabled = false,
+  showLacking = false,
   onChange,
   name,
   label,
@@ -114,7 +115,7 @@ export function DraftChoice<Draft>({
       value={draft[name]}
       disabled={disabled}
       onChange={(event) => onChange({ [name]: event.target.value } as Partial<Draft>)}
-      error={errors[name] !== undefined}
+      error={errors[name] !== undefined && (draft[name] !== '' || showLacking)}
       helperText={errors[name] ?? hint}
       sx={wide ? { gridColumn: '1 / -1' } : {}}
       slotProps={{ inputLabel: { shrink: true }, select: { displayEmpty: true } }}

@@ -128,7 +128,7 @@ describe('the form that describes light', () => {
     renderPart(<Holder first={{ light: 'absoluteMagnitude', absolute: '−21', galacticDust: '0.03' }} />);
     expect(
       screen.getByText(
-        'The value contains the dust in its host; the dust of the Galaxy and the magnification would come on top.',
+        'The value contains the dust in its host. Of the dust of the Galaxy and the magnification, what is given comes on top.',
       ),
     ).toBeVisible();
     await userEvent.click(screen.getByRole('button', { name: /On the way/ }));
@@ -202,6 +202,14 @@ describe('the form that describes light', () => {
     expect(
       await screen.findByText('A suggestion, not a measurement: M = −19.3 in B. An invented survey.'),
     ).toBeVisible();
+  });
+
+  it('gives a supernova that is only known by its kind the spectrum of one', async () => {
+    answerWith({ 'GET /light/suggestions': { body: { rows: [] } } });
+    renderPart(<Holder first={{ light: 'typical' }} />);
+    await userEvent.click(screen.getByRole('combobox', { name: 'Its kind' }));
+    await userEvent.click(await screen.findByRole('option', { name: /supernova/ }));
+    expect(light()).toMatchObject({ of: 'supernovaIa', spectrum: { kind: 'supernovaIa' } });
   });
 });
 

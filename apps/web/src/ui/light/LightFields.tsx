@@ -133,6 +133,7 @@ function Value({ redshift, ...props }: DraftProps<LightDraft> & { redshift: numb
         <>
           <DraftChoice
             {...props}
+            onChange={(change) => props.onChange({ ...change, ...spectrumFor(change.typicalOf, draft.spectrum) })}
             wide
             name="typicalOf"
             label="Its kind"
@@ -149,6 +150,12 @@ function Value({ redshift, ...props }: DraftProps<LightDraft> & { redshift: numb
         </>
       );
   }
+}
+
+/** A supernova's spectrum is no galaxy's: the choice beneath follows, as far as it was of the other kind. */
+function spectrumFor(kind: LightDraft['typicalOf'] | undefined, spectrum: LightDraft['spectrum']): Partial<LightDraft> {
+  if (kind === 'supernovaIa') return { spectrum: 'supernovaIa' };
+  return spectrum === 'supernovaIa' ? { spectrum: 'powerLaw' } : {};
 }
 
 const derivedOptions: Options = [['inUse', 'the one in use here'], ...cosmologyOptions, ['own', 'another: H₀ and Ω_m']];

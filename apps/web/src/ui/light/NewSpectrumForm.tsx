@@ -73,7 +73,7 @@ export function NewSpectrumForm({ proposalId }: { proposalId: string }) {
   return (
     <FieldGroup
       title="Add a spectrum"
-      note="Two columns, wavelength and flux density, with any separator and with or without a header. The scale of the flux does not matter: how bright the source is says its light."
+      note="Two columns, wavelength and flux density, with any separator and with or without a header. The scale of the flux does not matter: a target’s light says how bright it is."
     >
       <Stack sx={{ gap: 1.75 }}>
         <TableTextField

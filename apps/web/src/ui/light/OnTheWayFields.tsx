@@ -140,8 +140,8 @@ export function ContainedLine({ draft }: { draft: LightDraft }) {
   const onTop = whats.filter((what) => !contains(draft, what)).map((what) => containedWords[what]);
   return (
     <Typography variant="body2" color="textSecondary">
-      The value contains {inIt.length > 0 ? listed(inIt) : 'nothing of what happens on the way'}
-      {onTop.length > 0 && `; ${listed(onTop)} would come on top`}.
+      The value contains {inIt.length > 0 ? listed(inIt) : 'nothing of what happens on the way'}.
+      {onTop.length > 0 && ` Of ${listed(onTop)}, what is given comes on top.`}
     </Typography>
   );
 }

@@ -21,7 +21,7 @@ export function TargetObservations({
     return (
       <Typography color="textSecondary">
         None yet.{' '}
-        <Link component={RouterLink} to={exposures}>
+        <Link component={RouterLink} to={exposures} underline="always">
           Apply a setup
         </Link>{' '}
         to see what it takes, and its light budget.

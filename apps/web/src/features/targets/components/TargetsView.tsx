@@ -65,7 +65,7 @@ const hideable = [
 ] as const;
 const hiddenAtFirst = ['extent', 'distanceModulusMag', ...shownBands.map(bandField)];
 /** On a phone the redshift should not hide behind coordinates. */
-const hiddenOnPhones = [...hiddenAtFirst, 'rightAscensionDeg', 'declinationDeg'];
+const hiddenOnPhones = [...hiddenAtFirst, 'rightAscensionDeg', 'declinationDeg', 'redshiftUncertainty'];
 
 /** The targets of a proposal: along cosmic time, and as a table that is typed into. */
 export function TargetsView({
