@@ -30,6 +30,7 @@ const pictures = [
     person: demoPeople.investigator,
     at: (r, b) => screenPaths.proposal(r, b, 'exposures'),
   },
+  { name: 'light', theme: 'paper', person: demoPeople.investigator, at: (r, b) => screenPaths.target(r, b) },
   { name: 'ranking', theme: 'paper', person: demoPeople.chair, at: (r, b) => screenPaths.panel(r, b, '/ranking') },
   { name: 'distances', theme: 'paper', at: async () => '/calculators/distances?z=7.12,4.27,10.31' },
   { name: 'ranking', theme: 'dome', person: demoPeople.chair, at: (r, b) => screenPaths.panel(r, b, '/ranking') },

@@ -93,6 +93,13 @@ export const screenPaths = {
     const row = list.rows.find((one) => one.state === state) ?? list.rows[0];
     return `/proposals/${row.proposalId}/${section}`;
   },
+  /** The sheet of the first target with a brightness. */
+  async target(request, base) {
+    const targets = await screenPaths.proposal(request, base, 'targets');
+    const list = await (await request.get(`${base}/api/v1${targets}?pageSize=50`)).json();
+    const row = list.rows.find((one) => one.light?.kind === 'apparentMagnitude') ?? list.rows[0];
+    return `${targets}/${row.targetId}`;
+  },
   async review(request, base) {
     const list = await (await request.get(`${base}/api/v1/reading-list`)).json();
     return `/reviews/${(list.rows.find((row) => row.state === 'begun') ?? list.rows[0]).proposalId}`;
