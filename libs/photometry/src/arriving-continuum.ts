@@ -337,14 +337,14 @@ export class ArrivingContinuum {
     if (at.kind === 'range') return undefined;
     if (frame === 'rest' && this.redshift === 0) return NO_DISTANCE;
     if (!this.isQuotedDark(at)) return undefined;
-    const place = at.kind === 'response' ? at.label : `${Number(at.wavelengthNm.toPrecision(4))} nm`;
+    const place = at.kind === 'response' ? `in ${at.label}` : `at ${Number(at.wavelengthNm.toPrecision(4))} nm`;
     const isEmitted = (this.quotedSpectrumMag(NOTHING) ?? 0) < Infinity;
     return {
       code: 'noFluxInQuotedBand',
       message:
         frame === 'observed' && isEmitted
-          ? `The magnitude is quoted in ${place}, where no light of redshift ${this.redshift} arrives: ${this.breakText()}.`
-          : `The spectrum chosen has no light in ${place}, where the magnitude is quoted.`,
+          ? `The magnitude is quoted ${place}, where no light of redshift ${this.redshift} arrives: ${this.breakText()}.`
+          : `The spectrum chosen has no light ${place}, where the magnitude is quoted.`,
     };
   }
 

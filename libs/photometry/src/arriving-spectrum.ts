@@ -1,6 +1,9 @@
 import type { ArrivingContinuum } from './arriving-continuum.js';
+import { SPEED_OF_LIGHT_KM_S } from './constants.js';
 import { firstAbove } from './sampled-curve.js';
+import type { RestLine } from './source-spectra.js';
 import { janskyOfFrequency } from './synthetic.js';
+import { gaussianSigmaFromFwhm } from './wavelengths.js';
 
 /** A spectrum for drawing: observed wavelengths, and f_ν as it arrives and without what takes light outside the source. */
 export interface DrawnSpectrum {
@@ -9,9 +12,7 @@ export interface DrawnSpectrum {
   unabsorbedFluxDensitiesJy: number[];
 }
 
-const SPEED_OF_LIGHT_KM_S = 299_792.458;
-const SIGMA_OVER_FWHM = 1 / Math.sqrt(8 * Math.LN2);
-/** A narrow line is drawn with this many points to either side, out to four standard deviations. */
+/** A narrow line gets this many points to either side, out to four standard deviations. */
 const LINE_POINTS = 8;
 const LINE_REACH_SIGMA = 4;
 
@@ -37,26 +38,19 @@ export function drawnSpectrum(
   const end = firstAbove(nodesNm, Math.min(highNm / stretch, spectrum.validHighNm));
   const every = Math.max(1, Math.ceil((end - first) / pointCount));
   const scale = 10 ** (-0.4 * normalisationMag);
-  const points: { nm: number; arrives: number; unabsorbed: number }[] = [];
+  const nodes: Point[] = [];
   for (let i = first; i < end; i++) {
     const isJump = nodesNm[i] === nodesNm[i + 1] || nodesNm[i] === nodesNm[i - 1];
     if (!isJump && (i - first) % every !== 0 && i !== end - 1) continue;
-    points.push({
+    nodes.push({
       nm: nodesNm[i]! * stretch,
       arrives: arriving.perFrequencyAtNode(i, true) * scale,
       unabsorbed: arriving.perFrequencyAtNode(i, false) * scale,
     });
   }
-  for (const line of spectrum.lines) {
-    const observedNm = line.restWavelengthNm * stretch;
-    if (observedNm < lowNm || observedNm > highNm) continue;
-    const relativeWidth = (line.velocityWidthKmS * SIGMA_OVER_FWHM) / SPEED_OF_LIGHT_KM_S;
-    const widthNm = observedNm * relativeWidth;
-    const { arrives, unabsorbed } = arriving.lineFactors(line.restWavelengthNm);
-    // λ² f_λ at rest wavelengths: the flux over the width, at the line.
-    const peak = (line.flux * line.restWavelengthNm * scale) / (relativeWidth * Math.sqrt(2 * Math.PI));
-    addLine(points, observedNm, widthNm, peak * arrives, peak * unabsorbed);
-  }
+  const gaussians = spectrum.lines.map((line) => gaussianOf(line, arriving, stretch, scale));
+  const points = withPointsAt(nodes, gaussians.flatMap(pointsAcross));
+  for (const gaussian of gaussians) addGaussian(points, gaussian);
   return {
     wavelengthsNm: points.map(({ nm }) => nm),
     fluxDensitiesJy: points.map(({ arrives }) => janskyOfFrequency(arrives)),
@@ -64,30 +58,71 @@ export function drawnSpectrum(
   };
 }
 
-/** Puts a Gaussian on top of the points, with points of its own between them. */
-function addLine(
-  points: { nm: number; arrives: number; unabsorbed: number }[],
-  centreNm: number,
-  widthNm: number,
-  peakArrives: number,
-  peakUnabsorbed: number,
-): void {
-  const start = points.findIndex(({ nm }) => nm > centreNm - LINE_REACH_SIGMA * widthNm);
-  if (start <= 0) return;
-  const after = points.findIndex(({ nm }) => nm > centreNm + LINE_REACH_SIGMA * widthNm);
-  if (after === -1) return;
-  const left = points[start - 1]!;
-  const right = points[after]!;
-  const own = Array.from({ length: 2 * LINE_POINTS + 1 }, (_, i) => {
-    const sigmas = ((i - LINE_POINTS) / LINE_POINTS) * LINE_REACH_SIGMA;
-    const nm = centreNm + sigmas * widthNm;
-    const t = (nm - left.nm) / (right.nm - left.nm);
-    const profile = Math.exp(-0.5 * sigmas * sigmas);
-    return {
-      nm,
-      arrives: left.arrives + t * (right.arrives - left.arrives) + peakArrives * profile,
-      unabsorbed: left.unabsorbed + t * (right.unabsorbed - left.unabsorbed) + peakUnabsorbed * profile,
-    };
-  });
-  points.splice(start, after - start, ...own);
+/** λ² f_λ at an observed wavelength, as it arrives and without what takes light outside the source. */
+interface Point {
+  readonly nm: number;
+  arrives: number;
+  unabsorbed: number;
+}
+
+/** A narrow line as it is drawn: its peaks on top of the continuum. */
+interface Gaussian {
+  readonly centreNm: number;
+  readonly sigmaNm: number;
+  readonly peakArrives: number;
+  readonly peakUnabsorbed: number;
+}
+
+function gaussianOf(line: RestLine, arriving: ArrivingContinuum, stretch: number, scale: number): Gaussian {
+  const relativeSigma = gaussianSigmaFromFwhm(line.velocityWidthKmS) / SPEED_OF_LIGHT_KM_S;
+  const { arrives, unabsorbed } = arriving.lineFactors(line.restWavelengthNm);
+  // λ² f_λ at rest wavelengths: λ F over the width in ln λ, at the line.
+  const peak = (line.flux * line.restWavelengthNm * scale) / (relativeSigma * Math.sqrt(2 * Math.PI));
+  const centreNm = line.restWavelengthNm * stretch;
+  return {
+    centreNm,
+    sigmaNm: centreNm * relativeSigma,
+    peakArrives: peak * arrives,
+    peakUnabsorbed: peak * unabsorbed,
+  };
+}
+
+function pointsAcross({ centreNm, sigmaNm }: Gaussian): number[] {
+  return Array.from(
+    { length: 2 * LINE_POINTS + 1 },
+    (_, i) => centreNm + ((i - LINE_POINTS) / LINE_POINTS) * LINE_REACH_SIGMA * sigmaNm,
+  );
+}
+
+/** The points with others put between them, on the straight lines that join them. */
+function withPointsAt(points: readonly Point[], wavelengthsNm: readonly number[]): Point[] {
+  const wanted = wavelengthsNm.toSorted((a, b) => a - b);
+  const merged: Point[] = [];
+  let next = 0;
+  for (const right of points) {
+    const left = merged.at(-1);
+    for (; next < wanted.length && wanted[next]! <= right.nm; next++) {
+      const nm = wanted[next]!;
+      const last = merged.at(-1);
+      if (left === undefined || last === undefined || nm <= last.nm || nm === right.nm) continue;
+      const t = (nm - left.nm) / (right.nm - left.nm);
+      merged.push({
+        nm,
+        arrives: left.arrives + t * (right.arrives - left.arrives),
+        unabsorbed: left.unabsorbed + t * (right.unabsorbed - left.unabsorbed),
+      });
+    }
+    merged.push({ ...right });
+  }
+  return merged;
+}
+
+function addGaussian(points: Point[], { centreNm, sigmaNm, peakArrives, peakUnabsorbed }: Gaussian): void {
+  for (const point of points) {
+    const distance = (point.nm - centreNm) / sigmaNm;
+    if (Math.abs(distance) > LINE_REACH_SIGMA * (1 + 1e-9)) continue;
+    const profile = Math.exp(-0.5 * distance * distance);
+    point.arrives += peakArrives * profile;
+    point.unabsorbed += peakUnabsorbed * profile;
+  }
 }

@@ -101,7 +101,8 @@ export interface PointWeights {
  * λ between them, as the response is between its own: the pieces of both are merged. The same weights serve for the spectrum with
  * and without each thing on its way. Zero outside the points.
  *
- * A flat f_ν comes out exactly; Gauss's rule with two points leaves an error of 5e-15 where points are 1e-3 apart in ln λ.
+ * A flat f_ν comes out exactly. Where points are 1e-3 apart in ln λ, Gauss's rule with two of its own leaves 5e-15 of smooth curves, and
+ * 6e-9 of a piece on which both run from nothing to their peak.
  *
  * @param nodesNm  ascending, at most two equal neighbours
  * @param stretch  1 + z for a spectrum on rest wavelengths: point i is seen at nodesNm[i] · stretch
