@@ -88,7 +88,7 @@ export function AppShell(props: AppShellProps) {
       >
         Exposure times are planning figures, to be confirmed by the observatory&rsquo;s instrument team. The
         site&rsquo;s own safety rules stand above anything shown here.{' '}
-        <Link component={RouterLink} to={paths.sources.to()}>
+        <Link component={RouterLink} to={paths.sources.to()} underline="always">
           Sources of the reference data
         </Link>
         .

@@ -114,7 +114,7 @@ function Foot({ report }: { report: LightReport }) {
   return (
     <Typography variant="body2" color="textSecondary" component="div">
       {report.cosmologyTitle}, engine {report.engineVersion},{' '}
-      <Link component={RouterLink} to={paths.sources.to()}>
+      <Link component={RouterLink} to={paths.sources.to()} underline="always">
         reference data <code>{report.referenceDataVersion.slice(0, 12)}</code>
       </Link>
       , inputs{' '}
