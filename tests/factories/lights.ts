@@ -18,8 +18,16 @@ const TEMPLATES = sourceTemplates(files);
 const JUMPS = [...new Set([INOUE, MADAU].flatMap(forestNodesNm))].sort((a, b) => a - b);
 
 export const spectrumOf = (kind: SourceKind): RestSpectrum => restSpectrum(kind, TEMPLATES, JUMPS);
-export const powerLaw = (slopeBeta: number, escapeFraction = 0): RestSpectrum =>
-  spectrumOf({ kind: 'powerLaw', slopeBeta, escapeFraction });
+
+const powerLaws = new Map<string, RestSpectrum>();
+
+/** Kept, because properties ask for the same few hundreds of times. */
+export function powerLaw(slopeBeta: number, escapeFraction = 0): RestSpectrum {
+  const key = `${slopeBeta} ${escapeFraction}`;
+  let known = powerLaws.get(key);
+  if (known === undefined) powerLaws.set(key, (known = spectrumOf({ kind: 'powerLaw', slopeBeta, escapeFraction })));
+  return known;
+}
 const FLAT = powerLaw(-2);
 
 const bare = { hostDust: null, galacticDust: null, magnification: 1, medium: INOUE };

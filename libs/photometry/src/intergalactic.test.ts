@@ -108,6 +108,23 @@ describe('optical depth', () => {
 });
 
 describe('transmission on nodes', () => {
+  it('is the same from any node on', () => {
+    const nodesNm = Float64Array.from({ length: 400 }, (_, i) => 60 * Math.exp(i * 2e-3));
+    for (const medium of [inoue, madau]) {
+      const onNodes = medium.onNodes(nodesNm);
+      for (const redshift of [0.5, 3, 6.5]) {
+        const all = new Float64Array(400);
+        onNodes.transmission(redshift, all);
+        for (const first of [1, 150, 353, 399, 400]) {
+          const part = new Float64Array(400 - first).fill(7);
+          onNodes.transmission(redshift, part, first);
+          expect(part).toEqual(all.slice(first));
+        }
+      }
+    }
+    expect(() => inoue.onNodes(nodesNm).transmission(1, new Float64Array(400), 1)).toThrow('out.length');
+  });
+
   it.each(media)('of %s equals the sum over single terms', (_, medium) => {
     const nodes = fc.array(fc.double({ min: 10, max: 130, noNaN: true }), { minLength: 1, maxLength: 60 });
     fc.assert(
