@@ -133,7 +133,9 @@ function addLightFaults(light: Light, fault: (path: string, message: string) => 
         fault('light.escapeFraction', 'Say which part of the Lyα photons leaves the galaxy: there is no safe default.');
       }
       return;
-    default:
+    case 'lineFlux':
+    case 'lineLuminosity':
+    case 'typical':
   }
 }
 

@@ -16,6 +16,8 @@ export function readTypedLight({ text, bandId, system }: LightReadingRequest): L
   const { light } = reading;
   switch (light.kind) {
     case 'abMagnitude':
+      // "22.5 mag" is in the system of the field it is typed into, unless it says AB itself.
+      if (system === 'Vega' && !/ab/i.test(text)) return vega(light.magnitudeAb, bandId);
       return apparent(light.magnitudeAb, `${light.magnitudeAb} mag AB in ${bandId}`);
     case 'vegaMagnitude':
       return vega(light.magnitudeVega, bandId);
