@@ -111,7 +111,7 @@ const line = (
   observedEquivalentWidthNm: null,
 });
 
-const broken = { code: 'below-break', message: 'No flux in this band: the Lyman break is at 0.97 µm.' };
+const broken = { code: 'noFluxInBand', message: 'No flux in this band: the Lyman break is at 0.97 µm.' };
 
 const band = (
   bandId: LightReport['bands'][number]['bandId'],

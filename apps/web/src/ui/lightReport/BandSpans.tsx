@@ -3,8 +3,9 @@ import type { BandLight } from '@faintward/contracts/light-report';
 import Box from '@mui/material/Box';
 import ButtonBase from '@mui/material/ButtonBase';
 import { useMemo } from 'react';
-import { formatNumber } from '../../lib/format';
+import { formatNumber, unknownMark } from '../../lib/format';
 import { intoLanes } from '../plot/labels';
+import { bandState } from './darkness';
 
 const laneHeight = 36;
 const leastWidth = 27;
@@ -56,7 +57,7 @@ export function BandSpans({
         <ButtonBase
           key={band.bandId}
           aria-pressed={band.bandId === chosen}
-          aria-label={`${band.label} ${magnitudeText(band, width)}: light budget in this band`}
+          aria-label={`${band.label} ${bandState(band) === 'unknown' ? 'not known' : magnitudeText(band, width)}: light budget in this band`}
           onClick={() => onChoose(band.bandId)}
           title={band.reason?.message}
           sx={{
@@ -90,6 +91,8 @@ export function BandSpans({
 }
 
 function magnitudeText(band: BandLight, width: number): string {
-  if (band.magnitudeAb === null) return width >= 44 ? 'no light' : 'none';
+  const state = bandState(band);
+  if (state === 'unknown') return width >= 54 ? 'not known' : unknownMark;
+  if (state === 'dark') return width >= 44 ? 'no light' : 'none';
   return formatNumber(band.magnitudeAb, { decimals: width >= 31 ? 2 : 1 });
 }

@@ -42,7 +42,7 @@ export function BandsTable({
           </TableCell>
           {band.reason || band.magnitudeAb === null ? (
             <TableCell colSpan={4} sx={{ color: 'text.secondary', minWidth: 220 }}>
-              {band.reason?.message ?? 'No light.'}
+              {band.reason?.message ?? 'Not known.'}
             </TableCell>
           ) : (
             <>

@@ -21,7 +21,7 @@ export function KeyFigures({ report }: { report: LightReport }) {
           </Typography>
           {ledger.totalMagnitudeAb === null ? (
             <Typography variant="h2" component="p">
-              {ledger.reason?.message ?? 'No light.'}
+              {ledger.reason?.message ?? 'No magnitude is known.'}
             </Typography>
           ) : (
             <Typography component="p" sx={{ fontSize: '1.625rem', fontWeight: 600, lineHeight: 1.25 }}>

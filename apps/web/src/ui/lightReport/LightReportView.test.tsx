@@ -5,6 +5,7 @@ import { LightReport } from '@faintward/contracts/light-report';
 import { lightReport, reportWithoutLight, reportWithoutSource } from '../../testing/lightReportExample';
 import { renderPart } from '../../testing/renderRoute';
 import { placeBands } from './BandSpans';
+import { bandState } from './darkness';
 import { timeText } from './CosmologiesTable';
 import { LightReportView } from './LightReportView';
 import { placeLines } from './SpectrumDrawing';
@@ -130,4 +131,18 @@ it('names two lines of an ion once where they are close, and each where they are
       .toSorted();
   expect(labels(2)).toEqual(['Hα', 'Mg II']);
   expect(labels(20)).toEqual(['Hα', 'Mg II 2796', 'Mg II 2804']);
+});
+
+it('does not take a band that the spectrum does not reach for one without light', () => {
+  const band = lightReport.bands.find((one) => one.bandId === 'B');
+  const unreached = {
+    ...band!,
+    magnitudeAb: null,
+    reason: { code: 'spectrumEnds', message: 'The spectrum says nothing about this range.' },
+  };
+  expect(bandState(band!)).toBe('dark');
+  expect(bandState(unreached)).toBe('unknown');
+  view({ ...lightReport, bands: lightReport.bands.map((one) => (one.bandId === 'B' ? unreached : one)) });
+  expect(screen.getByRole('button', { name: /^B .*not known/ })).toBeVisible();
+  expect(screen.getByRole('img', { name: /nothing known of B/ })).toBeVisible();
 });

@@ -9,6 +9,7 @@ import { PlotFigure, type PlotTable } from '../plot/PlotFigure';
 import { makeScale } from '../plot/scale';
 import { useWidth } from '../plot/useWidth';
 import { BandSpans } from './BandSpans';
+import { bandState } from './darkness';
 import { SpectrumDrawing, spectrumMargin } from './SpectrumDrawing';
 import { clipCurve, fluxUnit, wavelengthRange, type RangeId } from './spectrum';
 
@@ -159,14 +160,16 @@ function micron(nm: number): string {
 }
 
 function bandsInWords(bands: readonly BandLight[]): string {
-  const dark = bands.filter((band) => band.magnitudeAb === null);
+  const dark = bands.filter((band) => bandState(band) === 'dark');
+  const unknown = bands.filter((band) => bandState(band) === 'unknown');
   const bright = bands.filter((band) => band.magnitudeAb !== null);
   const brightest = bright.toSorted((a, b) => a.magnitudeAb! - b.magnitudeAb!)[0];
   return [
     brightest
       ? `brightest in ${brightest.label}, ${formatNumber(brightest.magnitudeAb, { decimals: 2 })} AB`
-      : 'no band receives light',
-    dark.length > 0 && brightest ? `no light in ${dark.map((band) => band.label).join(', ')}` : '',
+      : 'no magnitude is known in any band',
+    dark.length > 0 ? `no light in ${dark.map((band) => band.label).join(', ')}` : '',
+    unknown.length > 0 ? `nothing known of ${unknown.map((band) => band.label).join(', ')}` : '',
   ]
     .filter(Boolean)
     .join('; ');

@@ -19,7 +19,7 @@ export function CosmologiesView({ comparison }: { comparison: ProposalCosmologie
     <Panel
       title="What the choice of cosmology changes"
       note={`${counted(comparison.targetCount, 'target')}, ${counted(comparison.observationCount, 'observation')}${
-        chosen ? `; against ${chosen.title}, which is chosen in Settings` : ''
+        chosen ? `; against ${chosen.title}, which the proposal uses` : ''
       }.`}
       flush
     >
