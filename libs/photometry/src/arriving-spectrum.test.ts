@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { absoluteLight, apparentLight, INOUE, spectrumOf } from '../../../tests/factories/lights.js';
 import { arrivingLight } from './arriving-light.js';
 import { drawnSpectrum, type DrawnSpectrum } from './arriving-spectrum.js';
+import { attenuationMag, galacticAttenuationMag } from './dust.js';
 import { boxCurve } from './sampled-curve.js';
 import type { ContinuumLight } from './source-light.js';
 import { responseOf } from './synthetic.js';
@@ -64,6 +65,24 @@ describe('the spectrum drawn', () => {
     expect(jump).toHaveLength(2);
     expect(drawn.fluxDensitiesJy[jump[0]!]! / level).toBeLessThan(0.3);
     expect(drawn.fluxDensitiesJy[jump[1]!]! / level).toBeCloseTo(1, 9);
+  });
+
+  it('without what takes light outside the source still has the dust of the source', () => {
+    const dusty = absoluteLight({
+      hostDust: { law: 'calzetti2000', colourExcessMag: 0.3 },
+      galacticDust: { law: 'ccm1989', colourExcessMag: 0.2, scale: 'true' },
+      includes: { hostDust: false, galacticDust: false, lensing: false },
+    });
+    const bare = draw(absoluteLight(), 2, 500, 900).drawn;
+    const { drawn } = draw(dusty, 2, 500, 900);
+    drawn.wavelengthsNm.forEach((nm, i) => {
+      const host = attenuationMag('calzetti2000', nm / 3, 0.3);
+      const galactic = galacticAttenuationMag(nm, 0.2, 'true', 'ccm1989');
+      const dimming = (which: 'fluxDensitiesJy' | 'unabsorbedFluxDensitiesJy'): number =>
+        -2.5 * Math.log10(drawn[which][i]! / bare[which][i]!);
+      expect(dimming('unabsorbedFluxDensitiesJy')).toBeCloseTo(host, 6);
+      expect(dimming('fluxDensitiesJy')).toBeCloseTo(host + galactic, 5);
+    });
   });
 
   it('stays in the range asked for and near the number of points, with its ends', () => {

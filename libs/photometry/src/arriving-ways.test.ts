@@ -262,6 +262,22 @@ describe('Lyα', () => {
     expect(arrivingLight(lineLight(), 7, PLANCK18)).toMatchObject({ kind: 'line' });
   });
 
+  it('is left alone too where a line list gives it in a decimal less, as a line and in a spectrum', () => {
+    const response = responseOf(boxCurve(600, 640));
+    const loss = (restWavelengthNm: number): number => {
+      const light = lineLight({ restWavelengthNm });
+      return magnitudeOf(light, 4, response) - magnitudeOf({ ...light, medium: null }, 4, response);
+    };
+    expect(loss(121.56)).toBe(0);
+    expect(loss(121.5)).toBeCloseTo(hydrogenMag(121.5 * 5, 4), 9);
+    const factorAt = (restWavelengthNm: number): number => {
+      const arriving = arrivingLight(absoluteLight(), 4, PLANCK18);
+      return arriving.kind === 'continuum' ? arriving.lineFactors(restWavelengthNm).arrives : NaN;
+    };
+    expect(factorAt(121.56)).toBe(1);
+    expect(factorAt(121.5)).toBeCloseTo(Math.exp(-INOUE.opticalDepth(121.5 * 5, 4)), 12);
+  });
+
   it('is followed by lines that the forest does take, where they are given as luminosities', () => {
     const light = lineLight({ restWavelengthNm: 103 });
     const response = responseOf(boxCurve(440, 480));
