@@ -7,8 +7,16 @@ import { PlotFigure, type PlotTable } from '../plot/PlotFigure';
 import { useWidth } from '../plot/useWidth';
 import { LedgerDrawing } from './LedgerDrawing';
 import { LedgerSteps } from './LedgerSteps';
-import { ledgerLayout, ledgerRows, ledgerSentence, stageWords, type LedgerAperture, type LedgerRow } from './ledger';
-import type { LedgerStep } from './ledger';
+import {
+  inputText,
+  ledgerLayout,
+  ledgerRows,
+  ledgerSentence,
+  stageWords,
+  type LedgerAperture,
+  type LedgerRow,
+  type LedgerStep,
+} from './ledger';
 
 export interface LedgerPlotProps {
   steps: readonly LedgerStep[];
@@ -80,7 +88,7 @@ function tableOf(rows: readonly LedgerRow[]): PlotTable {
       row.kind === 'start' ? null : row.deltaMag,
       row.totalMag,
       row.formula ?? '',
-      (row.inputs ?? []).map((input) => `${input.name} ${input.value} ${input.unit}`.trim()).join('; '),
+      (row.inputs ?? []).map(inputText).join('; '),
       row.source ?? '',
     ]),
     format: (value, column) => formatNumber(value, { decimals: 3, signed: column === 2 }),

@@ -138,7 +138,7 @@ function RowText({ row, isNarrow, titleWidth }: { row: LedgerRow; isNarrow: bool
           overflow: 'hidden',
           display: '-webkit-box',
           WebkitBoxOrient: 'vertical',
-          WebkitLineClamp: isNarrow ? '1' : '2',
+          WebkitLineClamp: '2',
           textDecoration: 'underline dotted',
           textDecorationColor: 'var(--fw-palette-faintward-edge)',
           textUnderlineOffset: '3px',

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { estimateSteps, ledgerSteps, lightReport } from '../../testing/lightReportExample';
-import { brokenAxis, inputWords, ledgerLayout, ledgerRows, ledgerSentence } from './ledger';
+import { brokenAxis, inputText, inputWords, ledgerLayout, ledgerRows, ledgerSentence } from './ledger';
 
 describe('the broken axis', () => {
   it('breaks once at the distance modulus, and leaves most of the width to the small steps', () => {
@@ -71,6 +71,15 @@ describe('the layout', () => {
     expect(layout.height).toBeGreaterThan(layout.rows.at(-1)!.top);
   });
 
+  it.each([358, 800])('gives a title of two lines another line at %i px, a short one none', (width) => {
+    const [short, long] = ['Milky Way dust', 'Spectrum between the light as quoted and the range looked at'].map(
+      (title) => ledgerLayout(ledgerRows([{ ...ledgerSteps[0]!, title }]), width).rows[0]!,
+    );
+    // A line of 13 px letters at a line height of 1.15.
+    expect(long!.height - short!.height).toBeGreaterThanOrEqual(15);
+    expect(long!.barTop + long!.barHeight).toBeLessThanOrEqual(long!.top + long!.height);
+  });
+
   it('groups rows by stage, in order and without gaps', () => {
     const { stages } = ledgerLayout(ledgerRows(estimateSteps), 800);
     expect(stages.map((stage) => stage.stage)).toEqual(['source', 'space', 'atmosphere', 'instrument', 'counting']);
@@ -92,4 +101,9 @@ it('says inputs in words, without repeating their unit', () => {
   expect(inputWords('absoluteMagnitude', 'mag')).toBe('absolute magnitude');
   expect(inputWords('seeing, FWHM', '″')).toBe('seeing, FWHM');
   expect(inputWords('redshift', '')).toBe('redshift');
+});
+
+it('writes inputs in words with value and unit', () => {
+  expect(inputText({ name: 'luminosityDistanceMpc', value: 47000, unit: 'Mpc' })).toBe('luminosity distance 47000 Mpc');
+  expect(inputText({ name: 'redshift', value: 6.1, unit: '' })).toBe('redshift 6.1');
 });

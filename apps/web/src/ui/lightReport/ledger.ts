@@ -158,6 +158,11 @@ export interface LedgerLayout {
 }
 
 const axisHeight = 40;
+/** A line of a title, and what one of its letters takes at most on average: too wide an estimate only gives more room. */
+const titleLineHeight = 15;
+const letterWidth = 6.6;
+/** Change and total beside a title on a phone, with the gaps between them. */
+const numbersWidthNarrow = 118;
 /** Right of the axis, for the number beside the last bar. */
 const labelRoom = 58;
 const totalWidth = 58;
@@ -165,10 +170,11 @@ const totalWidth = 58;
 /** Where everything of a ledger stands in a drawing of this width. */
 export function ledgerLayout(rows: readonly LedgerRow[], width: number): LedgerLayout {
   const isNarrow = width < 560;
-  const rowHeight = isNarrow ? 50 : 32;
+  const lineHeight = isNarrow ? 50 : 32;
   const stageHeight = isNarrow ? 24 : 0;
   const titleLeft = isNarrow ? 0 : 96;
   const titleWidth = isNarrow ? width : Math.min(250, Math.max(168, width * 0.27));
+  const titleRoom = isNarrow ? width - numbersWidthNarrow : titleWidth;
   const plotLeft = isNarrow ? 4 : titleLeft + titleWidth + 12;
   const plotRight = isNarrow ? width - 6 : width - totalWidth;
   const totals = rows.map((row) => row.totalMag);
@@ -183,14 +189,16 @@ export function ledgerLayout(rows: readonly LedgerRow[], width: number): LedgerL
       y += stageHeight;
     }
     const barHeight = isNarrow ? 12 : 14;
+    const isWrapped = row.title.length * letterWidth > titleRoom;
+    const height = lineHeight + (isWrapped ? titleLineHeight : 0);
     placed.push({
       row,
       top: y,
-      height: rowHeight,
-      barTop: isNarrow ? y + 30 : y + (rowHeight - barHeight) / 2,
+      height,
+      barTop: isNarrow ? y + height - 20 : y + (height - barHeight) / 2,
       barHeight,
     });
-    y += rowHeight;
+    y += height;
     stages.at(-1)!.bottom = y;
   }
   return {
@@ -205,6 +213,11 @@ export function ledgerLayout(rows: readonly LedgerRow[], width: number): LedgerL
     stages,
     height: y,
   };
+}
+
+/** An input with its value: `luminosity distance 47000 Mpc`. */
+export function inputText({ name, value, unit }: { name: string; value: number; unit: string }): string {
+  return `${inputWords(name, unit)} ${value} ${unit}`.trim();
 }
 
 /** The name of an input in words: `luminosityDistanceMpc` in Mpc is a luminosity distance. Names in words stay. */

@@ -144,7 +144,7 @@ export function TargetsView({
             what="The strip of cosmic time"
             skeleton={<SkeletonBlock label="The strip of cosmic time: loading" lines={4} />}
           >
-            {(strip) => <CosmicTimeStrip {...strip} />}
+            {(strip) => <CosmicTimeStrip {...strip} onChoose={onOpen} />}
           </Loaded>
         </Panel>
       )}
