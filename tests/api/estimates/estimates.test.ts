@@ -69,9 +69,9 @@ describe('POST /estimates', () => {
     [{ goal: { kind: 'lineSignificance', sigma: 5 } }, 'goal.kind'],
     [{ goal: { kind: 'exposureTime', exposureSeconds: 9999, exposureCount: 1 } }, 'goal.exposureSeconds'],
     [{ target: { ...TARGET, redshift: -1 } }, 'target.redshift'],
-    [{ target: { redshift: 0, light: { kind: 'absoluteMagnitude', magnitudeAb: -21 } } }, 'target.redshift'],
+    [{ target: { redshift: 0, light: { kind: 'absoluteMagnitude', magnitude: -21 } } }, 'target.redshift'],
     [
-      { target: { redshift: 3, light: { kind: 'absoluteMagnitude', magnitudeAb: -21 }, extent: { kind: 'uniform' } } },
+      { target: { redshift: 3, light: { kind: 'absoluteMagnitude', magnitude: -21 }, extent: { kind: 'uniform' } } },
       'target.light.kind',
     ],
     [
@@ -87,7 +87,7 @@ describe('POST /estimates', () => {
 
   it('answers what cannot be reached with a reason, not with a huge number', async () => {
     const { body } = await ask({
-      target: { redshift: 12, light: { kind: 'absoluteMagnitude', magnitudeAb: -21 } },
+      target: { redshift: 12, light: { kind: 'absoluteMagnitude', magnitude: -21 } },
     }).expect(200);
     expect(body).toMatchObject({ outcome: 'infeasible', reason: { code: 'noFluxInBand' } });
   });

@@ -76,7 +76,7 @@ describe('changing a proposal', () => {
 
   it('to another cosmology computes all targets and observations again', async () => {
     const draft = await aDraft(app);
-    await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitudeAb: -23 } });
+    await aTarget(draft, { light: { kind: 'absoluteMagnitude', magnitude: -23 } });
     await planAll(app, draft);
     const [before] = (await draft.pi.get(`${draft.base}/targets`).expect(200)).body.rows;
     await draft.pi.patch(draft.base).set('If-Match', '"1"').send({ cosmology: 'conv70' }).expect(200);
