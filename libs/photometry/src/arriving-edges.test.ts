@@ -132,6 +132,27 @@ describe('a dark band', () => {
   });
 });
 
+describe('looking at several ranges', () => {
+  it('gives the same in any order, and of two lights by turns', () => {
+    const ranges = [box(1170, 1330), box(555, 690), box(400, 550), box(700, 760)];
+    const light = absoluteLight({
+      spectrum: powerLaw(-2, 1),
+      galacticDust: { law: 'ccm1989', colourExcessMag: 0.1, scale: 'true' },
+    });
+    const alone = ranges.map((range) => arrivingLight(light, 3.5, PLANCK18).magnitudeIn(range));
+    expect(alone.every((found) => typeof found === 'number')).toBe(true);
+    const forwards = arrivingLight(light, 3.5, PLANCK18);
+    const backwards = arrivingLight(light, 3.5, PLANCK18);
+    const other = arrivingLight(light, 2.5, PLANCK18);
+    ranges.forEach((range, i) => {
+      expect(forwards.magnitudeIn(range)).toBe(alone[i]);
+      other.magnitudeIn(range);
+      expect(backwards.magnitudeIn(ranges[3 - i]!)).toBe(alone[3 - i]);
+      expect(forwards.magnitudeIn(range)).toBe(alone[i]);
+    });
+  });
+});
+
 describe('a range beyond the spectrum', () => {
   const template = absoluteLight({ spectrum: spectrumOf({ kind: 'quasar', template: 'hewettWild2010' }) });
   const recipe = absoluteLight({
@@ -199,6 +220,8 @@ describe('extremes', () => {
     expect(deep - plain).toBeGreaterThan(70);
     expect(deep - plain).toBeLessThan(90);
     expect(() => look(dusty(-0.1), 3, J)).toThrow('colourExcessMag');
+    const negative = absoluteLight({ hostDust: { law: 'ccm1989', colourExcessMag: -0.1 } });
+    expect(() => look(negative, 3, J)).toThrow('colourExcessMag');
   });
 
   it('with a response that is dark where a line falls there is no line', () => {

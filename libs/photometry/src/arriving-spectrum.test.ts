@@ -98,8 +98,11 @@ describe('the spectrum drawn', () => {
   });
 
   it('holds both lines of a doublet, with their flux', () => {
-    const bare = draw(absoluteLight({ spectrum: starForming({}) }), 1.5, 900, 960);
-    const { drawn, arriving } = draw(absoluteLight({ spectrum: starForming({ oxygenIINm: 6 }) }), 1.5, 900, 960);
+    // Behind dust, which takes the same part of line and continuum.
+    const galacticDust = { law: 'ccm1989', colourExcessMag: 0.5, scale: 'true' } as const;
+    const bare = draw(absoluteLight({ spectrum: starForming({}), galacticDust }), 1.5, 900, 960);
+    const withLines = absoluteLight({ spectrum: starForming({ oxygenIINm: 6 }), galacticDust });
+    const { drawn, arriving } = draw(withLines, 1.5, 900, 960);
     const lines = arriving.light.spectrum.lines.map((line) => ({ line, ...arriving.lineStrength(line)! }));
     expect(lines).toHaveLength(2);
     // F = ∫ f_ν dν: in ln λ, c/λ times the area; 1 Jy = 1e-23 erg s⁻¹ cm⁻² Hz⁻¹.

@@ -12,6 +12,7 @@ export interface AtmosphericRange {
   readonly highNm: number;
 }
 
+/** `atmosphere-windows.json`. */
 export interface AtmosphereTable {
   readonly windows: readonly AtmosphericRange[];
 }

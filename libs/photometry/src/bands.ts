@@ -25,6 +25,7 @@ export interface BandRow {
   readonly response: readonly number[];
 }
 
+/** `bands.json`. */
 export interface BandsTable {
   readonly bands: readonly BandRow[];
 }
@@ -46,6 +47,7 @@ export interface Band {
   readonly vegaToAbSource: string | null;
 }
 
+/** All bands by id. */
 export type Bands = Readonly<Record<BandId, Band>>;
 
 /**

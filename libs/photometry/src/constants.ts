@@ -54,5 +54,7 @@ export const JANSKY_CGS: Constant = {
   reference: 'definition',
 };
 
+/** Centimetres in a megaparsec. */
 export const CM_PER_MPC = PARSEC.value * 1e8;
+/** Speed of light in km/s. */
 export const SPEED_OF_LIGHT_KM_S = SPEED_OF_LIGHT.value / 1000;

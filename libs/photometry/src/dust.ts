@@ -2,6 +2,7 @@ import { OutOfDomainError, requirePositive } from './domain.js';
 import { DUST_LAW_COEFFICIENTS } from './dust-coefficients.js';
 import { calzetti, cardelliClaytonMathis, fitzpatrick, type LawInInverseMicron } from './dust-laws.js';
 
+/** A published law of dust attenuation, by author and year. */
 export type DustLaw = 'ccm1989' | 'fitzpatrick1999' | 'calzetti2000';
 
 /** `dust-laws.json`: which laws there are. Their coefficients stand with their formulas in the program. */
@@ -9,6 +10,7 @@ export interface DustLawsTable {
   readonly laws: readonly DustLaw[];
 }
 
+/** What a law is, for whom and where. */
 export interface DustLawDescription {
   readonly id: DustLaw;
   readonly label: string;
@@ -20,6 +22,7 @@ export interface DustLawDescription {
   readonly longestNm: number;
 }
 
+/** The laws there are. */
 export const DUST_LAWS: Readonly<Record<DustLaw, DustLawDescription>> = {
   ccm1989: {
     id: 'ccm1989',
@@ -61,6 +64,7 @@ export const TRUE_PER_SFD_COLOUR_EXCESS = 0.86;
 /** Scale of a Galactic E(B−V): as read from the map of Schlegel, Finkbeiner & Davis 1998, or a true colour excess. */
 export type ColourExcessScale = 'sfd' | 'true';
 
+/** R_V that a law is usually taken with. */
 export function defaultTotalToSelective(law: DustLaw): number {
   return DUST_LAWS[law].defaultTotalToSelective;
 }

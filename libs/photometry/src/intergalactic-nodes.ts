@@ -2,6 +2,7 @@ import { OutOfDomainError, requireRedshift } from './domain.js';
 import { branchesAt, type ContinuumSeries, type IntergalacticTable, type LineSeries } from './intergalactic-table.js';
 import { firstAbove } from './sampled-curve.js';
 
+/** Mean transmission of a medium on fixed rest wavelengths. */
 export interface NodeTransmission {
   /**
    * Writes e^−τ at each rest node for a source at a redshift.

@@ -50,6 +50,7 @@ export class Ledger {
   }
 }
 
+/** A quantity for a step of a ledger; the unit is '' for a pure number. */
 export function ledgerInput(name: string, value: number, unit = ''): LedgerInput {
   return { name, value, unit };
 }

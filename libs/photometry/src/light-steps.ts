@@ -2,6 +2,7 @@ import type { StepText } from './ledger.js';
 
 const HOGG_2002 = 'Hogg, Baldry, Blanton & Eisenstein 2002, astro-ph/0210394';
 
+/** The steps that a ledger of light can have. */
 export type LightStepId =
   | 'apparent-magnitude'
   | 'absolute-magnitude'

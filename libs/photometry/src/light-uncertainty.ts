@@ -4,6 +4,7 @@ import type { RedshiftDistribution } from './redshift-distribution.js';
 import type { LuminosityDistances, SourceLight } from './source-light.js';
 import type { Response } from './synthetic.js';
 
+/** What is drawn, and how often. */
 export interface LightSampling {
   /** The light at a redshift: what is typical of its kind can depend on it. */
   lightAt(redshift: number): SourceLight;
@@ -20,6 +21,7 @@ export interface LightSampling {
   seed: number;
 }
 
+/** The draws, in one order. */
 export interface LightSamples {
   readonly redshifts: Float64Array;
   /** AB magnitude above the atmosphere; NaN where nothing arrives. */

@@ -40,6 +40,7 @@ export interface SpectralLine {
   readonly provenance: Provenance;
 }
 
+/** `lines.json`. */
 export interface LinesTable {
   readonly lines: readonly SpectralLine[];
 }

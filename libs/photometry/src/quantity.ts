@@ -7,9 +7,11 @@ export type TypedLight = TypedMagnitude | TypedFlux;
 /** What can be read without knowing a band or a calibration. */
 export type ParsedLight = Exclude<TypedLight, { kind: 'vegaMagnitude' | 'absoluteMagnitude' | 'starFormationRate' }>;
 
+/** Why a text was not read. */
 export type LightRefusalCode =
   'empty' | 'notAQuantity' | 'unitMissing' | 'unknownUnit' | 'wrongDimension' | 'notPositive';
 
+/** A refusal in words for whoever typed the text. */
 export interface LightRefusal {
   ok: false;
   code: LightRefusalCode;

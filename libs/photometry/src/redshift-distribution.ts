@@ -30,6 +30,7 @@ export interface RedshiftDistribution {
   readonly cutProbability: number;
 }
 
+/** No source is sought beyond; distributions end here. */
 export const HIGHEST_REDSHIFT = 30;
 /** Draws are kept off 0, where there is no distance. */
 const LOWEST_DRAW = 1e-9;

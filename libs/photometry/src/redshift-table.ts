@@ -68,6 +68,7 @@ export function tableDensity({ redshifts, densities }: DensityTable, redshift: n
   return densities[i]! * (1 - t) + densities[i + 1]! * t;
 }
 
+/** A maximum of a density. */
 export interface RedshiftPeak {
   readonly redshift: number;
   /** Of the basin around it, from the minimum before to the minimum after. */

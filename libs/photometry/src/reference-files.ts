@@ -73,6 +73,7 @@ const Meta = z.strictObject({
   provenance: Provenance,
   notes: Text,
 });
+/** What a file says about itself. */
 export type ReferenceMeta = z.output<typeof Meta>;
 
 type DataSchemas = { readonly [Key in keyof PhotometryFiles]: z.ZodType<PhotometryFiles[Key]['data']> };

@@ -19,7 +19,9 @@ export interface Met {
   readonly intergalactic: boolean;
   readonly galacticDust: boolean;
 }
+/** The spectrum as it is given. */
 export const NOTHING: Met = { hostDust: false, intergalactic: false, galacticDust: false };
+/** As the light arrives above the atmosphere. */
 export const EVERYTHING: Met = { hostDust: true, intergalactic: true, galacticDust: true };
 /** As the light leaves the source. */
 export const AT_SOURCE: Met = { ...NOTHING, hostDust: true };

@@ -79,6 +79,7 @@ export interface ContinuumLight extends OnTheWay {
   readonly derivedWith?: LuminosityDistances;
 }
 
+/** The amount that a line was given as, for the first line of its ledger. */
 export interface QuotedLine {
   /** `implied`: worked out backwards from a flux. */
   readonly kind: 'lineFlux' | 'lineLuminosity' | 'starFormationRate' | 'implied';

@@ -18,6 +18,7 @@ export { supernovaPhaseMag } from './sources/supernova.js';
 export { SOURCE_TEMPLATE_FILE_NAMES, sourceTemplates } from './sources/templates.js';
 export type { ReferenceFile, SourceTemplateFiles, SourceTemplates } from './sources/templates.js';
 
+/** A kind of source with its parameters. */
 export type SourceKind =
   | PowerLawSource
   | StarFormingSource

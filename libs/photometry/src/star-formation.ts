@@ -1,8 +1,10 @@
 import { SPEED_OF_LIGHT, type Constant } from './constants.js';
 import { requirePositive } from './domain.js';
 
+/** A published calibration, by author and year. */
 export type StarFormationCalibrationId = 'kennicutt1998' | 'kennicuttEvans2012' | 'madauDickinson2014';
 
+/** A relation between a star-formation rate and its light. */
 export interface StarFormationCalibration {
   readonly id: StarFormationCalibrationId;
   /** The star-formation rate means nothing without the initial mass function it was derived with. */

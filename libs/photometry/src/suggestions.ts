@@ -11,6 +11,7 @@ import {
   type TypicalValues,
 } from './typical-values.js';
 
+/** What can be suggested. */
 export type TypicalValueId =
   | 'ultravioletMagnitude'
   | 'ultravioletSlope'
@@ -38,6 +39,7 @@ export interface TypicalValue {
   readonly derivedWith?: DerivedWith;
 }
 
+/** What is known of the source, so that suggestions can follow it. */
 export interface SuggestionOptions {
   /** All relations if left out. */
   readonly relation?: SizeRelationId;

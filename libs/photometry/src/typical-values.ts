@@ -27,8 +27,10 @@ export interface LuminosityFunctionRow {
   readonly faintEndSlope: number;
 }
 
+/** A published relation of sizes, by author, year and kind of galaxy. */
 export type SizeRelationId = 'shibuya2015' | 'vanDerWel2014Late' | 'vanDerWel2014Early';
 
+/** Half-light radius as powers of 1 + z and of luminosity or mass. */
 export interface SizeRelationRow extends Sourced {
   readonly title: string;
   /** At redshift 0 and the reference luminosity or mass. */
@@ -83,8 +85,10 @@ export interface TypicalValues {
 
 /** Its file under `seed/reference`. */
 export const TYPICAL_VALUES_FILE_NAME = 'typical-values.json';
+/** `typical-values.json`. */
 export type TypicalValuesFile = ReferenceFile<TypicalValues>;
 
+/** M* at a redshift, with what it rests on. */
 export interface TypicalUvMagnitude extends Sourced {
   /** M* of the ultraviolet luminosity function. */
   readonly magnitudeAb: number;
@@ -175,6 +179,7 @@ export function nearestLuminosityFunction(redshift: number, values: TypicalValue
   );
 }
 
+/** What a size depends on beside the redshift. */
 export interface SizeDependence {
   /** For relations by ultraviolet luminosity; that of the relation, −21, if left out. */
   readonly absoluteMagnitudeUv?: number;

@@ -1,6 +1,7 @@
 import { SPEED_OF_LIGHT_KM_S } from './constants.js';
 import { OutOfDomainError, requirePositive, requireRedshift } from './domain.js';
 
+/** A published formula of the refractive index of air. */
 export type AirFormula = 'ciddor1996' | 'morton1991' | 'morton2000';
 
 /** Shortest vacuum wavelength for which the refractivity fits are used: below, air absorbs and the fits were not made. */

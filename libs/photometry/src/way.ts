@@ -119,6 +119,7 @@ export interface FrequencyCurve extends SampledCurve {
 
 const frequencyCurves = new WeakMap<SampledCurve, FrequencyCurve>();
 
+/** λ² f_λ of a spectrum; kept with it, so that lights of one spectrum share it. */
 export function perFrequency(curve: SampledCurve): FrequencyCurve {
   const known = frequencyCurves.get(curve);
   if (known !== undefined) return known;

@@ -3,6 +3,7 @@ import { requirePositive } from '../domain.js';
 import { REST_GRID_HIGH_NM, REST_GRID_LOW_NM, restGrid, sampleOn } from '../rest-grid.js';
 import { caution, type RestSpectrum } from './rest-spectrum.js';
 
+/** A blackbody of a temperature. */
 export interface BlackbodySource {
   readonly kind: 'blackbody';
   readonly temperatureK: number;

@@ -1,6 +1,7 @@
 import { isBelow, restGrid, sampleOn, type Side } from '../rest-grid.js';
 import { caution, type RestSpectrum } from './rest-spectrum.js';
 
+/** Old stars; see `passiveSpectrum`. */
 export interface PassiveSource {
   readonly kind: 'passive';
 }

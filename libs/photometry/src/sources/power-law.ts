@@ -3,6 +3,7 @@ import { LYMAN_LIMIT_NM } from '../lines.js';
 import { REST_GRID_HIGH_NM, REST_GRID_LOW_NM, isBelow, restGrid, sampleOn } from '../rest-grid.js';
 import { caution, type RestSpectrum } from './rest-spectrum.js';
 
+/** A power law with a step at the Lyman limit. */
 export interface PowerLawSource {
   readonly kind: 'powerLaw';
   /** β of f_λ ∝ λ^β. */

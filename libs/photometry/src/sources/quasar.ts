@@ -7,6 +7,7 @@ import { binMeans } from './rebin.js';
 import { caution, type RestSpectrum, type SpectrumCaution } from './rest-spectrum.js';
 import type { SourceTemplates, SpectralLines } from './templates.js';
 
+/** A quasar, by formula or by a composite spectrum. */
 export interface QuasarSource {
   readonly kind: 'quasar';
   readonly template: 'powerLaws' | 'hewettWild2010';
@@ -53,6 +54,7 @@ const REDWARD = caution(
 
 type Templates = Pick<SourceTemplates, 'quasarHewettWild2010' | 'lines'>;
 
+/** The spectrum of a quasar: two power laws with broad lines, or a published composite continued by them. */
 export function quasarSpectrum(
   { template }: QuasarSource,
   templates: Templates,

@@ -46,6 +46,7 @@ export function restLine({ id, label, vacuumWavelengthNm }: SpectralLine, flux: 
   return { id, label, restWavelengthNm: vacuumWavelengthNm, flux, velocityWidthKmS: NARROW_LINE_WIDTH_KM_S };
 }
 
+/** A caution for rest wavelengths from one to another; without them, for all. */
 export function caution(code: string, message: string, lowNm?: number, highNm?: number): SpectrumCaution {
   return {
     code,

@@ -2,6 +2,7 @@ import { limitAt, restGrid, sampleOn } from '../rest-grid.js';
 import { sampledCurve, type SampledCurve } from '../sampled-curve.js';
 import type { RestSpectrum } from './rest-spectrum.js';
 
+/** A spectrum that somebody brought as a table. */
 export interface SampledSource {
   readonly kind: 'sampled';
   readonly label: string;

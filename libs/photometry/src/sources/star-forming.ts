@@ -5,6 +5,7 @@ import { formatSlope } from './power-law.js';
 import { caution, restLine, type RestLine, type RestSpectrum } from './rest-spectrum.js';
 import type { SourceTemplates, SpectralLines } from './templates.js';
 
+/** Young stars with a break and emission lines; see `starFormingSpectrum`. */
 export interface StarFormingSource {
   readonly kind: 'starForming';
   /** β of f_λ ∝ λ^β up to the Balmer break. */

@@ -5,6 +5,7 @@ import { caution, type RestSpectrum } from './rest-spectrum.js';
 import { withGridNodes } from './sampled.js';
 import type { SourceTemplates, SpectrumSeries } from './templates.js';
 
+/** A type Ia supernova on a day of its light curve. */
 export interface SupernovaIaSource {
   readonly kind: 'supernovaIa';
   /** Rest-frame days from the maximum in B, −15 to 60. */

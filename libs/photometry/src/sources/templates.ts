@@ -16,11 +16,13 @@ export interface ReferenceFile<Data> {
   readonly data: Data;
 }
 
+/** Data of a file with one spectrum: f_λ on any scale. */
 export interface SpectrumTable {
   readonly wavelengthsNm: readonly number[];
   readonly fluxPerWavelength: readonly number[];
 }
 
+/** Data of a file with spectra by phase, on one scale. */
 export interface SpectrumSeriesTable {
   /** Rest-frame days from the maximum in B, ascending. */
   readonly phasesDays: readonly number[];
@@ -43,14 +45,17 @@ export const SOURCE_TEMPLATE_FILE_NAMES: Readonly<Record<keyof SourceTemplateFil
   lines: 'lines.json',
 };
 
+/** Every line by its id. */
 export type SpectralLines = Readonly<Record<LineId, SpectralLine>>;
 
+/** A published spectrum. */
 export interface SpectrumTemplate {
   readonly source: string;
   readonly provenance: Provenance;
   readonly curve: SampledCurve;
 }
 
+/** Published spectra by phase. */
 export interface SpectrumSeries {
   readonly source: string;
   readonly provenance: Provenance;
