@@ -109,7 +109,7 @@ test('a list of published quasars travels the whole chain', async ({ browser }) 
       .getByRole('button', { name: 'BR J0355-3811' })
       .click();
     await expect(investigator.getByRole('heading', { name: 'BR J0355-3811', level: 1 })).toBeVisible();
-    await expect(investigator.getByRole('heading', { name: 'Light budget in V' })).toBeVisible();
+    await expect(investigator.getByRole('figure', { name: 'Light budget in V' })).toBeVisible();
     await expect(investigator.getByText('17.97 AB').first()).toBeVisible();
     // z = 4.545: the Lyman limit is at 0.506 µm, so that nothing is left in U and u.
     await expect(investigator.getByText(/No flux in this band: the Lyman break is at/).first()).toBeVisible();
