@@ -158,6 +158,10 @@ export type TeamMemberPatch = z.output<typeof TeamMemberPatch>;
 
 /* ---- History ---- */
 
+/** `subjectId` narrows it to what became of one thing, such as one target. */
+export const ProposalHistoryQuery = ListQuery.extend({ subjectId: Id.optional() });
+export type ProposalHistoryQuery = z.output<typeof ProposalHistoryQuery>;
+
 export const ProposalChange = z
   .object({
     changeId: Id,

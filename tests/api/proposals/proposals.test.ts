@@ -259,6 +259,28 @@ describe('the case', () => {
     expect((await bodies()).at(-1)).toMatchObject({ before: 'Five', after: 'Six' });
   });
 
+  it('narrows to what became of one thing', async () => {
+    const draft = await aDraft(app);
+    const [one, other] = [await aTarget(draft, { name: 'One' }), await aTarget(draft, { name: 'Other' })];
+    await draft.pi
+      .patch(`${draft.base}/targets/${one.targetId}`)
+      .set('If-Match', `"${one.version}"`)
+      .send({ redshift: 3.2 })
+      .expect(200);
+    const of = async (query: string) => (await draft.pi.get(`${draft.base}/history?${query}`).expect(200)).body;
+    expect(await of(`subjectId=${one.targetId}&pageSize=1`)).toMatchObject({
+      rowCount: 2,
+      rows: [{ subjectName: 'One', action: 'changed', changes: [{ field: 'redshift', before: 3, after: 3.2 }] }],
+    });
+    expect((await of(`subjectId=${other.targetId}`)).rows).toMatchObject([{ subjectName: 'Other', action: 'created' }]);
+    expect((await of('')).rowCount).toBeGreaterThanOrEqual(3);
+    // Of another proposal nothing is told, whatever is asked for.
+    const elsewhere = await aDraft(app);
+    const { body } = await elsewhere.pi.get(`${elsewhere.base}/history?subjectId=${one.targetId}`).expect(200);
+    expect(body).toMatchObject({ rows: [], rowCount: 0 });
+    await draft.pi.get(`${draft.base}/history?subjectId=one`).expect(422);
+  });
+
   it('begins another change after a submission', async () => {
     const ready = await aReadyDraft(app);
     await ready.pi.post(`${ready.base}/submissions`).expect(201);

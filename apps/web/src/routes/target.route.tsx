@@ -5,6 +5,7 @@ import { paths } from '../app/paths';
 import { observationQueries } from '../features/observations/api/observations';
 import { TargetObservations } from '../features/observations/components/TargetObservations';
 import { proposalQueries } from '../features/proposals/api/proposals';
+import { LastChanges } from '../features/proposals/components/LastChanges';
 import { distancesBeside, targetQueries } from '../features/targets/api/targets';
 import { TargetLine, TargetSheet } from '../features/targets/components/TargetSheet';
 import { readOnlyReason } from '../features/targets/words';
@@ -13,6 +14,8 @@ import { PageFrame } from '../ui/PageFrame';
 
 /** As many observations of one target as the sheet shows. */
 const pageSize = 100;
+/** As many of its last changes. */
+const lastChangeCount = 5;
 
 /** The sheet of one target. */
 export function Component() {
@@ -27,6 +30,7 @@ export function Component() {
     enabled: target.data !== undefined,
   });
   const report = useQuery({ ...targetQueries.light(proposalId, targetId, bandId), enabled: target.data !== undefined });
+  const history = useQuery(proposalQueries.historyOf(proposalId, { subjectId: targetId, pageSize: lastChangeCount }));
   const observations = useQuery(observationQueries.list(proposalId, { targetId, pageSize }));
   return (
     <PageFrame
@@ -54,6 +58,11 @@ export function Component() {
                 observations={
                   <Loaded query={observations} what="Its observations">
                     {(list) => <TargetObservations proposalId={proposalId} observations={list.rows} />}
+                  </Loaded>
+                }
+                history={
+                  <Loaded query={history} what="Its changes">
+                    {(list) => <LastChanges proposalId={proposalId} list={list} />}
                   </Loaded>
                 }
               />

@@ -21,6 +21,7 @@ function server(target: Target = aTarget(), proposal = aProposal()) {
     [`GET ${own}`]: { body: target },
     [`GET ${own}/light`]: { body: aLightReport() },
     [`GET ${base}/observations`]: { body: { rows: [], rowCount: 0, page: 1, pageSize: 100 } },
+    [`GET ${base}/history`]: { body: { rows: [], rowCount: 0, page: 1, pageSize: 5 } },
     'POST /distances': problem(503, 'unavailable'),
   };
 }
@@ -45,6 +46,29 @@ describe('the target sheet', () => {
     expect(screen.getByText('+0.05 −0.03')).toBeVisible();
     expect(screen.getByText(/when the Universe was 0\.746/)).toBeVisible();
     expect(screen.getByRole('row', { name: /^Luminosity distance 71.?909/ })).toBeVisible();
+  }, 60_000);
+
+  it('ends with its own last changes in words and the way to the whole history', async () => {
+    const row = {
+      changeId: id(90),
+      at: '2027-03-02T20:15:00.000Z',
+      personName: 'Marisol Quintrel',
+      subject: 'target',
+      subjectName: 'CLR J0215−0409',
+      action: 'changed',
+      changes: [{ field: 'light', before: { magnitude: 25.1 }, after: { magnitude: 25.4 } }],
+    };
+    const { seen } = answerWith({
+      ...server(),
+      [`GET ${base}/history`]: { body: { rows: [row], rowCount: 7, page: 1, pageSize: 5 } },
+    });
+    renderRoute(own);
+    const panel = within(await screen.findByRole('region', { name: 'Changes of this target' }, wait));
+    expect(await panel.findByText('Marisol Quintrel')).toBeVisible();
+    expect(panel.getByText('light, magnitude: 25.1 → 25.4')).toBeVisible();
+    expect(panel.getByText(/6 older changes/)).toBeVisible();
+    expect(panel.getByRole('link', { name: /whole history/ })).toHaveAttribute('href', `${base}/history`);
+    expect(seen.find(({ path }) => path.includes('/history?'))?.path).toContain(`subjectId=${id(60)}`);
   }, 60_000);
 
   it('saves only what changed when a field is left, against the version seen, and says so', async () => {

@@ -1,4 +1,4 @@
-import { Id, ListQuery } from '@faintward/contracts/common';
+import { Id } from '@faintward/contracts/common';
 import {
   CaseSection,
   CaseSectionId,
@@ -8,6 +8,7 @@ import {
   Proposal,
   ProposalChangePage,
   ProposalChoices,
+  ProposalHistoryQuery,
   ProposalListQuery,
   ProposalPage,
   ProposalPatch,
@@ -116,7 +117,7 @@ export class ProposalsController {
   history(
     @CurrentPerson() actor: Actor,
     @Param('proposalId', { schema: Id }) proposalId: string,
-    @Query({ schema: ListQuery }) query: ListQuery,
+    @Query({ schema: ProposalHistoryQuery }) query: ProposalHistoryQuery,
   ): Promise<z.infer<typeof ProposalChangePage>> {
     return this.proposals.listHistory(actor, proposalId, query);
   }

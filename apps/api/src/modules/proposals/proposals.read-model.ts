@@ -1,6 +1,10 @@
-import type { ListQuery } from '@faintward/contracts/common';
 import type { CosmologyChoice } from '@faintward/contracts/cosmology';
-import type { ProposalChange, ProposalListQuery, ProposalState } from '@faintward/contracts/proposals';
+import type {
+  ProposalChange,
+  ProposalHistoryQuery,
+  ProposalListQuery,
+  ProposalState,
+} from '@faintward/contracts/proposals';
 import type { TeamAccess } from '@faintward/contracts/permissions';
 import { Injectable } from '@nestjs/common';
 import { aliasedTable, and, asc, desc, eq, gt, ilike, inArray, isNull, lte, or, type SQL, sql } from 'drizzle-orm';
@@ -173,10 +177,14 @@ export class ProposalsReadModel {
   }
 
   /** Changes of a proposal, the newest first unless the query says otherwise. */
-  async listChanges(proposalId: string, query: ListQuery): Promise<{ rows: ProposalChange[]; rowCount: number }> {
+  async listChanges(
+    proposalId: string,
+    query: ProposalHistoryQuery,
+  ): Promise<{ rows: ProposalChange[]; rowCount: number }> {
     const where = and(
       eq(changes.scope, 'proposal'),
       eq(changes.scopeId, proposalId),
+      query.subjectId === undefined ? undefined : eq(changes.subjectId, query.subjectId),
       query.search === undefined
         ? undefined
         : or(ilike(changes.subjectName, containing(query.search)), ilike(nameOf(people), containing(query.search))),

@@ -1,9 +1,9 @@
 import type { CosmologyChoice } from '@faintward/contracts/cosmology';
-import type { ListQuery } from '@faintward/contracts/common';
 import type {
   NewProposal,
   Proposal,
   ProposalChoices,
+  ProposalHistoryQuery,
   ProposalListQuery,
   ProposalPatch,
   ProposalState,
@@ -227,7 +227,7 @@ export class ProposalsService {
     };
   }
 
-  async listHistory(actor: Actor, proposalId: string, query: ListQuery) {
+  async listHistory(actor: Actor, proposalId: string, query: ProposalHistoryQuery) {
     await this.access.requireRead(actor, proposalId);
     const { rows, rowCount } = await this.readModel.listChanges(proposalId, query);
     return toPage(rows, rowCount, query);

@@ -11,6 +11,7 @@ import {
   type CaseSectionId,
   type NewProposal,
   type NewTeamMember,
+  type ProposalHistoryQuery,
   type ProposalPatch,
 } from '@faintward/contracts/proposals';
 import type { TeamAccess } from '@faintward/contracts/permissions';
@@ -76,6 +77,13 @@ export const proposalQueries = {
       queryFn: ({ signal }) =>
         api({ path: `/proposals/${proposalId}/history`, query, schema: ProposalChangePage, signal }),
       placeholderData: keepPreviousData,
+    }),
+  /** The last changes of one thing of it, such as one target. */
+  historyOf: (proposalId: string, query: Partial<ProposalHistoryQuery> & { subjectId: string }) =>
+    queryOptions({
+      queryKey: [...proposalQueries.one(proposalId), 'history', query],
+      queryFn: ({ signal }) =>
+        api({ path: `/proposals/${proposalId}/history`, query, schema: ProposalChangePage, signal }),
     }),
 };
 

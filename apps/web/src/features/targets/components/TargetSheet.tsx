@@ -7,6 +7,7 @@ import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useId, type ReactNode } from 'react';
+import { bySeverity } from '../../../lib/bySeverity';
 import { formatNumber } from '../../../lib/format';
 import { Note } from '../../../ui/Note';
 import { Loaded, SkeletonBlock, type QueryState } from '../../../ui/PageStates';
@@ -14,7 +15,7 @@ import { Panel } from '../../../ui/Panel';
 import { PlainText } from '../../../ui/PlainText';
 import { RedshiftWithUncertainty } from '../../../ui/light/RedshiftWithUncertainty';
 import { LightReportView } from '../../../ui/lightReport/LightReportView';
-import { bySeverity, redshiftDecimals } from '../cells';
+import { redshiftDecimals } from '../cells';
 import { SourceForm } from './SourceForm';
 import { DistanceFigures, HoursUp } from './TargetFigures';
 
@@ -32,6 +33,8 @@ export interface TargetSheetProps {
   onBandChange: (bandId: BandId) => void;
   /** Its observations with their light budgets. */
   observations: ReactNode;
+  /** Its last changes. */
+  history: ReactNode;
 }
 
 /** Where a target is and when its light set out, in one line under its name. */
@@ -70,7 +73,7 @@ export function TargetLine({ target }: { target: Target }) {
 
 /** Everything about one target: what is known of it beside what follows from that. */
 export function TargetSheet(props: TargetSheetProps) {
-  const { proposalId, target, beside, canEdit, readOnlyReason, report, onBandChange, observations } = props;
+  const { proposalId, target, beside, canEdit, readOnlyReason, report, onBandChange, observations, history } = props;
   const { computed } = target;
   const formId = useId();
   return (
@@ -119,6 +122,9 @@ export function TargetSheet(props: TargetSheetProps) {
             <HoursUp target={target} />
           </Panel>
         )}
+        <Panel title="Changes of this target" note="Newest first." flush>
+          {history}
+        </Panel>
       </Stack>
     </Box>
   );
