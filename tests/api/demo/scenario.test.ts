@@ -1,5 +1,5 @@
 import { redshiftDistribution } from '@faintward/photometry';
-import { uncertaintyFaults } from '../../../apps/api/src/modules/targets/redshift-uncertainty-text.js';
+import { uncertaintyFaults } from '../../../apps/api/src/engine/redshift-faults.js';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { angularSeparationDeg } from '@faintward/astronomy';
 import { ModeConfigurationInput, TargetInput } from '@faintward/contracts';

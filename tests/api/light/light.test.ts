@@ -206,3 +206,96 @@ describe('the light of a stored target', () => {
     expect(row('conv70').requestedSeconds).toBeLessThan(row('planck18').requestedSeconds);
   });
 });
+
+describe('what no number can be given for', () => {
+  const narrow = { kind: 'percentiles', p16: 1, p50: 1 + 1e-12, p84: 1 + 2e-12 };
+  it.each([
+    ['a percentile at 0', { kind: 'percentiles', p16: 0, p50: 1, p84: 2 }, 'redshiftUncertainty.p16'],
+    ['a percentile at 30', { kind: 'percentiles', p16: 28, p50: 29, p84: 30 }, 'redshiftUncertainty.p84'],
+    ['percentiles that are nearly one', narrow, 'redshiftUncertainty'],
+    ['a width of nothing', { kind: 'gaussian', sigma: 1e-300 }, 'redshiftUncertainty'],
+    [
+      'a table of nothing',
+      { kind: 'table', redshifts: [1, 2], densities: [5e-324, 0] },
+      'redshiftUncertainty.densities',
+    ],
+    [
+      'a table of too much',
+      { kind: 'table', redshifts: [0, 30], densities: [1e308, 1e308] },
+      'redshiftUncertainty.densities',
+    ],
+    ['a table of no width', { kind: 'table', redshifts: [0, 1e-300], densities: [1, 1] }, 'redshiftUncertainty'],
+  ])('refuses %s', async (_, redshiftUncertainty, path) => {
+    const { body } = await report({ redshift: 7, light: GALAXY, redshiftUncertainty }).expect(422);
+    expect(paths(body)).toEqual([path]);
+  });
+
+  it.each([
+    [{ kind: 'lineFlux', fluxErgSCm2: 5e-324, restWavelengthNm: 121.567 }, 'light.fluxErgSCm2'],
+    [{ kind: 'lineLuminosity', luminosityErgS: 1e-300, restWavelengthNm: 121.567 }, 'light.luminosityErgS'],
+    [{ kind: 'starFormationRate', solarMassesPerYear: 5e-324 }, 'light.solarMassesPerYear'],
+    [
+      { kind: 'starFormationRate', solarMassesPerYear: 1, tracer: 'lymanAlpha', escapeFraction: 1e-300 },
+      'light.escapeFraction',
+    ],
+    [{ ...GALAXY, magnification: 1e-300 }, 'light.magnification'],
+  ])('refuses an amount that is next to nothing (case %#)', async (light, path) => {
+    const { body } = await report({ redshift: 7, light }).expect(422);
+    expect(paths(body)).toEqual([path]);
+  });
+
+  it('refuses a size that is next to nothing', async () => {
+    const extent = { kind: 'sersic', halfLightRadius: 1e-300, unit: 'arcsec', axisRatio: 1e-300 };
+    const { body } = await report({ redshift: 7, light: GALAXY, extent }).expect(422);
+    expect(paths(body)).toEqual(['extent.halfLightRadius', 'extent.axisRatio']);
+  });
+
+  it('leaves out a circle that holds nothing, and says where dust leaves nothing', async () => {
+    const { body: circle } = await report({ redshift: 7, light: GALAXY, apertureRadiusArcsec: 1e-300 }).expect(200);
+    expect(circle.ledger.aperture).toBeNull();
+    const dusty = {
+      kind: 'absoluteMagnitude',
+      magnitude: 60,
+      restWavelengthNm: 1e6,
+      spectrum: { kind: 'blackbody', temperatureK: 100 },
+      hostDust: { law: 'ccm1989', colourExcessMag: 10, totalToSelective: 6 },
+      galacticDust: { colourExcessMag: 10 },
+      includes: { hostDust: false, galacticDust: false, lensing: false },
+    };
+    for (const redshift of [1e-9, 1, 7, 30]) {
+      const { body } = await report({ redshift, light: dusty, bandId: 'U' }).expect(200);
+      expect(JSON.stringify(body)).not.toMatch(/Infinity|NaN/);
+      for (const band of body.bands) expect(band.magnitudeAb === null).toBe(band.reason !== null);
+    }
+  });
+});
+
+describe('twenty thousand draws', () => {
+  it('leave others their turn', async () => {
+    const light = {
+      kind: 'typical',
+      of: 'supernovaIa',
+      spectrum: { kind: 'supernovaIa' },
+      hostDust: { colourExcessMag: 0.2 },
+      galacticDust: { colourExcessMag: 0.1 },
+      includes: { hostDust: false, galacticDust: false, lensing: false },
+    };
+    let longestMs = 0;
+    let last = performance.now();
+    const clock = setInterval(() => {
+      const now = performance.now();
+      longestMs = Math.max(longestMs, now - last);
+      last = now;
+    }, 1);
+    const { body } = await report({
+      redshift: 1,
+      redshiftUncertainty: { kind: 'gaussian', sigma: 0.1 },
+      light,
+      sampleCount: 20_000,
+    }).expect(200);
+    clearInterval(clock);
+    expect(body.uncertainty.magnitudeHistogram.counts.reduce((sum: number, count: number) => sum + count)).toBe(20_000);
+    // All at once they take seconds; in slices of tens of milliseconds, on a machine that is busy with other tests too.
+    expect(longestMs).toBeLessThan(600);
+  });
+});

@@ -1,6 +1,7 @@
 import { type BandId, Light, RedshiftUncertainty } from '@faintward/contracts/light';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { uncertaintyFaults } from '../../../apps/api/src/engine/redshift-faults.js';
 import { addDecimals, subtractDecimals } from '../../../apps/api/src/modules/targets/exact-decimals.js';
 import { formatBrightness } from '../../../apps/api/src/modules/targets/brightness-format.js';
 import { parseBrightness } from '../../../apps/api/src/modules/targets/brightness-text.js';
@@ -8,7 +9,6 @@ import {
   formatRedshiftUncertainty,
   movedWithRedshift,
   parseRedshiftUncertainty,
-  uncertaintyFaults,
 } from '../../../apps/api/src/modules/targets/redshift-uncertainty-text.js';
 
 // −0 is no number that JSON or a person could send.

@@ -124,8 +124,8 @@ export class DemoWriter {
   private async writeSpectra(proposal: ProposalRow): Promise<void> {
     const createdBy = principalOf(proposal);
     if (createdBy === null) throw new RangeError(`Proposal ${proposal.key} has no principal investigator.`);
-    const rows = proposal.spectra.map(({ key, name, source, text, observedAtRedshift }) => {
-      const { wavelengthsNm, fluxPerNm, contentHash, notices } = readSpectrumText({
+    const reading = proposal.spectra.map(async ({ key, name, source, text, observedAtRedshift }) => {
+      const { wavelengthsNm, fluxPerNm, contentHash, notices } = await readSpectrumText({
         text,
         wavelengthUnit: null,
         fluxKind: 'perWavelength',
@@ -149,7 +149,7 @@ export class DemoWriter {
         createdAt: daysFrom(proposal.createdAt, 0.05),
       };
     });
-    await this.insert(spectra, rows);
+    await this.insert(spectra, await Promise.all(reading));
   }
 
   private uploadedOf(proposal: ProposalRow): Promise<UploadedSpectra> {

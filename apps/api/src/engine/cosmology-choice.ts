@@ -4,7 +4,7 @@ import type { Response } from '@faintward/photometry';
 import { type ChosenCosmology, chooseCosmology } from './cosmologies.js';
 import { lightFaults, isIntrinsic, type LightSetting } from './light.js';
 import type { ReportInputs } from './light-report.js';
-import { arrive, ultravioletMagnitudeOf } from './source.js';
+import { arrive, magnitudeIn, ultravioletMagnitudeOf } from './source.js';
 
 /** The presets, and the cosmology in use where it is none of them. */
 export function comparedCosmologies(chosen: ChosenCosmology): ChosenCosmology[] {
@@ -24,7 +24,7 @@ export function compareCosmologies(
   const rows = comparedCosmologies(setting.cosmology).map((cosmology) => {
     const [distances] = distanceRows(cosmology.model, [redshift]);
     const arriving = isUsable ? arrive(light, extent, { ...setting, cosmology }) : undefined;
-    const found = arriving === undefined || response === undefined ? undefined : arriving.magnitudeIn(response);
+    const found = arriving === undefined || response === undefined ? undefined : magnitudeIn(arriving, response);
     return {
       cosmologyId: cosmology.id,
       title: cosmology.title,

@@ -16,6 +16,7 @@ import {
   type SampledSource,
   type SourceTemplates,
   sourceTemplates,
+  supernovaPhaseMag,
   type SpectralLine,
   type TypicalValues,
 } from '@faintward/photometry';
@@ -34,6 +35,8 @@ export interface LightData {
   /** Kept: making one takes a millisecond, and lists of thousands use a few. */
   restSpectrumOf(spectrum: Exclude<Spectrum, { kind: 'uploaded' }>): RestSpectrum;
   restSpectrumOfPoints(source: SampledSource): RestSpectrum;
+  /** How much fainter in B a type Ia supernova is than at its maximum. Kept: every draw of a redshift asks for the same. */
+  supernovaPhaseMagOf(phaseDays: number): number;
 }
 
 const KEPT_SPECTRA = 500;
@@ -55,6 +58,7 @@ function makeLightData(): LightData {
   const templates = sourceTemplates(files);
   const bands = createBands(files.bands);
   const kept = new Map<string, RestSpectrum>();
+  let phase: { days: number; mag: number } | undefined;
   return {
     version,
     bands: Object.fromEntries(
@@ -77,6 +81,10 @@ function makeLightData(): LightData {
         }
       }
       return found;
+    },
+    supernovaPhaseMagOf(days) {
+      if (phase?.days !== days) phase = { days, mag: supernovaPhaseMag(days, bands.B.curve, templates) };
+      return phase.mag;
     },
     restSpectrumOfPoints: (source) => restSpectrum(source, templates, jumpsNm),
   };

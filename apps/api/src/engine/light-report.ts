@@ -36,7 +36,16 @@ import { lightFaults, type UploadedSpectra } from './light.js';
 import { lightData } from './light-data.js';
 import { observedLines } from './observed-lines.js';
 import { uncertaintyOf } from './light-uncertainty.js';
-import { arrive, defaultBandOf, lightNotices, ultravioletMagnitudeOf } from './source.js';
+import { uncertaintyFaults } from './redshift-faults.js';
+import {
+  absoluteMagnitudeAt,
+  arrive,
+  defaultBandOf,
+  lightNotices,
+  magnitudeIn,
+  TOO_FAINT,
+  ultravioletMagnitudeOf,
+} from './source.js';
 import { suggestionsAt } from './suggestions.js';
 
 /** What a report is made from beside its request: all that a stored target and a passing visitor do not share. */
@@ -47,14 +56,15 @@ export interface ReportSetting {
 
 export type ReportInputs = Omit<LightReportRequest, 'cosmology'>;
 
-/** Everything that can be said of a source's light. Some tens of milliseconds, most of them for the uncertainty. */
-export function lightReport(inputs: ReportInputs, { cosmology, uploaded }: ReportSetting): LightReport {
+/** Everything that can be said of a source's light, in slices of some tens of milliseconds, most of them for the uncertainty. */
+export async function lightReport(inputs: ReportInputs, { cosmology, uploaded }: ReportSetting): Promise<LightReport> {
   const { redshift, light, extent, seeingArcsec } = inputs;
   const data = lightData();
   const [distances] = distanceRows(cosmology.model, [redshift]);
   if (distances === undefined) throw new Error('A batch of one redshift gave no row.');
   const setting = { redshift, cosmology, uploaded };
-  const faults = lightFaults(inputs);
+  const faults = lightFaults({ ...inputs, uploaded });
+  const unusableRedshift = uncertaintyFaults(inputs);
   const arriving = light === null || faults.length > 0 ? undefined : arrive(light, extent, setting);
   const range = arriving === undefined || light === null ? undefined : rangeOf(inputs.bandId, light, arriving);
 
@@ -75,6 +85,12 @@ export function lightReport(inputs: ReportInputs, { cosmology, uploaded }: Repor
   const magnitudeAb = ledger?.totalMagnitudeAb ?? null;
   const notices: Notice[] = [
     ...faults.map(({ path, message }) => ({ code: 'lightUnusable', message, severity: 'error' as const, field: path })),
+    ...unusableRedshift.map(({ path, message }) => ({
+      code: 'uncertaintyUnusable',
+      message,
+      severity: 'error' as const,
+      field: path,
+    })),
     ...(light === null ? [] : lightNotices(light)),
     ...(arriving === undefined || range === undefined ? [] : cautionsOf(arriving, range.response)),
   ];
@@ -98,9 +114,9 @@ export function lightReport(inputs: ReportInputs, { cosmology, uploaded }: Repor
     atmosphere: data.atmosphere.map(({ label, kind, lowNm, highNm }) => ({ label, kind, lowNm, highNm })),
     image: imageOf(extent, size, magnitudeAb, fwhmArcsec, redshift),
     uncertainty:
-      light === null || arriving === undefined || range === undefined
+      light === null || arriving === undefined || range === undefined || unusableRedshift.length > 0
         ? null
-        : uncertaintyOf(inputs, light, setting, range.response),
+        : await uncertaintyOf(inputs, light, setting, range.response),
     cosmologies: compareCosmologies(inputs, setting, range?.response),
     suggestions: suggestionsAt(redshift, cosmology, { absoluteMagnitudeUv: uvMagnitude }),
     notices,
@@ -142,7 +158,9 @@ function ledgerOf(
 ): LightLedger {
   const ledger = new Ledger();
   // From the luminosity on, also where that is only implied: where every magnitude went.
-  const reason = arriving.addStepsFromSource(ledger, response) ?? null;
+  const dark = arriving.addStepsFromSource(ledger, response);
+  const steps = ledger.steps.filter(({ deltaMag, totalMag }) => Number.isFinite(deltaMag) && Number.isFinite(totalMag));
+  const reason = dark ?? (steps.length < ledger.steps.length ? TOO_FAINT : null);
   const total = reason === null ? ledger.totalMag : null;
   const aperture =
     total === null || extent.kind === 'uniform' ? null : apertureOf(size, fwhmArcsec, apertureRadiusArcsec);
@@ -150,12 +168,13 @@ function ledgerOf(
     label,
     bandId,
     wavelengthNm: arriving.kind === 'line' ? arriving.observedWavelengthNm : response.pivotWavelengthNm,
-    steps: ledger.steps.map((step) => ({ ...step, inputs: [...step.inputs] })),
+    steps: steps.map((step) => ({ ...step, inputs: [...step.inputs] })),
     totalMagnitudeAb: total,
     lineFluxErgSCm2: arriving.kind === 'line' ? (arriving.fluxErgSCm2() ?? null) : null,
     reason,
     aperture:
-      aperture === null || total === null
+      // A circle so small that the computer finds nothing in it is none.
+      aperture === null || total === null || !(aperture.enclosedFraction > 0)
         ? null
         : { ...aperture, seeingArcsec, magnitudeAb: total - 2.5 * Math.log10(aperture.enclosedFraction) },
   };
@@ -188,12 +207,12 @@ function absoluteMagnitudeOf(arriving: ArrivingLight | undefined, wavelengthNm: 
   const { at, frame } = arriving.light;
   const isQuotedAtRest = frame === 'rest' && at.kind === 'wavelength';
   const restNm = isQuotedAtRest ? at.wavelengthNm : wavelengthNm / (1 + arriving.redshift);
-  return arriving.absoluteMagnitudeAt(restNm) ?? null;
+  return absoluteMagnitudeAt(arriving, restNm) ?? null;
 }
 
 function bandsOf(arriving: ArrivingLight): LightReport['bands'] {
   return Object.values(lightData().bands).map((band) => {
-    const found = arriving.magnitudeIn(band.response);
+    const found = magnitudeIn(arriving, band.response);
     const magnitudeAb = typeof found === 'number' ? found : null;
     const transmission = arriving.kind === 'line' ? undefined : arriving.intergalacticTransmission(band.response);
     return {

@@ -6,8 +6,10 @@ import {
   redshiftDistribution,
   type Response,
   sampleLight,
+  type LightSampling,
 } from '@faintward/photometry';
 import { type LightSetting, resolveLight } from './light.js';
+import { mapInSlices } from './slices.js';
 import { lightData } from './light-data.js';
 import type { ReportInputs } from './light-report.js';
 
@@ -17,19 +19,24 @@ const CURVE_POINTS = 240;
 const HISTOGRAM_BINS = 30;
 const SAME_LINE = 1e-4;
 
+/** Draws that are spread evenly together: what half a slice of time suffices for. */
+const BATCH_DRAWS = 250;
+/** Keeps the numbers of batches apart from those of neighbouring seeds. */
+const SEED_STEP = 1_000_003;
+
 /** What redshift and brightness leave open, by draws; null where both are certain. */
-export function uncertaintyOf(
+export async function uncertaintyOf(
   inputs: ReportInputs,
   light: Light,
   setting: LightSetting,
   response: Response,
-): LightUncertainty | null {
+): Promise<LightUncertainty | null> {
   const { redshift, redshiftUncertainty, extent, sampleCount, seed } = inputs;
   const sigmaMag = light.sigmaMag ?? 0;
   const sigmaLnMagnification = light.sigmaLnMagnification ?? 0;
   if (redshiftUncertainty === null && sigmaMag === 0 && sigmaLnMagnification === 0) return null;
   const distribution = redshiftDistribution(redshift, redshiftUncertainty);
-  const samples = sampleLight({
+  const samples = await sampleInBatches({
     lightAt: (drawn) => resolveLight(light, { ...setting, redshift: drawn }),
     redshifts: distribution,
     sigmaMag,
@@ -74,6 +81,26 @@ export function uncertaintyOf(
     },
     magnitudeHistogram: histogramOf(magnitudesAb),
   };
+}
+
+/** Draws in batches, each spread evenly over the distributions, with turns for others in between. What is too faint for a number is dark. */
+async function sampleInBatches(
+  sampling: LightSampling,
+): Promise<{ redshifts: Float64Array; magnitudesAb: Float64Array }> {
+  const { sampleCount, seed } = sampling;
+  const redshifts = new Float64Array(sampleCount);
+  const magnitudesAb = new Float64Array(sampleCount);
+  const starts = Array.from({ length: Math.ceil(sampleCount / BATCH_DRAWS) }, (_, batch) => batch * BATCH_DRAWS);
+  await mapInSlices(starts, (start, batch) => {
+    const size = Math.min(BATCH_DRAWS, sampleCount - start);
+    const drawn = sampleLight({ ...sampling, sampleCount: size, seed: seed + batch * SEED_STEP });
+    redshifts.set(drawn.redshifts, start);
+    magnitudesAb.set(
+      drawn.magnitudesAb.map((magnitude) => (Number.isFinite(magnitude) ? magnitude : NaN)),
+      start,
+    );
+  });
+  return { redshifts, magnitudesAb };
 }
 
 function linesOf(light: Light, setting: LightSetting): { lineId: string; label: string; restNm: number }[] {

@@ -14,7 +14,6 @@ import {
   type RestSpectrum,
   type SourceLight,
   STAR_FORMATION_CALIBRATIONS,
-  supernovaPhaseMag,
   typicalUvMagnitude,
   ultravioletFromStarFormation,
 } from '@faintward/photometry';
@@ -83,8 +82,10 @@ export function lightFaults(
 ): FieldError[] {
   const faults: FieldError[] = [];
   const fault = (path: string, message: string) => faults.push({ path: `${prefix}${path}`, message });
+  addExtentFaults(extent, fault);
   if (light !== null) {
     addLightFaults(light, fault);
+    addFaintnessFaults(light, fault);
     const spectrumId = uploadedSpectrumOf(light);
     if (uploaded !== undefined && spectrumId !== undefined && !uploaded.has(spectrumId)) {
       fault('light.spectrum.spectrumId', 'This spectrum is not among those of the proposal.');
@@ -104,7 +105,56 @@ export function lightFaults(
   return faults;
 }
 
-function addLightFaults(light: Light, fault: (path: string, message: string) => void): void {
+/** Below these a number is a slip of the pen, and products of several are too small for the computer to hold. */
+const LEAST = {
+  magnification: 1e-6,
+  fluxErgSCm2: 1e-40,
+  luminosityErgS: 1,
+  solarMassesPerYear: 1e-12,
+  escapeFraction: 1e-9,
+  restEquivalentWidthNm: 1e-9,
+  halfLightRadius: 1e-6,
+  axisRatio: 1e-3,
+} as const;
+
+type AddFault = (path: string, message: string) => void;
+
+function addFaintnessFaults(light: Light, fault: AddFault): void {
+  const atLeast = (path: string, value: number, least: number) => {
+    if (value < least) fault(`light.${path}`, `Values from ${least} on are used; ${value} was given.`);
+  };
+  atLeast('magnification', light.magnification, LEAST.magnification);
+  switch (light.kind) {
+    case 'lineFlux':
+      atLeast('fluxErgSCm2', light.fluxErgSCm2, LEAST.fluxErgSCm2);
+      break;
+    case 'lineLuminosity':
+      atLeast('luminosityErgS', light.luminosityErgS, LEAST.luminosityErgS);
+      break;
+    case 'starFormationRate':
+      atLeast('solarMassesPerYear', light.solarMassesPerYear, LEAST.solarMassesPerYear);
+      if (light.tracer === 'lymanAlpha') atLeast('escapeFraction', light.escapeFraction ?? 1, LEAST.escapeFraction);
+      break;
+    case 'apparentMagnitude':
+    case 'absoluteMagnitude':
+    case 'typical':
+  }
+  if ('continuum' in light && light.continuum?.kind === 'equivalentWidth') {
+    const { restEquivalentWidthNm } = light.continuum;
+    atLeast('continuum.restEquivalentWidthNm', restEquivalentWidthNm, LEAST.restEquivalentWidthNm);
+  }
+}
+
+function addExtentFaults(extent: Extent, fault: AddFault): void {
+  if (extent.kind !== 'sersic' && extent.kind !== 'typical') return;
+  const atLeast = (path: string, value: number, least: number) => {
+    if (value < least) fault(`extent.${path}`, `Values from ${least} on are used; ${value} was given.`);
+  };
+  if (extent.kind === 'sersic') atLeast('halfLightRadius', extent.halfLightRadius, LEAST.halfLightRadius);
+  atLeast('axisRatio', extent.axisRatio, LEAST.axisRatio);
+}
+
+function addLightFaults(light: Light, fault: AddFault): void {
   if (isIntrinsic(light) && light.includes.galacticDust) {
     fault(
       'light.includes.galacticDust',
@@ -293,7 +343,7 @@ function typicalLight(
   }
   const { peakMagnitudeVega, source, derivedWith: ladder } = data.typical.supernovaIa;
   const phaseDays = light.spectrum.kind === 'supernovaIa' ? light.spectrum.phaseDays : 0;
-  const phaseMag = supernovaPhaseMag(phaseDays, data.bands.B.response.curve, data.templates);
+  const phaseMag = data.supernovaPhaseMagOf(phaseDays);
   return {
     kind: 'continuum',
     frame: 'rest',

@@ -1,7 +1,7 @@
 import type { Notice } from '@faintward/contracts/common';
 import type { BandId, Extent, Light } from '@faintward/contracts/light';
 import type { InstrumentMode } from '@faintward/exposure';
-import { type ArrivingLight, arrivingLight } from '@faintward/photometry';
+import { type ArrivingLight, arrivingLight, type NoLight, type Response } from '@faintward/photometry';
 import { isLine, resolveLight, type LightSetting } from './light.js';
 import { lightData } from './light-data.js';
 
@@ -17,9 +17,29 @@ export function arrive(light: Light, extent: Extent, setting: LightSetting, mode
   return arrivingLight(source, setting.redshift, setting.cosmology.distances, extent.kind === 'uniform');
 }
 
+/** What dust or the tail of a spectrum leaves where it is less than the computer can hold. */
+export const TOO_FAINT: NoLight = {
+  code: 'noFluxInBand',
+  message:
+    'Next to nothing of this light arrives here: dust or the shape of its spectrum leaves too little for a number.',
+};
+
+/** AB magnitude above the atmosphere, or why there is none; always a number that can be written down. */
+export function magnitudeIn(arriving: ArrivingLight, response: Response): number | NoLight {
+  const found = arriving.magnitudeIn(response);
+  return typeof found === 'number' && !Number.isFinite(found) ? TOO_FAINT : found;
+}
+
 /** Absolute ultraviolet magnitude, where the light says one. */
 export function ultravioletMagnitudeOf(arriving: ArrivingLight): number | undefined {
-  return arriving.kind === 'line' ? undefined : arriving.absoluteMagnitudeAt(FAR_ULTRAVIOLET_NM);
+  return absoluteMagnitudeAt(arriving, FAR_ULTRAVIOLET_NM);
+}
+
+/** Of a continuum, where it has light at this rest wavelength. */
+export function absoluteMagnitudeAt(arriving: ArrivingLight, restWavelengthNm: number): number | undefined {
+  if (arriving.kind === 'line') return undefined;
+  const found = arriving.absoluteMagnitudeAt(restWavelengthNm);
+  return found === undefined || Number.isFinite(found) ? found : undefined;
 }
 
 /** Observed wavelength that a light is quoted at, for choosing a band to look at it in. */
@@ -46,8 +66,8 @@ export function defaultBandOf(light: Light, arriving: ArrivingLight): BandId {
     return distance(band) < distance(best) ? band : best;
   });
   // A continuum quoted far outside every band, or in a dark one, is looked at where it shines.
-  if (typeof arriving.magnitudeIn(nearest.response) === 'number') return nearest.id;
-  return preferred.find((band) => typeof arriving.magnitudeIn(band.response) === 'number')?.id ?? nearest.id;
+  if (typeof magnitudeIn(arriving, nearest.response) === 'number') return nearest.id;
+  return preferred.find((band) => typeof magnitudeIn(arriving, band.response) === 'number')?.id ?? nearest.id;
 }
 
 /** What must be said of a light wherever it is shown. */

@@ -18,7 +18,15 @@ import { apparentMagnitudeAbOf, lightFaults, NO_UPLOADS, type UploadedSpectra } 
 import { lightData } from './light-data.js';
 import { meanSurfaceBrightnessOf } from './light-report.js';
 import { mapInSlices } from './slices.js';
-import { arrive, defaultBandOf, GRID_BANDS, lightNotices, ultravioletMagnitudeOf } from './source.js';
+import {
+  absoluteMagnitudeAt,
+  arrive,
+  defaultBandOf,
+  GRID_BANDS,
+  lightNotices,
+  magnitudeIn,
+  ultravioletMagnitudeOf,
+} from './source.js';
 
 /** The part of a target that its columns are computed from. */
 export interface TargetInputs {
@@ -135,15 +143,15 @@ function magnitudesOf({ light, extent }: TargetInputs, arriving: ArrivingLight |
   }
   const { bands } = lightData();
   const bandId = defaultBandOf(light, arriving);
-  const apparent = arriving.magnitudeIn(bands[bandId].response);
+  const apparent = magnitudeIn(arriving, bands[bandId].response);
   const hasMagnitude = typeof apparent === 'number';
   return {
     apparentMagnitudeAb: hasMagnitude ? apparent : null,
     magnitudeLabel: hasMagnitude ? bandId : null,
-    absoluteMagnitudeAb: arriving.absoluteMagnitudeAt(quotedRestWavelengthNm(arriving)) ?? null,
+    absoluteMagnitudeAb: absoluteMagnitudeAt(arriving, quotedRestWavelengthNm(arriving)) ?? null,
     bandMagnitudesAb: Object.fromEntries(
       GRID_BANDS.map((id) => {
-        const found = id === bandId ? apparent : arriving.magnitudeIn(bands[id].response);
+        const found = id === bandId ? apparent : magnitudeIn(arriving, bands[id].response);
         return [id, typeof found === 'number' ? found : null];
       }),
     ),
@@ -260,7 +268,7 @@ function addLightWarnings(
   }
   const { at, frame } = arriving.light;
   if (at.kind !== 'response' || frame !== 'observed') return;
-  const found = arriving.magnitudeIn(at.response);
+  const found = magnitudeIn(arriving, at.response);
   if (typeof found !== 'number') {
     warn('beyondLymanBreak', `${found.message} Is the band or the redshift another one?`, 'light.bandId');
   }

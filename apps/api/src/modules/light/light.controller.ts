@@ -26,7 +26,7 @@ export class LightController {
   @Public()
   @RateLimit('calculator')
   @Answers(LightReport, { status: 200 })
-  report(@Body({ schema: LightReportRequest }) request: LightReportRequest): LightReport {
+  report(@Body({ schema: LightReportRequest }) request: LightReportRequest): Promise<LightReport> {
     return this.light.report(request);
   }
 
@@ -45,7 +45,7 @@ export class LightController {
   @Answers(RedshiftDistributionReading, { status: 200 })
   readRedshiftDistribution(
     @Body({ schema: RedshiftDistributionRequest }) request: z.output<typeof RedshiftDistributionRequest>,
-  ): RedshiftDistributionReading {
+  ): Promise<RedshiftDistributionReading> {
     return this.light.readRedshiftDistribution(request.text);
   }
 

@@ -12,6 +12,7 @@ import { Injectable } from '@nestjs/common';
 import { chooseCosmology } from '../../engine/cosmologies.js';
 import { lightFaults, NO_UPLOADS } from '../../engine/light.js';
 import { lightReport } from '../../engine/light-report.js';
+import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { suggestionsAt } from '../../engine/suggestions.js';
 import { invalidField } from '../../platform/domain-error.js';
 import { validationFailed } from '../../platform/validation.js';
@@ -22,12 +23,12 @@ import { readTypedLight } from './typed-light.js';
 @Injectable()
 export class LightService {
   /** @throws {DomainError} `validation-failed` naming the inputs that cannot be computed with */
-  report({ cosmology: choice, ...inputs }: LightReportRequest): LightReport {
+  async report({ cosmology: choice, ...inputs }: LightReportRequest): Promise<LightReport> {
     const cosmology = chooseCosmology(choice);
-    const faults = lightFaults({ ...inputs, uploaded: NO_UPLOADS });
+    const faults = [...lightFaults({ ...inputs, uploaded: NO_UPLOADS }), ...uncertaintyFaults(inputs)];
     if (faults.length > 0) throw validationFailed(faults);
     try {
-      return lightReport(inputs, { cosmology, uploaded: NO_UPLOADS });
+      return await lightReport(inputs, { cosmology, uploaded: NO_UPLOADS });
     } catch (error) {
       if (!(error instanceof AntipodeError)) throw error;
       throw invalidField(
@@ -41,7 +42,7 @@ export class LightService {
     return readTypedLight(request);
   }
 
-  readRedshiftDistribution(text: string): RedshiftDistributionReading {
+  readRedshiftDistribution(text: string): Promise<RedshiftDistributionReading> {
     return readRedshiftDistribution(text);
   }
 

@@ -1,9 +1,11 @@
 import type { Notice } from '@faintward/contracts/common';
 import { MAX_DISTRIBUTION_POINTS } from '@faintward/contracts/light';
 import type { RedshiftDistributionReading } from '@faintward/contracts/light-report';
-import { HIGHEST_REDSHIFT, OutOfDomainError, redshiftDistribution } from '@faintward/photometry';
-import { parseDecimal, readDelimitedText, TableRefused } from '@faintward/tables';
+import { HIGHEST_REDSHIFT, redshiftDistribution } from '@faintward/photometry';
+import { parseDecimal, TableRefused } from '@faintward/tables';
+import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { invalidField } from '../../platform/domain-error.js';
+import { readNumberTable } from '../../platform/number-tables.js';
 
 interface Point {
   row: number;
@@ -17,9 +19,9 @@ interface Point {
  *
  * @throws {DomainError} `validation-failed` at `text`, naming the row that cannot be used
  */
-export function readRedshiftDistribution(text: string): RedshiftDistributionReading {
+export async function readRedshiftDistribution(text: string): Promise<RedshiftDistributionReading> {
   const notices: Notice[] = [];
-  const points = readPoints(text, notices);
+  const points = await readPoints(text, notices);
   points.forEach(({ redshift, row }, index) => {
     const before = points[index - 1];
     if (before === undefined || before.redshift < redshift) return;
@@ -31,22 +33,20 @@ export function readRedshiftDistribution(text: string): RedshiftDistributionRead
     redshifts: points.map(({ redshift }) => redshift),
     densities: points.map(({ density }) => density),
   };
-  try {
-    const { quantile, peaks } = redshiftDistribution(points[0]?.redshift ?? 0, uncertainty);
-    return {
-      uncertainty,
-      quantiles: { p16: quantile(0.16), p50: quantile(0.5), p84: quantile(0.84) },
-      peaks: peaks.map(({ redshift, probability }) => ({ redshift, probability })),
-      notices,
-    };
-  } catch (error) {
-    if (!(error instanceof OutOfDomainError)) throw error;
-    throw refusal(`This is no distribution: ${error.field} must be ${error.allowed}.`);
-  }
+  const redshift = points[0]?.redshift ?? 0;
+  const [fault] = uncertaintyFaults({ redshift, redshiftUncertainty: uncertainty });
+  if (fault !== undefined) throw refusal(`This is no distribution (${fault.path}). ${fault.message}`);
+  const { quantile, peaks } = redshiftDistribution(redshift, uncertainty);
+  return {
+    uncertainty,
+    quantiles: { p16: quantile(0.16), p50: quantile(0.5), p84: quantile(0.84) },
+    peaks: peaks.map((peak) => ({ redshift: peak.redshift, probability: peak.probability })),
+    notices,
+  };
 }
 
-function readPoints(text: string, notices: Notice[]): Point[] {
-  const { columns, rows, rowNumbers } = readTable(text);
+async function readPoints(text: string, notices: Notice[]): Promise<Point[]> {
+  const { columns, rows, rowNumbers } = await readTable(text);
   if (columns.length > 2) {
     notices.push({
       code: 'moreColumns',
@@ -67,9 +67,9 @@ function readPoints(text: string, notices: Notice[]): Point[] {
   return points.sort((a, b) => a.redshift - b.redshift);
 }
 
-function readTable(text: string) {
+async function readTable(text: string) {
   try {
-    const table = readDelimitedText(text, { maxRows: MAX_DISTRIBUTION_POINTS });
+    const table = await readNumberTable(text, MAX_DISTRIBUTION_POINTS);
     if (table.columns.length < 2) {
       throw refusal('A distribution has two columns, redshift and probability density; this text has one.');
     }

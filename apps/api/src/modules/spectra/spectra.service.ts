@@ -31,8 +31,8 @@ export class SpectraService {
   /** @throws {DomainError} `validation-failed` at `text` for what is no spectrum */
   async create(actor: Actor, proposalId: string, input: NewSpectrum): Promise<StoredSpectrum> {
     await this.access.requireTargets(actor, proposalId);
-    // Before the transaction begins: fifty thousand lines take longer to read than others should wait.
-    const { wavelengthsNm, fluxPerNm, contentHash, notices } = readSpectrumText(input);
+    // Before the transaction begins, which keeps others from the database: fifty thousand lines take a second to read.
+    const { wavelengthsNm, fluxPerNm, contentHash, notices } = await readSpectrumText(input);
     const { name, source, observedAtRedshift } = input;
     return this.database.transaction(async () => {
       await this.access.requireTargetsForChange(actor, proposalId);

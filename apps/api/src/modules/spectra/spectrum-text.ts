@@ -2,8 +2,10 @@ import { createHash } from 'node:crypto';
 import type { Notice } from '@faintward/contracts/common';
 import { MAX_SPECTRUM_POINTS, type NewSpectrum } from '@faintward/contracts/light-report';
 import { SHORTEST_AIR_WAVELENGTH_NM, vacuumFromAirNm } from '@faintward/photometry';
-import { type DelimitedTable, headerUnit, parseDecimal, readDelimitedText, TableRefused } from '@faintward/tables';
+import { type DelimitedTable, headerUnit, parseDecimal, TableRefused } from '@faintward/tables';
+import { mapInSlices } from '../../engine/slices.js';
 import { invalidField } from '../../platform/domain-error.js';
+import { readNumberTable } from '../../platform/number-tables.js';
 
 export type WavelengthUnit = 'nm' | 'angstrom' | 'micron';
 
@@ -34,16 +36,19 @@ interface Point {
  *
  * @throws {DomainError} `validation-failed` at `text`, naming the row that cannot be used
  */
-export function readSpectrumText({
+export async function readSpectrumText({
   text,
   wavelengthUnit,
   fluxKind,
   isAirWavelength,
   observedAtRedshift,
-}: Pick<NewSpectrum, 'text' | 'wavelengthUnit' | 'fluxKind' | 'isAirWavelength' | 'observedAtRedshift'>): ReadSpectrum {
-  const table = readTable(text);
+}: Pick<
+  NewSpectrum,
+  'text' | 'wavelengthUnit' | 'fluxKind' | 'isAirWavelength' | 'observedAtRedshift'
+>): Promise<ReadSpectrum> {
+  const table = await readTable(text);
   const notices: Notice[] = [];
-  const given = pointsOf(table, notices);
+  const given = await pointsOf(table, notices);
   const unit = wavelengthUnit ?? guessUnit(headerOf(text, table), given, notices);
   const points = given
     .map(({ row, nm, flux }) => ({ row, nm: vacuumNm(nm * NM_PER[unit], isAirWavelength, row), flux }))
@@ -59,10 +64,10 @@ export function readSpectrumText({
   return { wavelengthsNm, fluxPerNm, contentHash: hashOf(wavelengthsNm, fluxPerNm), notices };
 }
 
-function readTable(text: string): DelimitedTable {
+async function readTable(text: string): Promise<DelimitedTable> {
   let table: DelimitedTable;
   try {
-    table = readDelimitedText(text, { maxRows: MAX_SPECTRUM_POINTS });
+    table = await readNumberTable(text, MAX_SPECTRUM_POINTS);
   } catch (error) {
     if (error instanceof TableRefused) throw refusal(error.message);
     throw error;
@@ -76,11 +81,11 @@ function readTable(text: string): DelimitedTable {
   return table;
 }
 
-function pointsOf(table: DelimitedTable, notices: Notice[]): Point[] {
+function pointsOf(table: DelimitedTable, notices: Notice[]): Promise<Point[]> {
   if (table.columns.length > 2) {
     notices.push(note('moreColumns', 'Only the first two columns are read: wavelength and flux density.'));
   }
-  const points = table.rows.map(([wavelength = '', flux = ''], index): Point => {
+  return mapInSlices(table.rows, ([wavelength = '', flux = ''], index): Point => {
     const row = table.rowNumbers[index] ?? index + 1;
     const point = {
       row,
@@ -90,7 +95,6 @@ function pointsOf(table: DelimitedTable, notices: Notice[]): Point[] {
     if (point.nm <= 0) throw refusal(`Row ${row}: a wavelength is above 0, not ${wavelength}.`);
     return point;
   });
-  return points;
 }
 
 function numberOf(cell: string, row: number, what: string): number {

@@ -1,6 +1,5 @@
-import type { FieldError } from '@faintward/contracts/errors';
 import { RedshiftUncertainty } from '@faintward/contracts/light';
-import { HIGHEST_REDSHIFT, OutOfDomainError, redshiftDistribution } from '@faintward/photometry';
+import { HIGHEST_REDSHIFT, redshiftDistribution } from '@faintward/photometry';
 import { normaliseMinus } from '@faintward/tables';
 import { addDecimals, subtractDecimals } from './exact-decimals.js';
 
@@ -117,22 +116,5 @@ export function formatRedshiftUncertainty(uncertainty: RedshiftUncertainty | nul
       const { length } = redshiftDistribution(redshift, uncertainty).peaks;
       return `p(z), ${length} ${length === 1 ? 'peak' : 'peaks'}`;
     }
-  }
-}
-
-/** What keeps a distribution from being drawn from, though it has the form of one. */
-export function uncertaintyFaults({
-  redshift,
-  redshiftUncertainty,
-}: {
-  redshift: number;
-  redshiftUncertainty: RedshiftUncertainty | null;
-}): FieldError[] {
-  try {
-    redshiftDistribution(redshift, redshiftUncertainty);
-    return [];
-  } catch (error) {
-    if (!(error instanceof OutOfDomainError)) throw error;
-    return [{ path: `redshiftUncertainty.${error.field}`, message: `Must be ${error.allowed}.` }];
   }
 }

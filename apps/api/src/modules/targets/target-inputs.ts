@@ -1,8 +1,9 @@
 import type { FieldError } from '@faintward/contracts/errors';
 import type { NewTarget, TargetCells, TargetInput, TargetPatch } from '@faintward/contracts/targets';
 import { lightFaults } from '../../engine/light.js';
+import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { validationFailed } from '../../platform/validation.js';
-import { movedWithRedshift, uncertaintyFaults } from './redshift-uncertainty-text.js';
+import { movedWithRedshift } from './redshift-uncertainty-text.js';
 import { cellFaults, readCells } from './target-cells.js';
 
 const REQUIRED = [

@@ -19,9 +19,10 @@ import {
 } from '@faintward/tables';
 import { lightFaults } from '../../engine/light.js';
 import { DomainError } from '../../platform/domain-error.js';
+import { refuseMoreLinesThan } from '../../platform/number-tables.js';
+import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { mapInSlices } from '../../engine/slices.js';
 import { foreignUnitError, headerBrightness, headerRedshiftKind, withColumnUnit } from './column-units.js';
-import { uncertaintyFaults } from './redshift-uncertainty-text.js';
 import { readCells } from './target-cells.js';
 
 type TargetRole = Exclude<ImportRole, 'ignore'>;
@@ -45,6 +46,8 @@ export interface TargetTable {
 }
 
 const SAMPLE_ROW_COUNT = 100;
+/** Rows, comments and blank lines, and the line breaks within notes. */
+const MAX_IMPORT_LINES = 4 * MAX_TARGET_COUNT;
 
 const ROLE_NAMES: Readonly<Record<TargetRole, string>> = {
   name: 'the name',
@@ -118,6 +121,7 @@ export async function readTargetTable({ text, options }: ImportRequest): Promise
 
 function readTable(text: string, hasHeader: boolean | undefined): DelimitedTable {
   try {
+    refuseMoreLinesThan(MAX_IMPORT_LINES, text);
     return readDelimitedText(text, {
       header: hasHeader === undefined ? 'auto' : hasHeader ? 'present' : 'absent',
       maxCharacters: MAX_IMPORT_CHARACTERS,

@@ -1,0 +1,28 @@
+import type { FieldError } from '@faintward/contracts/errors';
+import type { RedshiftUncertainty } from '@faintward/contracts/light';
+import { OutOfDomainError, redshiftDistribution } from '@faintward/photometry';
+
+/** Width from the 16th to the 84th percentile below which a redshift counts as known: densities would be numbers beyond use. */
+const LEAST_WIDTH = 1e-9;
+
+/** What keeps a distribution from being drawn from, though it has the form of one. Paths begin with `prefix`. */
+export function uncertaintyFaults(
+  { redshift, redshiftUncertainty }: { redshift: number; redshiftUncertainty: RedshiftUncertainty | null },
+  prefix = '',
+): FieldError[] {
+  if (redshiftUncertainty === null) return [];
+  try {
+    const { quantile } = redshiftDistribution(redshift, redshiftUncertainty);
+    // Also refuses what is no number.
+    if (quantile(0.84) - quantile(0.16) >= LEAST_WIDTH) return [];
+    return [
+      {
+        path: `${prefix}redshiftUncertainty`,
+        message: `This distribution is narrower than ${LEAST_WIDTH}: leave the uncertainty out of a redshift that is known so well.`,
+      },
+    ];
+  } catch (error) {
+    if (!(error instanceof OutOfDomainError)) throw error;
+    return [{ path: `${prefix}redshiftUncertainty.${error.field}`, message: `Must be ${error.allowed}.` }];
+  }
+}
