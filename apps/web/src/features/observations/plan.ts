@@ -165,3 +165,12 @@ export function describeConditions(conditions: Conditions): string {
     conditions.transparency === 'clear' ? 'clear' : 'thin cloud',
   ].join(' · ');
 }
+
+/** The same in a few signs, for a table: seeing and airmass are limits, the sky is as dark and clear or better. */
+export function shortConditions({ seeingArcsec, airmass, moonClass, transparency }: Conditions): string {
+  const sky = transparency === 'clear' ? 'clear' : 'thin cloud';
+  // In a narrow column the sky goes to the next line as a whole.
+  return [`≤ ${seeingArcsec}″ · X ≤ ${airmass}`, `${moonClass} · ${sky}`]
+    .map((line) => line.replaceAll(' ', '\u00a0'))
+    .join(' · ');
+}

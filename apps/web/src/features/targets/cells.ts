@@ -1,4 +1,3 @@
-import type { Notice } from '@faintward/contracts/common';
 import type { Target, TargetCells } from '@faintward/contracts/targets';
 
 export type CellName = keyof TargetCells;
@@ -72,11 +71,4 @@ const shortNotices: Record<string, string> = {
 
 export function shortNotice(notice: { code: string; message: string }): string {
   return shortNotices[notice.code] ?? notice.message;
-}
-
-const weight = { error: 2, warning: 1, note: 0 } as const;
-
-/** The most severe first; among equals in the order of the server. */
-export function bySeverity(notices: readonly Notice[]): Notice[] {
-  return notices.toSorted((a, b) => weight[b.severity] - weight[a.severity]);
 }

@@ -17,7 +17,7 @@ import { Note } from '../../../ui/Note';
 import { useNotices } from '../../../ui/Notices';
 import type { QueryState } from '../../../ui/PageStates';
 import { useObservationMutations } from '../api/observations';
-import { observationColumns } from './observationColumns';
+import { observationColumns, observationRowHeight } from './observationColumns';
 import { ObservationPanel } from './ObservationPanel';
 
 export interface ObservationsViewProps {
@@ -114,6 +114,7 @@ export function ObservationsView({
             keepNonExistentRowsSelected: true,
             rowSelectionModel: { type: 'include', ids: selected as Set<GridRowId> },
             onRowSelectionModelChange: ({ ids }) => setSelected(new Set([...ids].map(String))),
+            getRowHeight: ({ model }) => observationRowHeight(model as Observation),
             hideFooterSelectedRowCount: true,
             onRowClick: ({ id }) => onOpen(String(id)),
             onCellKeyDown: ({ id, field }, event) => {

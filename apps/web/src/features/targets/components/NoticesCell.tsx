@@ -5,7 +5,8 @@ import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useId, useState } from 'react';
 import { Note } from '../../../ui/Note';
-import { bySeverity, shortNotice } from '../cells';
+import { bySeverity } from '../../../lib/bySeverity';
+import { shortNotice } from '../cells';
 
 const tones = { error: 'error.main', warning: 'warning.main', note: 'text.secondary' } as const;
 
