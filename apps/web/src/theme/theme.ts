@@ -178,6 +178,8 @@ export const theme = createTheme({
             transitionDuration: '0.01ms !important',
             scrollBehavior: 'auto !important',
           },
+          // Places of rectangles are styles too, those of lines and texts are not: a picture must change at once as a whole.
+          'svg *': { transition: 'none !important' },
         },
       },
     },

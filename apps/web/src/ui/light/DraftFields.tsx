@@ -32,7 +32,8 @@ export function FieldGrid({ children, columns = 150 }: { children: ReactNode; co
       sx={{
         display: 'grid',
         columnGap: 1.5,
-        rowGap: 1.75,
+        // A label stands in the border, half above its field.
+        rowGap: 2.25,
         gridTemplateColumns: `repeat(auto-fill, minmax(min(${columns}px, 100%), 1fr))`,
         alignItems: 'start',
       }}

@@ -25,7 +25,7 @@ export function SourceForm({
   return (
     <Stack sx={{ gap: 3 }}>
       <FieldGroup title="Redshift">
-        <Stack sx={{ gap: 1.75 }}>
+        <Stack sx={{ gap: 2.25 }}>
           <RedshiftFields
             draft={{ ...state, table }}
             errors={errors}

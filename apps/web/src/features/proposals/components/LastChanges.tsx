@@ -18,7 +18,8 @@ export function LastChanges({ proposalId, list }: { proposalId: string; list: z.
           borderTop: list.rows.length > 0 ? 1 : 0,
           borderColor: 'divider',
           px: { xs: 2, md: 2.5 },
-          py: 1.25,
+          pt: list.rows.length > 0 ? 1.25 : 0,
+          pb: list.rows.length > 0 ? 1.25 : 2,
           fontSize: '0.875rem',
           color: 'text.secondary',
         }}
