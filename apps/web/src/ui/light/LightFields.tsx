@@ -9,12 +9,12 @@ import type { LightDraft } from './lightDraft';
 import { calibrationOptions, cosmologyOptions, kindOptions, tracerOptions, type Options } from './lightWords';
 import { LineFields } from './LineFields';
 import { ContainedLine, OnTheWayFields } from './OnTheWayFields';
-import { QuantityField } from './QuantityField';
+import { QuantityField, type ReadingProps } from './QuantityField';
 import { otherParameters } from './readLightDraft';
 import { SpectrumFields } from './SpectrumFields';
 import { SuggestionLine, Suggestions } from './Suggestions';
 
-export interface LightFieldsProps extends DraftProps<LightDraft> {
+export interface LightFieldsProps extends DraftProps<LightDraft>, ReadingProps {
   /** Of the source, as far as it is known: for typical values and observed wavelengths. */
   redshift: number | undefined;
   /** With it, spectra that were uploaded to the proposal may be chosen. */
@@ -68,7 +68,7 @@ export function LightFields({ redshift: typedRedshift, proposalId, mayBeUnknown 
 }
 
 /** The quantity of the kind chosen, and what belongs to it. */
-function Value({ redshift, ...props }: DraftProps<LightDraft> & { redshift: number | undefined }) {
+function Value({ redshift, ...props }: DraftProps<LightDraft> & ReadingProps & { redshift: number | undefined }) {
   const { draft } = props;
   const sigma = <DraftField {...props} name="sigma" label="Uncertainty, 1 σ" unit="mag" hint="may be empty" />;
   switch (draft.light) {

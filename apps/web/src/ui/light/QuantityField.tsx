@@ -10,6 +10,11 @@ import type { DraftProps } from './DraftFields';
 import { numberText, quantityFields, type LightDraft, type LightField } from './lightDraft';
 import { readLight } from './lightQueries';
 
+export interface ReadingProps {
+  /** A text was sent to be read: ends when its outcome is in the draft or shown. It does not fail. */
+  onReading?: ((reading: Promise<void>) => void) | undefined;
+}
+
 type Kind = keyof typeof quantityFields;
 
 const labels: Record<Kind, string> = {
@@ -48,7 +53,8 @@ export function QuantityField({
   disabled = false,
   showLacking = false,
   onChange,
-}: DraftProps<LightDraft>) {
+  onReading,
+}: DraftProps<LightDraft> & ReadingProps) {
   const kind = draft.light === 'typical' ? 'none' : draft.light;
   const name = quantityFields[kind];
   const text = draft[name];
@@ -61,8 +67,12 @@ export function QuantityField({
   const isBare = text.trim() === '' || (kind !== 'none' && typeof parseNumber(text) === 'number');
   const current = outcome?.field === name && outcome.text === text ? outcome : undefined;
 
-  const read = async () => {
+  const read = () => {
     if (isBare || disabled || current?.state === 'reading' || current?.state === 'refused') return;
+    const reading = send();
+    onReading?.(reading);
+  };
+  const send = async () => {
     request.current?.abort();
     const controller = new AbortController();
     request.current = controller;
@@ -112,12 +122,12 @@ export function QuantityField({
       }}
       onBlur={() => {
         setWasLeft(true);
-        void read();
+        read();
       }}
       onKeyDown={(event) => {
         if (event.key !== 'Enter' || isBare) return;
         event.preventDefault();
-        void read();
+        read();
       }}
       error={isWrong}
       helperText={

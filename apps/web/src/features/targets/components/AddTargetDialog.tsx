@@ -8,7 +8,7 @@ import DialogTitle from '@mui/material/DialogTitle';
 import Stack from '@mui/material/Stack';
 import TextField from '@mui/material/TextField';
 import useMediaQuery from '@mui/material/useMediaQuery';
-import { useId, useState } from 'react';
+import { useEffect, useId, useRef, useState } from 'react';
 import { ApiError } from '../../../lib/api';
 import { fonts } from '../../../theme/tokens';
 import { useNotices } from '../../../ui/Notices';
@@ -55,17 +55,32 @@ export function AddTargetDialog({
   const announce = useNotices();
   const [draft, setDraft] = useState(empty);
   const [showLacking, setShowLacking] = useState(false);
+  // What a reading brings back has to be there before it is drawn: "Add" waits for the reading and sends it.
+  const latest = useRef(empty);
+  const reading = useRef(Promise.resolve());
+  const attempt = useRef(0);
+  const form = useRef<HTMLFormElement>(null);
+  const [isWaiting, setIsWaiting] = useState(false);
+  const replace = (next: typeof empty) => {
+    latest.current = next;
+    setDraft(next);
+  };
   const change = (part: (old: typeof empty) => Partial<typeof empty>) => {
     create.reset();
-    setDraft((old) => ({ ...old, ...part(old) }));
+    replace({ ...latest.current, ...part(latest.current) });
   };
+  // The dialog is longer than a window: what keeps it from being added may be out of sight.
+  const [refusedCount, setRefusedCount] = useState(0);
+  useEffect(() => {
+    if (refusedCount > 0) form.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus();
+  }, [refusedCount]);
+  const close = () => {
+    attempt.current += 1;
+    onClose();
+  };
+  const isBusy = create.isPending || isWaiting;
 
-  const light = readLightDraft(draft.light);
-  // The redshift goes as it was typed: the server reads every notation of it, as in the table.
-  const uncertainty = readUncertaintyDraft(draft.redshift);
-  const lacking = needed.filter((name) => draft.cells[name].trim() === '');
-  const isRedshiftLacking = draft.redshift.redshift.trim() === '';
-
+  const { light, uncertainty, lacking, isRedshiftLacking } = readDraft(draft);
   const lightErrors: LightErrors = light.ok ? {} : { ...light.errors };
   const redshiftErrors: RedshiftErrors = uncertainty.ok ? {} : { ...uncertainty.errors };
   const cellErrors: Partial<Record<Field, string>> = {};
@@ -86,21 +101,33 @@ export function AddTargetDialog({
     else allPlaced = false;
   }
 
-  const submit = () => {
+  const submit = async () => {
+    if (isBusy) return;
+    const own = attempt.current;
     setShowLacking(true);
-    if (!light.ok || !uncertainty.ok || lacking.length > 0 || isRedshiftLacking) return;
+    setIsWaiting(true);
+    await reading.current;
+    setIsWaiting(false);
+    const typed = latest.current;
+    const now = readDraft(typed);
+    // Closed while it was read: what was typed stays, and nothing is added behind a person's back.
+    if (own !== attempt.current) return;
+    if (!now.light.ok || !now.uncertainty.ok || now.lacking.length > 0 || now.isRedshiftLacking) {
+      setRefusedCount((count) => count + 1);
+      return;
+    }
     create.mutate(
       {
-        cells: { ...draft.cells, redshift: draft.redshift.redshift },
-        redshiftKind: draft.redshift.redshiftKind,
-        redshiftUncertainty: uncertainty.uncertainty,
-        light: light.light,
-        extent: light.extent,
+        cells: { ...typed.cells, redshift: typed.redshift.redshift },
+        redshiftKind: typed.redshift.redshiftKind,
+        redshiftUncertainty: now.uncertainty.uncertainty,
+        light: now.light.light,
+        extent: now.light.extent,
       },
       {
         onSuccess: (target) => {
           announce(`${target.name} added.`);
-          setDraft(empty);
+          replace(empty);
           setShowLacking(false);
           onAdded(target);
         },
@@ -128,7 +155,7 @@ export function AddTargetDialog({
   return (
     <Dialog
       open={open}
-      onClose={() => !create.isPending && onClose()}
+      onClose={() => !create.isPending && close()}
       aria-labelledby={id}
       maxWidth="md"
       fullWidth
@@ -136,10 +163,11 @@ export function AddTargetDialog({
     >
       <Box
         component="form"
+        ref={form}
         noValidate
         onSubmit={(event) => {
           event.preventDefault();
-          submit();
+          void submit();
         }}
         sx={{ display: 'flex', flexDirection: 'column', minHeight: 0 }}
       >
@@ -167,19 +195,33 @@ export function AddTargetDialog({
               redshift={typeof redshift === 'number' && redshift >= 0 && redshift <= 30 ? redshift : undefined}
               proposalId={proposalId}
               onChange={(part) => change((old) => ({ light: { ...old.light, ...part } }))}
+              onReading={(next) => {
+                reading.current = next;
+              }}
             />
             {create.error && !allPlaced && <ProblemDisplay error={create.error} what="Not added" />}
           </Stack>
         </DialogContent>
         <DialogActions sx={{ px: 3, pb: 2 }}>
-          <Button onClick={onClose} disabled={create.isPending} variant="text">
+          <Button onClick={close} disabled={create.isPending} variant="text">
             Close
           </Button>
-          <Button type="submit" variant="contained" loading={create.isPending}>
+          <Button type="submit" variant="contained" loading={isBusy}>
             Add the target
           </Button>
         </DialogActions>
       </Box>
     </Dialog>
   );
+}
+
+/** What a draft says, part by part. */
+function readDraft({ cells, redshift, light }: typeof empty) {
+  return {
+    light: readLightDraft(light),
+    // The redshift goes as it was typed: the server reads every notation of it, as in the table.
+    uncertainty: readUncertaintyDraft(redshift),
+    lacking: needed.filter((name) => cells[name].trim() === ''),
+    isRedshiftLacking: redshift.redshift.trim() === '',
+  };
 }
