@@ -5,6 +5,7 @@ import DialogActions from '@mui/material/DialogActions';
 import DialogContent from '@mui/material/DialogContent';
 import DialogTitle from '@mui/material/DialogTitle';
 import { useId, type ReactNode } from 'react';
+import { ComparisonTable } from './ComparisonTable';
 
 export interface ChangedMeanwhileDialogProps {
   open: boolean;
@@ -37,34 +38,10 @@ export function ChangedMeanwhileDialog({
     <Dialog open={open} onClose={onLater} aria-labelledby={id} maxWidth="sm" fullWidth>
       <DialogTitle id={id}>{what} was changed by another person meanwhile</DialogTitle>
       <DialogContent>
-        <Box
-          component="table"
-          sx={{
-            width: '100%',
-            borderCollapse: 'collapse',
-            fontSize: '0.875rem',
-            '& th, & td': { textAlign: 'left', verticalAlign: 'top', py: 0.75, pr: 2, overflowWrap: 'anywhere' },
-            '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', borderBottom: 1, borderColor: 'divider' },
-            '& tbody th': { fontWeight: 400, color: 'text.secondary' },
-          }}
-        >
-          <thead>
-            <tr>
-              <td />
-              <th scope="col">Mine, typed now</th>
-              <th scope="col">Theirs, stored</th>
-            </tr>
-          </thead>
-          <tbody>
-            {rows.map((row) => (
-              <tr key={row.label}>
-                <th scope="row">{row.label}</th>
-                <td>{row.mine}</td>
-                <td>{row.theirs}</td>
-              </tr>
-            ))}
-          </tbody>
-        </Box>
+        <ComparisonTable
+          heads={['Mine, typed now', 'Theirs, stored']}
+          rows={rows.map(({ label, mine, theirs }) => ({ label, values: [mine, theirs] }))}
+        />
         {note && <Box sx={{ mt: 1.5, fontSize: '0.875rem', color: 'text.secondary' }}>{note}</Box>}
       </DialogContent>
       <DialogActions sx={{ px: 3, pb: 2, flexWrap: 'wrap', gap: 1 }}>

@@ -1,58 +1,31 @@
 import InputAdornment from '@mui/material/InputAdornment';
-import MuiTextField, { type TextFieldProps as MuiTextFieldProps } from '@mui/material/TextField';
-import { useState } from 'react';
-import { useController, type Control, type FieldPath, type FieldValues } from 'react-hook-form';
+import type { FieldValues } from 'react-hook-form';
 import { formatInstant } from '../../lib/time';
+import { ParsedField, type Bound, type Rest } from './ParsedField';
 
-export interface InstantFieldProps<Values extends FieldValues> extends Omit<
-  MuiTextFieldProps,
-  'name' | 'value' | 'onChange' | 'onBlur' | 'error' | 'select' | 'type' | 'defaultValue'
-> {
-  // eslint-disable-next-line @typescript-eslint/no-explicit-any -- react-hook-form's Control is invariant in its context and output
-  control: Control<Values, any, any>;
-  name: FieldPath<Values>;
+export interface InstantFieldProps<Values extends FieldValues> extends Bound<Values>, Rest {
   siteTimeZone: string;
 }
 
-/**
- * An instant, typed in UTC as `2027-03-31 18:00`, with the site's clock beneath it. Holds ISO 8601, null when empty, and text
- * that is no instant as it was typed, so that the schema says what is wrong and nothing is lost.
- */
+/** An instant as ISO 8601, null when empty; typed in UTC as `2027-03-31 18:00`, with the site's clock beneath it. */
 export function InstantField<Values extends FieldValues>({
-  control,
-  name,
   siteTimeZone,
-  helperText,
+  helperText = 'as 2027-03-31 18:00',
   slotProps,
   ...rest
 }: InstantFieldProps<Values>) {
-  const { field, fieldState } = useController({ control, name });
-  const value: unknown = field.value;
-  const [text, setText] = useState(() => instantText(value));
-  const [seen, setSeen] = useState<unknown>(value);
-  if (!Object.is(value, seen)) {
-    setSeen(value);
-    if (!Object.is(parseInstant(text), value)) setText(instantText(value));
-  }
-  const instant = isInstant(value) ? new Date(value) : undefined;
-  const hint = instant ? `${formatInstant(instant, siteTimeZone)} at the site` : (helperText ?? 'as 2027-03-31 18:00');
   return (
-    <MuiTextField
+    <ParsedField
       {...rest}
-      name={field.name}
-      value={text}
-      onChange={(event) => {
-        const next = parseInstant(event.target.value);
-        setText(event.target.value);
-        setSeen(next);
-        field.onChange(next);
-      }}
-      onBlur={field.onBlur}
-      error={fieldState.invalid}
-      helperText={fieldState.error?.message ?? hint}
+      parse={parseInstant}
+      write={instantText}
+      hintFor={(value) =>
+        isInstant(value) ? `${formatInstant(new Date(value), siteTimeZone)} at the site` : undefined
+      }
+      helperText={helperText}
       slotProps={{
         ...slotProps,
-        htmlInput: { autoComplete: 'off', ...slotProps?.htmlInput, ref: field.ref },
+        htmlInput: { autoComplete: 'off', ...slotProps?.htmlInput },
         input: { endAdornment: <InputAdornment position="end">UTC</InputAdornment>, ...slotProps?.input },
       }}
     />

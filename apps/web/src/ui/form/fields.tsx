@@ -2,21 +2,11 @@ import Checkbox from '@mui/material/Checkbox';
 import FormControlLabel from '@mui/material/FormControlLabel';
 import InputAdornment from '@mui/material/InputAdornment';
 import MenuItem from '@mui/material/MenuItem';
-import MuiTextField, { type TextFieldProps as MuiTextFieldProps } from '@mui/material/TextField';
-import { useState, type ReactNode } from 'react';
-import { useController, type Control, type FieldPath, type FieldValues } from 'react-hook-form';
+import MuiTextField from '@mui/material/TextField';
+import type { ReactNode } from 'react';
+import { useController, type FieldValues } from 'react-hook-form';
+import { ParsedField, type Bound, type Rest } from './ParsedField';
 import { parseNumber } from './parseNumber';
-
-interface Bound<Values extends FieldValues> {
-  /** From `useZodForm`; the second and third type parameters do not matter to a field. */
-  // eslint-disable-next-line @typescript-eslint/no-explicit-any -- react-hook-form's Control is invariant in its context and output
-  control: Control<Values, any, any>;
-  name: FieldPath<Values>;
-}
-type Rest = Omit<
-  MuiTextFieldProps,
-  'name' | 'value' | 'onChange' | 'onBlur' | 'error' | 'select' | 'type' | 'defaultValue'
->;
 
 export interface TextFieldProps<Values extends FieldValues> extends Bound<Values>, Rest {
   type?: 'text' | 'email' | 'password' | 'url';
@@ -52,44 +42,16 @@ export interface NumberFieldProps<Values extends FieldValues> extends Bound<Valu
   unit?: ReactNode;
 }
 
-/**
- * A number with its unit. Holds a number, or null when empty; text that is no number stays in the form as it was typed,
- * so that the schema says what is wrong and nothing is lost. Takes a true minus and powers of ten such as 2e-17.
- */
-export function NumberField<Values extends FieldValues>({
-  control,
-  name,
-  unit,
-  helperText,
-  slotProps,
-  ...rest
-}: NumberFieldProps<Values>) {
-  const { field, fieldState } = useController({ control, name });
-  const value: unknown = field.value;
-  const [text, setText] = useState(toText(value));
-  const [seen, setSeen] = useState<unknown>(value);
-  if (!Object.is(value, seen)) {
-    // Set from outside (reset, another's change): show it; but leave "1.50" alone while 1.5 is what it means.
-    setSeen(value);
-    if (!Object.is(parseNumber(text), value)) setText(toText(value));
-  }
+/** A number with its unit, or null when empty. Takes a true minus and powers of ten such as 2e-17. */
+export function NumberField<Values extends FieldValues>({ unit, slotProps, ...rest }: NumberFieldProps<Values>) {
   return (
-    <MuiTextField
+    <ParsedField
       {...rest}
-      name={field.name}
-      value={text}
-      onChange={(event) => {
-        const next = parseNumber(event.target.value);
-        setText(event.target.value);
-        setSeen(next);
-        field.onChange(next);
-      }}
-      onBlur={field.onBlur}
-      error={fieldState.invalid}
-      helperText={fieldState.error?.message ?? helperText}
+      parse={parseNumber}
+      write={toText}
       slotProps={{
         ...slotProps,
-        htmlInput: { inputMode: 'decimal', style: { textAlign: 'right' }, ...slotProps?.htmlInput, ref: field.ref },
+        htmlInput: { inputMode: 'decimal', style: { textAlign: 'right' }, ...slotProps?.htmlInput },
         input: {
           ...(unit ? { endAdornment: <InputAdornment position="end">{unit}</InputAdornment> } : {}),
           ...slotProps?.input,

@@ -5,6 +5,7 @@ import Stack from '@mui/material/Stack';
 import Typography from '@mui/material/Typography';
 import { useEffect, useState } from 'react';
 import { useWatch } from 'react-hook-form';
+import { ComparisonTable } from '../../../ui/ComparisonTable';
 import { ConfirmDialog } from '../../../ui/ConfirmDialog';
 import { Note } from '../../../ui/Note';
 import { Panel } from '../../../ui/Panel';
@@ -21,7 +22,6 @@ import {
   toForm,
   type ConfigurationFormValues,
 } from '../configurationFields';
-import { DifferencesTable } from './DifferencesTable';
 
 export interface ConfigurationEditorProps {
   mode: Mode;
@@ -176,10 +176,15 @@ export function ConfigurationEditor({ mode, readCurrent, onSaved, onCancel }: Co
               </Note>
             </Box>
           )}
-          <DifferencesTable
-            rows={differencesOf(asking.current.configuration, asking.input.configuration)}
-            before={`Configuration ${asking.current.configurationVersion}`}
-            after={`Configuration ${asking.current.configurationVersion + 1}`}
+          <ComparisonTable
+            secondStands
+            heads={[
+              `Configuration ${asking.current.configurationVersion}`,
+              `Configuration ${asking.current.configurationVersion + 1}`,
+            ]}
+            rows={differencesOf(asking.current.configuration, asking.input.configuration).map(
+              ({ label, before, after }) => ({ label, values: [before, after] }),
+            )}
           />
           <Typography variant="body2" color="textSecondary" sx={{ mt: 1.5 }}>
             From now on estimates use it. What was computed or submitted before names the version that it used, and that
