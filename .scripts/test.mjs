@@ -14,9 +14,10 @@ const tool = (name) => path.join('node_modules', '.bin', name);
 const countsFolder = mkdtempSync(path.join(os.tmpdir(), 'faintward-counts-'));
 
 const gates = [
-  { name: 'format', command: [tool('prettier'), '--check', '--log-level', 'warn', '.'] },
-  { name: 'lint', command: [tool('eslint'), '.'] },
-  { name: 'types', command: ['node', '.scripts/typecheck.mjs'] },
+  // These three read only and use one core each: they run side by side, and each tells what it said when it has ended.
+  { name: 'format', command: [tool('prettier'), '--check', '--log-level', 'warn', '.'], isStatic: true },
+  { name: 'lint', command: [tool('eslint'), '.'], isStatic: true },
+  { name: 'types', command: ['node', '.scripts/typecheck.mjs'], isStatic: true },
   { name: 'libraries', command: [tool('vitest'), 'run', '--project', 'libs'], counts: true },
   { name: 'web', command: [tool('vitest'), 'run', '--project', 'web'], counts: true },
   { name: 'api', title: 'api, embedded database', command: [tool('vitest'), 'run', '--project', 'api'], counts: true },
@@ -53,15 +54,9 @@ for (const signal of ['SIGINT', 'SIGTERM']) {
   });
 }
 
-const results = [];
-for (const gate of gates) {
-  if (wanted.length > 0 && !wanted.includes(gate.name)) continue;
-  const title = gate.title ?? gate.name;
-  console.log(`\n== ${title}`);
-  const startedAt = Date.now();
-  const outcome = gate.isOnServer ? await runOnServer(gate) : await run(gate);
-  results.push({ title, seconds: (Date.now() - startedAt) / 1000, ...outcome });
-}
+const asked = gates.filter(({ name }) => wanted.length === 0 || wanted.includes(name));
+const results = await Promise.all(asked.filter(({ isStatic }) => isStatic).map(timed));
+for (const gate of asked.filter(({ isStatic }) => !isStatic)) results.push(await timed(gate));
 rmSync(countsFolder, { recursive: true, force: true });
 
 const width = Math.max(...results.map(({ title }) => title.length));
@@ -81,6 +76,14 @@ for (const { title, passed, failed, skipped, seconds, note } of results) {
 const total = (key) => results.reduce((sum, result) => sum + result[key], 0);
 console.log(`\n${total('passed')} passed, ${total('failed')} failed`);
 process.exit(total('failed') === 0 ? 0 : 1);
+
+async function timed(gate) {
+  const title = gate.title ?? gate.name;
+  if (!gate.isStatic) console.log(`\n== ${title}`);
+  const startedAt = Date.now();
+  const outcome = gate.isOnServer ? await runOnServer(gate) : await run(gate);
+  return { title, seconds: (Date.now() - startedAt) / 1000, ...outcome };
+}
 
 async function runOnServer(gate) {
   let cluster;
@@ -112,18 +115,22 @@ async function runOnServer(gate) {
 async function run(gate, environment = {}) {
   const countsFile = path.join(countsFolder, `${gate.name}.json`);
   const [program, ...parameters] = gate.command;
+  const said = [];
   const code = await new Promise((resolve) => {
     const child = spawn(program === 'node' ? process.execPath : program, parameters, {
-      stdio: 'inherit',
+      stdio: gate.isStatic ? ['ignore', 'pipe', 'pipe'] : 'inherit',
       shell: process.platform === 'win32',
       env: { ...process.env, ...environment, FAINTWARD_COUNTS: countsFile },
     });
+    child.stdout?.on('data', (chunk) => said.push(chunk));
+    child.stderr?.on('data', (chunk) => said.push(chunk));
     child.on('error', (error) => {
       console.error(error.message);
       resolve(1);
     });
-    child.on('exit', (status) => resolve(status ?? 1));
+    child.on('close', (status) => resolve(status ?? 1));
   });
+  if (gate.isStatic) console.log(`\n== ${gate.title ?? gate.name}\n${Buffer.concat(said).toString().trimEnd()}`);
   if (!gate.counts) return { passed: code === 0 ? 1 : 0, failed: code === 0 ? 0 : 1, skipped: 0 };
   const counted = existsSync(countsFile)
     ? JSON.parse(readFileSync(countsFile, 'utf8'))
