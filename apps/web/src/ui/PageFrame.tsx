@@ -29,9 +29,16 @@ export function PageFrame({ title, eyebrow, actions, breadcrumbs, width = 'page'
   return (
     <Box sx={{ maxWidth: widths[width], mx: 'auto', px: { xs: 2, md: 5 }, pt: { xs: 2.5, md: 3.5 }, pb: 6 }}>
       {breadcrumbs && breadcrumbs.length > 0 && (
-        <Breadcrumbs aria-label="Where this page is" sx={{ fontSize: '0.8125rem', mb: 1 }}>
+        <Breadcrumbs aria-label="Where this page is" sx={{ fontSize: '0.8125rem', mt: '-3px', mb: '5px' }}>
           {breadcrumbs.map((crumb) => (
-            <Link key={crumb.to} component={RouterLink} to={crumb.to} color="textSecondary">
+            <Link
+              key={crumb.to}
+              component={RouterLink}
+              to={crumb.to}
+              color="textSecondary"
+              // High enough to be met by a finger where the links wrap.
+              sx={{ display: 'inline-block', py: '3px' }}
+            >
               {crumb.label}
             </Link>
           ))}
