@@ -213,6 +213,7 @@ describe('what no number can be given for', () => {
     ['a percentile at 0', { kind: 'percentiles', p16: 0, p50: 1, p84: 2 }, 'redshiftUncertainty.p16'],
     ['a percentile at 30', { kind: 'percentiles', p16: 28, p50: 29, p84: 30 }, 'redshiftUncertainty.p84'],
     ['percentiles that are nearly one', narrow, 'redshiftUncertainty'],
+    ['percentiles of nothing', { kind: 'percentiles', p16: 1e-300, p50: 1e-9, p84: 2e-9 }, 'redshiftUncertainty'],
     ['a width of nothing', { kind: 'gaussian', sigma: 1e-300 }, 'redshiftUncertainty'],
     [
       'a table of nothing',

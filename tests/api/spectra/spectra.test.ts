@@ -1,5 +1,7 @@
+import { Light } from '@faintward/contracts/light';
 import { StoredSpectrum } from '@faintward/contracts/light-report';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
+import { ProposalSpectra } from '../../../apps/api/src/engine/proposal-spectra.service.js';
 import { SpectraReadModel } from '../../../apps/api/src/modules/spectra/spectra.read-model.js';
 import { aPerson, signedInAs } from '../../factories/people.js';
 import { aDraft, aReadyDraft, aTarget, aTeamMember, type Draft } from '../../factories/proposals.js';
@@ -67,13 +69,29 @@ describe('the spectra of a proposal', () => {
     const text = Array.from({ length: 50_000 }, (_, index) => `${(300 + index / 100).toFixed(2)}\t${1 + (index % 7)}`);
     const { spectrumId, pointCount, contentHash } = await stored(draft, { text: text.join('\n') });
     expect(pointCount).toBe(50_000);
-    const found = await app.get(SpectraReadModel).findPoints(draft.proposalId, [spectrumId, spectrumId]);
-    const points = found.get(spectrumId);
+    const points = await app.get(SpectraReadModel).findPoints(draft.proposalId, spectrumId);
     expect(points?.wavelengthsNm).toHaveLength(50_000);
     expect(points?.wavelengthsNm[1]).toBe(300.01);
+    expect(points?.wavelengthsNm[49_999]).toBe(799.99);
+    expect(points?.fluxPerNm.slice(2499, 2502)).toEqual([1, 2, 3].map((step) => 1 + ((2498 + step) % 7)));
     expect(points).toMatchObject({ name: 'Stack', source: 'Invented', contentHash });
     const other = await aDraft(app);
-    expect(await app.get(SpectraReadModel).findPoints(other.proposalId, [spectrumId])).toEqual(new Map());
+    expect(await app.get(SpectraReadModel).findPoints(other.proposalId, spectrumId)).toBeUndefined();
+  });
+
+  it('are read from the database once, and still only for their own proposal', async () => {
+    const { spectrumId } = await stored(draft);
+    const { light } = uses(spectrumId);
+    const spectra = app.get(ProposalSpectra);
+    const first = await spectra.ofLights(draft.proposalId, [Light.parse(light)]);
+    expect(first.get(spectrumId)).toBeDefined();
+    const reading = vi.spyOn(app.get(SpectraReadModel), 'findPoints');
+    const again = await spectra.ofLights(draft.proposalId, [Light.parse(light)]);
+    expect(again.get(spectrumId)).toBe(first.get(spectrumId));
+    expect(reading).not.toHaveBeenCalled();
+    reading.mockRestore();
+    const other = await aDraft(app);
+    expect((await spectra.ofLights(other.proposalId, [Light.parse(light)])).size).toBe(0);
   });
 
   it('are used by targets of the same proposal only, and stay while one uses them', async () => {

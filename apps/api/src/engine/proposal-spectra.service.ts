@@ -22,26 +22,30 @@ export class ProposalSpectra {
       if (spectrumId !== undefined) wanted.add(spectrumId);
     }
     if (wanted.size === 0) return NO_UPLOADS;
-    const points = await this.spectra.findPoints(proposalId, [...wanted]);
     const found = new Map<string, RestSpectrum>();
-    for (const [spectrumId, { wavelengthsNm, fluxPerNm, contentHash, name, source }] of points) {
-      const key = `${spectrumId} ${contentHash}`;
-      const spectrum =
-        this.kept.get(key) ??
-        lightData().restSpectrumOfPoints({
-          kind: 'sampled',
-          label: name,
-          source: source === '' ? 'uploaded by the team' : source,
-          wavelengthsNm,
-          fluxPerWavelength: fluxPerNm,
-        });
+    for (const spectrumId of await this.spectra.listOwn(proposalId, [...wanted])) {
+      const spectrum = this.kept.get(spectrumId) ?? (await this.read(proposalId, spectrumId));
+      if (spectrum === undefined) continue;
       found.set(spectrumId, spectrum);
-      this.kept.set(key, spectrum);
+      // Again at the end: the oldest to be let go is the one that nobody asked for.
+      this.kept.delete(spectrumId);
+      this.kept.set(spectrumId, spectrum);
     }
     for (const oldest of this.kept.keys()) {
       if (this.kept.size <= KEPT_COUNT) break;
       this.kept.delete(oldest);
     }
     return found;
+  }
+  private async read(proposalId: string, spectrumId: string): Promise<RestSpectrum | undefined> {
+    const points = await this.spectra.findPoints(proposalId, spectrumId);
+    if (points === undefined) return undefined;
+    return lightData().restSpectrumOfPoints({
+      kind: 'sampled',
+      label: points.name,
+      source: points.source === '' ? 'uploaded by the team' : points.source,
+      wavelengthsNm: points.wavelengthsNm,
+      fluxPerWavelength: points.fluxPerNm,
+    });
   }
 }

@@ -4,6 +4,10 @@ import { and, asc, eq, inArray, sql } from 'drizzle-orm';
 import { spectra } from '../../database/schema/spectra.js';
 import { targets } from '../../database/schema/targets.js';
 import { DatabaseService } from '../../database/transaction.js';
+import { inBatches } from '../../engine/slices.js';
+
+/** Points in one statement: some tens of milliseconds of the embedded database. */
+export const POINTS_AT_ONCE = 2500;
 
 /** An uploaded spectrum as light is computed with it: in vacuum at rest, ascending. */
 export interface SpectrumPoints {
@@ -50,30 +54,49 @@ export class SpectraReadModel {
     return (await this.list(proposalId)).find((spectrum) => spectrum.spectrumId === spectrumId);
   }
 
-  /** The points of those spectra that the proposal has; others are left out, also those of other proposals. */
-  async findPoints(proposalId: string, spectrumIds: readonly string[]): Promise<Map<string, SpectrumPoints>> {
-    if (spectrumIds.length === 0) return new Map();
+  /** Those of these spectra that the proposal has; not those of other proposals. */
+  async listOwn(proposalId: string, spectrumIds: readonly string[]): Promise<string[]> {
+    if (spectrumIds.length === 0) return [];
     const rows = await this.database
       .current()
+      .select({ spectrumId: spectra.id })
+      .from(spectra)
+      .where(and(eq(spectra.proposalId, proposalId), inArray(spectra.id, [...new Set(spectrumIds)])));
+    return rows.map(({ spectrumId }) => spectrumId);
+  }
+
+  /** The points of a spectrum that the proposal has, read piece by piece with turns for others in between. */
+  async findPoints(proposalId: string, spectrumId: string): Promise<SpectrumPoints | undefined> {
+    const isWanted = and(eq(spectra.proposalId, proposalId), eq(spectra.id, spectrumId));
+    const [row] = await this.database
+      .current()
       .select({
-        spectrumId: spectra.id,
-        wavelengthsNm: spectra.wavelengthsNm,
-        fluxPerNm: spectra.fluxPerNm,
+        pointCount: spectra.pointCount,
         contentHash: spectra.contentHash,
         name: spectra.name,
         source: spectra.source,
       })
       .from(spectra)
-      .where(and(eq(spectra.proposalId, proposalId), inArray(spectra.id, [...new Set(spectrumIds)])));
-    return new Map(rows.map(({ spectrumId, ...points }) => [spectrumId, points]));
-  }
-
-  async exists(proposalId: string, spectrumId: string): Promise<boolean> {
-    const rows = await this.database
-      .current()
-      .select({ spectrumId: spectra.id })
-      .from(spectra)
-      .where(and(eq(spectra.proposalId, proposalId), eq(spectra.id, spectrumId)));
-    return rows.length > 0;
+      .where(isWanted);
+    if (row === undefined) return undefined;
+    const { pointCount, ...named } = row;
+    const wavelengthsNm: number[] = [];
+    const fluxPerNm: number[] = [];
+    const starts = Array.from({ length: Math.ceil(pointCount / POINTS_AT_ONCE) }, (_, piece) => piece * POINTS_AT_ONCE);
+    await inBatches(starts, 1, async ([start = 0]) => {
+      // Postgres counts from 1, and both ends belong to a slice.
+      const slice = sql.raw(`[${start + 1}:${start + POINTS_AT_ONCE}]`);
+      const [piece] = await this.database
+        .current()
+        .select({
+          wavelengthsNm: sql<number[]>`${spectra.wavelengthsNm}${slice}`,
+          fluxPerNm: sql<number[]>`${spectra.fluxPerNm}${slice}`,
+        })
+        .from(spectra)
+        .where(isWanted);
+      wavelengthsNm.push(...(piece?.wavelengthsNm ?? []));
+      fluxPerNm.push(...(piece?.fluxPerNm ?? []));
+    });
+    return { ...named, wavelengthsNm, fluxPerNm };
   }
 }
