@@ -300,3 +300,19 @@ describe('twenty thousand draws', () => {
     expect(longestMs).toBeLessThan(600);
   });
 });
+
+describe('a line', () => {
+  it('has a size and no surface brightness, as in the columns of a target', async () => {
+    const source = {
+      redshift: 7,
+      light: { kind: 'lineFlux', fluxErgSCm2: 2e-17, restWavelengthNm: 121.567 },
+      extent: { kind: 'sersic', halfLightRadius: 0.4, unit: 'arcsec' },
+    };
+    const target = await aTarget(draft, source);
+    const { body } = await report(source).expect(200);
+    expect(body.ledger.totalMagnitudeAb).not.toBeNull();
+    expect(body.image.halfLightRadiusArcsec).toBe(0.4);
+    expect(body.image.meanSurfaceBrightnessAbMagPerArcsec2).toBeNull();
+    expect(target['computed']).toMatchObject({ halfLightRadiusArcsec: 0.4, surfaceBrightnessAbMagPerArcsec2: null });
+  });
+});

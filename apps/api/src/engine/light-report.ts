@@ -112,7 +112,8 @@ export async function lightReport(inputs: ReportInputs, { cosmology, uploaded }:
     spectrum: spectrumOf(arriving),
     lines: observedLines(redshift, arriving),
     atmosphere: data.atmosphere.map(({ label, kind, lowNm, highNm }) => ({ label, kind, lowNm, highNm })),
-    image: imageOf(extent, size, magnitudeAb, fwhmArcsec, redshift),
+    // The magnitude of a line is that of its flux spread over a band: no brightness of a surface.
+    image: imageOf(extent, size, arriving?.kind === 'line' ? null : magnitudeAb, fwhmArcsec, redshift),
     uncertainty:
       light === null || arriving === undefined || range === undefined || unusableRedshift.length > 0
         ? null
