@@ -28,6 +28,8 @@ const gates = [
     command: [tool('vitest'), 'run', '--project', 'api', '--exclude', 'tests/faults/**'],
     counts: true,
     isOnServer: true,
+    // Each of the two api gates uses one core.
+    isBeside: 'api',
   },
   {
     name: 'journeys',
@@ -56,7 +58,10 @@ for (const signal of ['SIGINT', 'SIGTERM']) {
 
 const asked = gates.filter(({ name }) => wanted.length === 0 || wanted.includes(name));
 const results = await Promise.all(asked.filter(({ isStatic }) => isStatic).map(timed));
-for (const gate of asked.filter(({ isStatic }) => !isStatic)) results.push(await timed(gate));
+for (const gate of asked.filter(({ isStatic, isBeside }) => !isStatic && !isAsked(isBeside))) {
+  const beside = asked.filter(({ isBeside }) => isBeside === gate.name);
+  results.push(...(await Promise.all([gate, ...beside].map(timed))));
+}
 rmSync(countsFolder, { recursive: true, force: true });
 
 const width = Math.max(...results.map(({ title }) => title.length));
@@ -77,9 +82,18 @@ const total = (key) => results.reduce((sum, result) => sum + result[key], 0);
 console.log(`\n${total('passed')} passed, ${total('failed')} failed`);
 process.exit(total('failed') === 0 ? 0 : 1);
 
+function isAsked(name) {
+  return asked.some((gate) => gate.name === name);
+}
+
+/** What runs beside others keeps its words until it has ended. */
+function isQuiet({ isStatic, isBeside }) {
+  return isStatic || isAsked(isBeside);
+}
+
 async function timed(gate) {
   const title = gate.title ?? gate.name;
-  if (!gate.isStatic) console.log(`\n== ${title}`);
+  if (!isQuiet(gate)) console.log(`\n== ${title}`);
   const startedAt = Date.now();
   const outcome = gate.isOnServer ? await runOnServer(gate) : await run(gate);
   return { title, seconds: (Date.now() - startedAt) / 1000, ...outcome };
@@ -118,7 +132,7 @@ async function run(gate, environment = {}) {
   const said = [];
   const code = await new Promise((resolve) => {
     const child = spawn(program === 'node' ? process.execPath : program, parameters, {
-      stdio: gate.isStatic ? ['ignore', 'pipe', 'pipe'] : 'inherit',
+      stdio: isQuiet(gate) ? ['ignore', 'pipe', 'pipe'] : 'inherit',
       shell: process.platform === 'win32',
       env: { ...process.env, ...environment, FAINTWARD_COUNTS: countsFile },
     });
@@ -130,7 +144,7 @@ async function run(gate, environment = {}) {
     });
     child.on('close', (status) => resolve(status ?? 1));
   });
-  if (gate.isStatic) console.log(`\n== ${gate.title ?? gate.name}\n${Buffer.concat(said).toString().trimEnd()}`);
+  if (isQuiet(gate)) console.log(`\n== ${gate.title ?? gate.name}\n${Buffer.concat(said).toString().trimEnd()}`);
   if (!gate.counts) return { passed: code === 0 ? 1 : 0, failed: code === 0 ? 0 : 1, skipped: 0 };
   const counted = existsSync(countsFile)
     ? JSON.parse(readFileSync(countsFile, 'utf8'))
