@@ -10,7 +10,7 @@ import {
   spectrumOf,
 } from '../../../tests/factories/lights.js';
 import { arrivingLight } from './arriving-light.js';
-import { DARK_TRANSMISSION } from './arriving-continuum.js';
+import { DARK_TRANSMISSION } from './no-light.js';
 import { Ledger } from './ledger.js';
 import { boxCurve, sampledCurve } from './sampled-curve.js';
 import type { ContinuumLight, LineLight } from './source-light.js';

@@ -1,5 +1,6 @@
 import { CM_PER_MPC } from './constants.js';
-import { DARK_TRANSMISSION, inMicrons, type LightCaution, NO_DISTANCE } from './arriving-continuum.js';
+import type { LightCaution } from './arriving-continuum.js';
+import { DARK_TRANSMISSION, distanceModulusMag, inMicrons, NO_DISTANCE } from './no-light.js';
 import { attenuationMag, defaultTotalToSelective, DUST_LAWS } from './dust.js';
 import { LYMAN_ALPHA_NM } from './lines.js';
 import { type Ledger, ledgerInput, type LedgerInput } from './ledger.js';
@@ -143,9 +144,9 @@ export class ArrivingLine {
       });
     }
     if (light.frame === 'rest') {
-      const now = this.modulus(this.distances);
+      const now = distanceModulusMag(this.distances, redshift);
       if (light.derivedWith !== undefined) {
-        const then = this.modulus(light.derivedWith);
+        const then = distanceModulusMag(light.derivedWith, redshift);
         steps.push({
           id: 'literature-cosmology',
           mag: then - now,
@@ -241,10 +242,6 @@ export class ArrivingLine {
       code: 'noFluxInBand',
       message: `No flux of this line: it lies short of the Lyman break, which is at ${inMicrons(LYMAN_ALPHA_NM * (1 + this.redshift))}.`,
     };
-  }
-
-  private modulus(distances: LuminosityDistances): number {
-    return 5 * Math.log10(distances.luminosityDistanceMpc(this.redshift)) + 25;
   }
 }
 
