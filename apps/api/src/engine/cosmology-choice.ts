@@ -2,7 +2,8 @@ import type { SourceInCosmology } from '@faintward/contracts/light-report';
 import { COSMOLOGY_PRESETS, distanceRows } from '@faintward/cosmology';
 import type { Response } from '@faintward/photometry';
 import { type ChosenCosmology, chooseCosmology } from './cosmologies.js';
-import { lightFaults, isIntrinsic, type LightSetting } from './light.js';
+import { lightFaults } from './light-faults.js';
+import { isIntrinsic, type LightSetting } from './light.js';
 import type { ReportInputs } from './light-report.js';
 import { arrive, magnitudeIn, ultravioletMagnitudeOf } from './source.js';
 

@@ -14,7 +14,9 @@ import {
 import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
 import { toEngineExtent } from './extent.js';
-import { lightFaults, NO_UPLOADS, resolveLight, type UploadedSpectra } from './light.js';
+import { lightFaults } from './light-faults.js';
+import { NO_UPLOADS, type UploadedSpectra } from './light.js';
+import { resolveLight } from './resolve-light.js';
 import { lightData } from './light-data.js';
 import { arrive, ultravioletMagnitudeOf } from './source.js';
 

@@ -1,6 +1,6 @@
 import type { Extent } from '@faintward/contracts/light';
 import type { Extent as EngineExtent } from '@faintward/exposure';
-import { typicalSizeKpc } from '@faintward/photometry';
+import { meanEffectiveSurfaceBrightness, typicalSizeKpc } from '@faintward/photometry';
 import { lightData } from './light-data.js';
 
 /** A size on the sky, with where it comes from. */
@@ -57,6 +57,17 @@ export function resolveExtent(extent: Extent, setting: ExtentSetting): ResolvedE
       };
     }
   }
+}
+
+/** Mean inside the half-light radius, before seeing, in AB mag/arcsec²; of an even surface what it is given as; null for a point. */
+export function meanSurfaceBrightnessOf(
+  extent: Extent,
+  size: ResolvedExtent | null,
+  magnitudeAb: number | null,
+): number | null {
+  if (magnitudeAb === null) return null;
+  if (extent.kind === 'uniform') return magnitudeAb;
+  return size === null ? null : meanEffectiveSurfaceBrightness(magnitudeAb, size.halfLightRadiusArcsec, size.axisRatio);
 }
 
 /** The same in the terms of the exposure engine. */

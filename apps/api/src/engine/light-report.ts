@@ -22,7 +22,6 @@ import {
   imageRegime,
   Ledger,
   lensingMag,
-  meanEffectiveSurfaceBrightness,
   type Response,
   responseOf,
   surfaceBrightnessDimmingMag,
@@ -31,8 +30,9 @@ import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
 import { compareCosmologies } from './cosmology-choice.js';
 import { toDistanceRow } from './distances.js';
-import { resolveExtent, type ResolvedExtent } from './extent.js';
-import { lightFaults, type UploadedSpectra } from './light.js';
+import { meanSurfaceBrightnessOf, resolveExtent, type ResolvedExtent } from './extent.js';
+import { lightFaults } from './light-faults.js';
+import type { UploadedSpectra } from './light.js';
 import { lightData } from './light-data.js';
 import { observedLines } from './observed-lines.js';
 import { uncertaintyOf } from './light-uncertainty.js';
@@ -274,16 +274,6 @@ function imageOf(
     regime: extent.kind === 'uniform' ? 'extended' : imageRegime(round, seeingFwhmArcsec),
     source: size?.source ?? null,
   };
-}
-
-export function meanSurfaceBrightnessOf(
-  extent: Extent,
-  size: ResolvedExtent | null,
-  magnitudeAb: number | null,
-): number | null {
-  if (magnitudeAb === null) return null;
-  if (extent.kind === 'uniform') return magnitudeAb;
-  return size === null ? null : meanEffectiveSurfaceBrightness(magnitudeAb, size.halfLightRadiusArcsec, size.axisRatio);
 }
 
 function hashOf(inputs: ReportInputs, cosmology: ChosenCosmology, uploaded: UploadedSpectra): string {

@@ -8,7 +8,8 @@ import {
   sampleLight,
   type LightSampling,
 } from '@faintward/photometry';
-import { type LightSetting, resolveLight } from './light.js';
+import type { LightSetting } from './light.js';
+import { resolveLight } from './resolve-light.js';
 import { mapInSlices } from './slices.js';
 import { lightData } from './light-data.js';
 import type { ReportInputs } from './light-report.js';

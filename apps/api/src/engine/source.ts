@@ -2,7 +2,8 @@ import type { Notice } from '@faintward/contracts/common';
 import type { BandId, Extent, Light } from '@faintward/contracts/light';
 import type { InstrumentMode } from '@faintward/exposure';
 import { type ArrivingLight, arrivingLight, type NoLight, type Response } from '@faintward/photometry';
-import { isLine, resolveLight, type LightSetting } from './light.js';
+import { isLine, type LightSetting } from './light.js';
+import { resolveLight } from './resolve-light.js';
 import { lightData } from './light-data.js';
 
 /** Rest wavelength of the far ultraviolet luminosity that sizes go with. */

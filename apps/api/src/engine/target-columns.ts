@@ -13,10 +13,10 @@ import {
 } from '@faintward/photometry';
 import { canonicalJson, sha256 } from './canonical-json.js';
 import type { ChosenCosmology } from './cosmologies.js';
-import { resolveExtent } from './extent.js';
-import { apparentMagnitudeAbOf, lightFaults, NO_UPLOADS, type UploadedSpectra } from './light.js';
+import { meanSurfaceBrightnessOf, resolveExtent } from './extent.js';
+import { apparentMagnitudeAbOf, NO_UPLOADS, type UploadedSpectra } from './light.js';
+import { lightFaults } from './light-faults.js';
 import { lightData } from './light-data.js';
-import { meanSurfaceBrightnessOf } from './light-report.js';
 import { mapInSlices } from './slices.js';
 import {
   absoluteMagnitudeAt,

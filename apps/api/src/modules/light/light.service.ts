@@ -10,7 +10,8 @@ import type {
 import { AntipodeError } from '@faintward/cosmology';
 import { Injectable } from '@nestjs/common';
 import { chooseCosmology } from '../../engine/cosmologies.js';
-import { lightFaults, NO_UPLOADS } from '../../engine/light.js';
+import { lightFaults } from '../../engine/light-faults.js';
+import { NO_UPLOADS } from '../../engine/light.js';
 import { lightReport } from '../../engine/light-report.js';
 import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { suggestionsAt } from '../../engine/suggestions.js';

@@ -1,6 +1,6 @@
 import type { FieldError } from '@faintward/contracts/errors';
 import type { NewTarget, TargetCells, TargetInput, TargetPatch } from '@faintward/contracts/targets';
-import { lightFaults } from '../../engine/light.js';
+import { lightFaults } from '../../engine/light-faults.js';
 import { uncertaintyFaults } from '../../engine/redshift-faults.js';
 import { validationFailed } from '../../platform/validation.js';
 import { movedWithRedshift } from './redshift-uncertainty-text.js';

@@ -17,7 +17,7 @@ import {
   readDelimitedText,
   TableRefused,
 } from '@faintward/tables';
-import { lightFaults } from '../../engine/light.js';
+import { lightFaults } from '../../engine/light-faults.js';
 import { DomainError } from '../../platform/domain-error.js';
 import { refuseMoreLinesThan } from '../../platform/number-tables.js';
 import { uncertaintyFaults } from '../../engine/redshift-faults.js';

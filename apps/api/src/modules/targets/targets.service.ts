@@ -12,7 +12,7 @@ import { writeDelimitedText } from '@faintward/tables';
 import { Injectable } from '@nestjs/common';
 import { DatabaseService } from '../../database/transaction.js';
 import { chooseCosmology } from '../../engine/cosmologies.js';
-import { lightFaults } from '../../engine/light.js';
+import { lightFaults } from '../../engine/light-faults.js';
 import { ProposalSpectra } from '../../engine/proposal-spectra.service.js';
 import { ProposalSkies } from '../../engine/proposal-sky.service.js';
 import { computeTargetColumns } from '../../engine/target-columns.js';
