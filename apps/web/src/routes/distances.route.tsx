@@ -3,7 +3,7 @@ import Box from '@mui/material/Box';
 import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import { useQueries, useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { distanceQueries } from '../features/distances/api/distances';
 import {
@@ -23,19 +23,17 @@ import { distanceQuantities } from '../features/distances/quantities';
 import { ApiError } from '../lib/api';
 import { downloadText, toCsv } from '../lib/csv';
 import { counted } from '../lib/format';
-import { useDebounced } from '../lib/useDebounced';
+import { useKeptInAddress } from '../lib/useKeptInAddress';
+import { CalculatorFrame } from '../ui/calculator/CalculatorFrame';
 import { Note } from '../ui/Note';
-import { useNotices } from '../ui/Notices';
 import { Loaded } from '../ui/PageStates';
-import { PageFrame } from '../ui/PageFrame';
 import { Panel } from '../ui/Panel';
 
 export function Component() {
-  const [address, setAddress] = useSearchParams();
+  const [address] = useSearchParams();
   const [state, setState] = useState(() => readState(address));
   const [opened, setOpened] = useState(0);
-  const announce = useNotices();
-  const settled = useDebounced(state, 350);
+  const settled = useKeptInAddress(state, writeState, 350);
 
   const redshifts = useMemo(() => readRedshifts(settled.redshiftText), [settled.redshiftText]);
   const cosmology = useMemo(() => readCosmology(settled), [settled]);
@@ -44,10 +42,6 @@ export function Component() {
   const model = cosmology.value ?? 'planck18';
   const canAsk = redshifts.value !== undefined && cosmology.value !== undefined;
   const compares = settled.compare && model !== 'conv70';
-
-  useEffect(() => {
-    setAddress(writeState(settled), { replace: true });
-  }, [settled, setAddress]);
 
   const presets = useQuery(distanceQueries.presets());
   const main = useQuery({ ...distanceQueries.rows(model, asked), enabled: canAsk });
@@ -67,29 +61,16 @@ export function Component() {
   const besideRows = compares ? beside.data : undefined;
 
   return (
-    <PageFrame
+    <CalculatorFrame
       title="Distances and dimming"
-      eyebrow="Calculator · needs no account · the address of this page holds what you typed"
       actions={
-        <>
-          <Button
-            onClick={() =>
-              void navigator.clipboard.writeText(window.location.href).then(
-                () => announce('Link copied.'),
-                () => announce('The browser did not allow copying: copy the address of this page.'),
-              )
-            }
-          >
-            Copy the link
-          </Button>
-          <Button
-            variant="contained"
-            disabled={!main.data}
-            onClick={() => main.data && downloadText('distances.csv', tableText(main.data.rows, besideRows?.rows))}
-          >
-            Download CSV
-          </Button>
-        </>
+        <Button
+          variant="contained"
+          disabled={!main.data}
+          onClick={() => main.data && downloadText('distances.csv', tableText(main.data.rows, besideRows?.rows))}
+        >
+          Download CSV
+        </Button>
       }
       below={<CalculatorTabs part="distances" />}
     >
@@ -170,7 +151,7 @@ export function Component() {
           <DistancesTable rows={main.data.rows} onOpen={setOpened} />
         </Box>
       )}
-    </PageFrame>
+    </CalculatorFrame>
   );
 }
 

@@ -1,7 +1,6 @@
 import Box from '@mui/material/Box';
-import Button from '@mui/material/Button';
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { estimateQueries } from '../features/exposure/api/estimate';
 import { SketchForm } from '../features/exposure/components/SketchForm';
@@ -16,20 +15,19 @@ import {
 } from '../features/exposure/sketch';
 import { ApiError } from '../lib/api';
 import { facilityQueries } from '../lib/queries/facilities';
-import { useDebounced } from '../lib/useDebounced';
+import { useKeptInAddress } from '../lib/useKeptInAddress';
+import { CalculatorFrame } from '../ui/calculator/CalculatorFrame';
+import { IncompleteNote } from '../ui/calculator/IncompleteNote';
 import { EmptyState } from '../ui/EmptyState';
 import { EstimateView } from '../ui/estimate/EstimateView';
 import { Note } from '../ui/Note';
-import { useNotices } from '../ui/Notices';
 import { Loaded } from '../ui/PageStates';
-import { PageFrame } from '../ui/PageFrame';
 import { Panel } from '../ui/Panel';
 
 export function Component() {
-  const [address, setAddress] = useSearchParams();
+  const [address] = useSearchParams();
   const [typed, setTyped] = useState(() => readSketch(address));
   const [unknown] = useState(() => unknownInAddress(address));
-  const announce = useNotices();
   const telescopes = useQuery(facilityQueries.telescopes());
   const modes = useMemo(() => offeredModes(telescopes.data?.rows ?? []), [telescopes.data]);
   // Without a choice a mode stands that suits the source the page opens with, so that it answers at once.
@@ -37,12 +35,8 @@ export function Component() {
   const mode = modes.some((one) => one.id === typed.mode) ? typed.mode : (first?.id ?? '');
   const isUnknownMode = typed.mode !== '' && modes.length > 0 && mode !== typed.mode;
   const sketch = useMemo(() => ({ ...typed, mode }), [typed, mode]);
-  const settled = useDebounced(sketch, 400);
+  const settled = useKeptInAddress(sketch, writeSketch, 400);
   const { request, errors } = useMemo(() => toRequest(settled), [settled]);
-
-  useEffect(() => {
-    setAddress(writeSketch(settled), { replace: true });
-  }, [settled, setAddress]);
 
   const estimate = useQuery({ ...estimateQueries.one(request), enabled: request !== undefined && modes.length > 0 });
   const serverErrors: SketchErrors = {};
@@ -55,22 +49,7 @@ export function Component() {
   const shownErrors = { ...serverErrors, ...errors };
 
   return (
-    <PageFrame
-      title="Exposure sketchpad"
-      eyebrow="Calculator · needs no account · the address of this page holds what you typed"
-      actions={
-        <Button
-          onClick={() =>
-            void navigator.clipboard.writeText(window.location.href).then(
-              () => announce('Link copied.'),
-              () => announce('The browser did not allow copying: copy the address of this page.'),
-            )
-          }
-        >
-          Copy the link
-        </Button>
-      }
-    >
+    <CalculatorFrame title="Exposure sketchpad">
       <Loaded query={telescopes} what="The instruments">
         {(list) => (
           <Box
@@ -111,10 +90,7 @@ export function Component() {
               <Box sx={{ minWidth: 0 }}>
                 {Object.keys(errors).length > 0 && (
                   <Box sx={{ mb: 2 }}>
-                    <Note tone="warning">
-                      Something in the form is not complete yet
-                      {estimate.data ? ': this is the answer to what stood there before' : ''}.
-                    </Note>
+                    <IncompleteNote hasAnswer={estimate.data !== undefined} />
                   </Box>
                 )}
                 {(request !== undefined || estimate.data) && (
@@ -127,6 +103,6 @@ export function Component() {
           </Box>
         )}
       </Loaded>
-    </PageFrame>
+    </CalculatorFrame>
   );
 }

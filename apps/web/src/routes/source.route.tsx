@@ -2,7 +2,7 @@ import Box from '@mui/material/Box';
 import Button from '@mui/material/Button';
 import Stack from '@mui/material/Stack';
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { lightReportQueries } from '../features/distances/api/light';
 import { CalculatorTabs } from '../features/distances/components/CalculatorTabs';
@@ -17,27 +17,22 @@ import {
 } from '../features/distances/source';
 import { ApiError } from '../lib/api';
 import { downloadText } from '../lib/csv';
-import { useDebounced } from '../lib/useDebounced';
+import { useKeptInAddress } from '../lib/useKeptInAddress';
+import { CalculatorFrame } from '../ui/calculator/CalculatorFrame';
+import { IncompleteNote } from '../ui/calculator/IncompleteNote';
 import { reportCsv } from '../ui/lightReport/reportCsv';
 import { LightReportView } from '../ui/lightReport/LightReportView';
 import { Note } from '../ui/Note';
-import { useNotices } from '../ui/Notices';
 import { Loaded } from '../ui/PageStates';
-import { PageFrame } from '../ui/PageFrame';
 import { Panel } from '../ui/Panel';
 
 /** One source: what its light does on the way, without an account and shareable by its address. */
 export function Component() {
-  const [address, setAddress] = useSearchParams();
+  const [address] = useSearchParams();
   const [state, setState] = useState(() => readSource(address));
   const [table, setTable] = useState<DistributionTable>(null);
-  const announce = useNotices();
-  const settled = useDebounced(state, 400);
+  const settled = useKeptInAddress(state, writeSource, 400);
   const { request, errors } = useMemo(() => toLightRequest(settled, table), [settled, table]);
-
-  useEffect(() => {
-    setAddress(writeSource(settled), { replace: true });
-  }, [settled, setAddress]);
 
   const report = useQuery(lightReportQueries.one(request));
   const shownErrors: SourceErrors = { ...errors };
@@ -50,29 +45,16 @@ export function Component() {
   const isIncomplete = request === undefined;
 
   return (
-    <PageFrame
+    <CalculatorFrame
       title="The light of a source"
-      eyebrow="Calculator · needs no account · the address of this page holds what you typed"
       actions={
-        <>
-          <Button
-            onClick={() =>
-              void navigator.clipboard.writeText(window.location.href).then(
-                () => announce('Link copied.'),
-                () => announce('The browser did not allow copying: copy the address of this page.'),
-              )
-            }
-          >
-            Copy the link
-          </Button>
-          <Button
-            variant="contained"
-            disabled={!report.data}
-            onClick={() => report.data && downloadText('light.csv', reportCsv(report.data))}
-          >
-            Download CSV
-          </Button>
-        </>
+        <Button
+          variant="contained"
+          disabled={!report.data}
+          onClick={() => report.data && downloadText('light.csv', reportCsv(report.data))}
+        >
+          Download CSV
+        </Button>
       }
       below={<CalculatorTabs part="source" />}
     >
@@ -99,12 +81,7 @@ export function Component() {
           )}
         </Panel>
         <Stack sx={{ gap: 2, minWidth: 0 }}>
-          {isIncomplete && (
-            <Note tone="warning">
-              Something in the form is not complete yet
-              {report.data ? ': this is the answer to what stood there before' : ''}.
-            </Note>
-          )}
+          {isIncomplete && <IncompleteNote hasAnswer={report.data !== undefined} />}
           {(request !== undefined || report.data) && (
             <Loaded query={report} what="The report">
               {(data) => (
@@ -117,6 +94,6 @@ export function Component() {
           )}
         </Stack>
       </Box>
-    </PageFrame>
+    </CalculatorFrame>
   );
 }
