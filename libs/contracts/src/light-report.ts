@@ -383,7 +383,8 @@ export const ReferenceDataFile = z
     source: z.string(),
     licence: z.string(),
     units: z.string(),
-    provenance: z.enum(['published', 'publishedFromMemory', 'commonPractice']),
+    /** `mixed`: each row says for itself. */
+    provenance: z.enum(['published', 'publishedFromMemory', 'commonPractice', 'mixed']),
     /** Beginning of the SHA-256 of its content. */
     contentHash: z.string(),
   })

@@ -10,7 +10,7 @@ import {
   DustLawsData,
   intergalacticData,
   LinesData,
-  Provenance,
+  FileProvenance,
   SpectrumData,
   SpectrumSeriesData,
   Text,
@@ -70,7 +70,7 @@ const Meta = z.strictObject({
   source: Text,
   licence: Text,
   units: Text,
-  provenance: Provenance,
+  provenance: FileProvenance,
   notes: Text,
 });
 /** What a file says about itself. */

@@ -12,6 +12,8 @@ import type { TypicalValues } from './typical-values.js';
 export const Text = z.string().trim().min(1);
 const Positive = z.number().positive();
 export const Provenance = z.enum(['published', 'publishedFromMemory', 'commonPractice']);
+/** `mixed`: the rows of a file differ, and each says for itself. */
+export const FileProvenance = z.enum([...Provenance.options, 'mixed']);
 
 const RatioBelow = Positive.nullable();
 const LineBranchData = z.strictObject({

@@ -52,6 +52,13 @@ describe('the files of reference data', () => {
     if (meta['licence']!.includes('LICENCES.md')) expect(read('LICENCES.md')).toContain(file);
   });
 
+  it.each(FILES)('%s is called mixed where its rows say something else than the file', (file) => {
+    const { meta, data } = JSON.parse(read(file)) as { meta: { provenance: string }; data: unknown };
+    const ofRows = [...JSON.stringify(data).matchAll(/"\w*[pP]rovenance":"(\w+)"/g)].map(([, word]) => word);
+    if (ofRows.some((word) => word !== meta.provenance)) expect(meta.provenance).toBe('mixed');
+    else expect(meta.provenance).not.toBe('mixed');
+  });
+
   it('named in the README are there', () => {
     const named = [...read('README.md').matchAll(/^\| `([^`]+)` \|/gm)].map(([, name]) => name);
     expect(named.sort()).toEqual(FILES);

@@ -1,5 +1,5 @@
 import type { LineId, SpectralLine } from '../lines.js';
-import type { Provenance } from '../provenance.js';
+import type { FileProvenance } from '../provenance.js';
 import type { SampledCurve } from '../sampled-curve.js';
 
 /** A narrow emission line. */
@@ -27,7 +27,7 @@ export interface RestSpectrum {
   readonly label: string;
   readonly source: string;
   /** `given`: what the investigator brought. */
-  readonly provenance: Provenance | 'given';
+  readonly provenance: FileProvenance | 'given';
   /** f_λ on an arbitrary scale. */
   readonly continuum: SampledCurve;
   /** Narrow lines are carried apart and never sampled. */

@@ -1,6 +1,6 @@
 import { OutOfDomainError } from '../domain.js';
 import { createLines, type LineId, type LinesTable, type SpectralLine } from '../lines.js';
-import type { Provenance } from '../provenance.js';
+import type { FileProvenance } from '../provenance.js';
 import { sampledCurve, type SampledCurve } from '../sampled-curve.js';
 
 /** A file of reference data: what it is and whose, and the numbers. */
@@ -10,7 +10,7 @@ export interface ReferenceFile<Data> {
     readonly source: string;
     readonly licence: string;
     readonly units: string;
-    readonly provenance: Provenance;
+    readonly provenance: FileProvenance;
     readonly notes: string;
   };
   readonly data: Data;
@@ -51,14 +51,14 @@ export type SpectralLines = Readonly<Record<LineId, SpectralLine>>;
 /** A published spectrum. */
 export interface SpectrumTemplate {
   readonly source: string;
-  readonly provenance: Provenance;
+  readonly provenance: FileProvenance;
   readonly curve: SampledCurve;
 }
 
 /** Published spectra by phase. */
 export interface SpectrumSeries {
   readonly source: string;
-  readonly provenance: Provenance;
+  readonly provenance: FileProvenance;
   /** At least two, ascending; a curve for each, on the same wavelengths and one scale. */
   readonly phasesDays: readonly number[];
   readonly curves: readonly SampledCurve[];
