@@ -6,7 +6,6 @@ import { estimateQueries } from '../features/exposure/api/estimate';
 import { SketchForm } from '../features/exposure/components/SketchForm';
 import {
   fieldOf,
-  offeredModes,
   readSketch,
   toRequest,
   unknownInAddress,
@@ -14,6 +13,7 @@ import {
   type SketchErrors,
 } from '../features/exposure/sketch';
 import { ApiError } from '../lib/api';
+import { offeredModes } from '../lib/offeredModes';
 import { facilityQueries } from '../lib/queries/facilities';
 import { useKeptInAddress } from '../lib/useKeptInAddress';
 import { CalculatorFrame } from '../ui/calculator/CalculatorFrame';
@@ -32,7 +32,7 @@ export function Component() {
   const modes = useMemo(() => offeredModes(telescopes.data?.rows ?? []), [telescopes.data]);
   // Without a choice a mode stands that suits the source the page opens with, so that it answers at once.
   const first = modes.find((one) => one.mode.configuration.bandId === 'J') ?? modes[0];
-  const mode = modes.some((one) => one.id === typed.mode) ? typed.mode : (first?.id ?? '');
+  const mode = modes.some((one) => one.mode.modeId === typed.mode) ? typed.mode : (first?.mode.modeId ?? '');
   const isUnknownMode = typed.mode !== '' && modes.length > 0 && mode !== typed.mode;
   const sketch = useMemo(() => ({ ...typed, mode }), [typed, mode]);
   const settled = useKeptInAddress(sketch, writeSketch, 400);

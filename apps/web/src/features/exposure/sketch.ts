@@ -1,6 +1,6 @@
 import { EstimateRequest } from '@faintward/contracts/estimates';
-import type { Telescope } from '@faintward/contracts/facilities';
 import { z } from 'zod';
+import { fromGoalDraft, goalFieldOfPath } from '../../ui/estimate/goalDraft';
 import { parseNumber } from '../../ui/form/parseNumber';
 import { LightDraft } from '../../ui/light/lightDraft';
 import { lightFieldOf, readLightDraft } from '../../ui/light/readLightDraft';
@@ -68,33 +68,13 @@ export function writeSketch(sketch: Sketch): URLSearchParams {
   return address;
 }
 
-/** Every mode that may be asked for, with its instrument and telescope. */
-export function offeredModes(telescopes: readonly Telescope[]) {
-  return telescopes.flatMap((telescope) =>
-    telescope.instruments
-      .filter((instrument) => instrument.isOffered)
-      .flatMap((instrument) =>
-        instrument.modes
-          .filter((mode) => mode.isOffered)
-          .map((mode) => ({ telescope, instrument, mode, id: mode.modeId })),
-      ),
-  );
-}
-
 /** Which typed field a path of the request came from, beside the source's light and size. */
 const fieldOfPath: Record<string, SketchField> = {
+  ...goalFieldOfPath,
   cosmology: 'cosmology',
   'target.redshift': 'redshift',
   setup: 'mode',
   'setup.modeId': 'mode',
-  'goal.value': 'snr',
-  'goal.sigma': 'snr',
-  'goal.per': 'per',
-  'goal.exposureSeconds': 'single',
-  'goal.exposureCount': 'count',
-  'conditions.seeingArcsec': 'seeing',
-  'conditions.airmass': 'airmass',
-  'conditions.moonClass': 'moon',
 };
 
 export function fieldOf(path: string, sketch: Sketch): SketchField | undefined {
@@ -103,32 +83,15 @@ export function fieldOf(path: string, sketch: Sketch): SketchField | undefined {
 
 /** The request that a sketch asks, or what is wrong with which field. */
 export function toRequest(sketch: Sketch): { request: EstimateRequest | undefined; errors: SketchErrors } {
-  const number = (field: SketchField) => parseNumber(sketch[field]) ?? undefined;
   const source = readLightDraft(sketch);
-  const goal = {
-    signalToNoise: { kind: 'signalToNoise', value: number('snr'), per: sketch.per, exposureSeconds: number('single') },
-    lineSignificance: { kind: 'lineSignificance', sigma: number('snr'), exposureSeconds: number('single') },
-    exposureTime: {
-      kind: 'exposureTime',
-      exposureSeconds: number('single'),
-      exposureCount: number('count'),
-      per: sketch.per,
-    },
-  }[sketch.goal];
   const parsed = EstimateRequest.safeParse({
     cosmology: sketch.cosmology,
     target: {
-      redshift: number('redshift'),
+      redshift: parseNumber(sketch.redshift) ?? undefined,
       ...(source.ok ? { light: source.light, extent: source.extent } : placeholder),
     },
     setup: { modeId: sketch.mode },
-    goal,
-    conditions: {
-      seeingArcsec: number('seeing'),
-      airmass: number('airmass'),
-      moonClass: sketch.moon,
-      transparency: sketch.transparency,
-    },
+    ...fromGoalDraft(sketch),
   });
   const errors: SketchErrors = source.ok ? {} : { ...source.errors };
   for (const issue of parsed.error?.issues ?? []) {

@@ -1,22 +1,14 @@
 import { Conditions, Goal } from '@faintward/contracts/estimates';
-import type { Telescope } from '@faintward/contracts/facilities';
 import type { Observation } from '@faintward/contracts/observations';
 import { z } from 'zod';
 import { formatDuration, formatNumber } from '../../lib/format';
+import { perWords } from '../../ui/estimate/estimateWords';
+import { fromGoalDraft, goalFieldOfPath, type GoalDraft } from '../../ui/estimate/goalDraft';
 import { parseNumber } from '../../ui/form/parseNumber';
 
-/** A setup, a goal and conditions as typed and chosen, flat, so that a change of kind loses nothing that was typed. */
-export interface PlanDraft {
+/** A setup, a goal and conditions as typed and chosen. */
+export interface PlanDraft extends GoalDraft {
   mode: string;
-  goal: Goal['kind'];
-  signalToNoise: string;
-  per: string;
-  exposure: string;
-  count: string;
-  seeing: string;
-  airmass: string;
-  moon: string;
-  transparency: string;
   repeat: string;
 }
 export type PlanField = keyof PlanDraft;
@@ -25,9 +17,9 @@ export type PlanErrors = Partial<Record<PlanField, string>>;
 export const firstPlan: PlanDraft = {
   mode: '',
   goal: 'signalToNoise',
-  signalToNoise: '5',
+  snr: '5',
   per: 'aperture',
-  exposure: '',
+  single: '',
   count: '6',
   seeing: '',
   airmass: '1.2',
@@ -48,10 +40,10 @@ export function toPlanDraft({
     ...firstPlan,
     mode: modeId,
     goal: goal.kind,
-    ...(goal.kind === 'signalToNoise' ? { signalToNoise: text(goal.value), per: goal.per } : {}),
-    ...(goal.kind === 'lineSignificance' ? { signalToNoise: text(goal.sigma) } : {}),
+    ...(goal.kind === 'signalToNoise' ? { snr: text(goal.value), per: goal.per } : {}),
+    ...(goal.kind === 'lineSignificance' ? { snr: text(goal.sigma) } : {}),
     ...(goal.kind === 'exposureTime' ? { count: text(goal.exposureCount), per: goal.per ?? 'aperture' } : {}),
-    exposure: text(goal.exposureSeconds),
+    single: text(goal.exposureSeconds),
     seeing: text(conditions.seeingArcsec),
     airmass: text(conditions.airmass),
     moon: conditions.moonClass,
@@ -70,20 +62,10 @@ export type Plan = z.output<typeof Plan>;
 
 /** Which typed field a path of the request came from. */
 const fieldOfPart: Record<string, PlanField> = {
+  ...goalFieldOfPath,
   modeId: 'mode',
   setup: 'mode',
   'setup.modeId': 'mode',
-  goal: 'goal',
-  'goal.kind': 'goal',
-  'goal.value': 'signalToNoise',
-  'goal.sigma': 'signalToNoise',
-  'goal.per': 'per',
-  'goal.exposureSeconds': 'exposure',
-  'goal.exposureCount': 'count',
-  'conditions.seeingArcsec': 'seeing',
-  'conditions.airmass': 'airmass',
-  'conditions.moonClass': 'moon',
-  'conditions.transparency': 'transparency',
   repeatCount: 'repeat',
 };
 export const planFieldOf = (path: string): PlanField | undefined => fieldOfPart[path];
@@ -92,23 +74,10 @@ export type ReadPlan = { ok: true; plan: Plan } | { ok: false; errors: PlanError
 
 /** What a draft asks for, or what is wrong with which field. */
 export function readPlanDraft(draft: PlanDraft): ReadPlan {
-  const number = (field: PlanField) => parseNumber(draft[field]) ?? undefined;
-  const exposureSeconds = number('exposure');
-  const goals = {
-    signalToNoise: { value: number('signalToNoise'), per: draft.per, exposureSeconds },
-    lineSignificance: { sigma: number('signalToNoise'), exposureSeconds },
-    exposureTime: { exposureSeconds, exposureCount: number('count'), per: draft.per },
-  };
   const parsed = Plan.safeParse({
     modeId: draft.mode,
-    goal: { kind: draft.goal, ...goals[draft.goal] },
-    conditions: {
-      seeingArcsec: number('seeing'),
-      airmass: number('airmass'),
-      moonClass: draft.moon,
-      transparency: draft.transparency,
-    },
-    repeatCount: number('repeat'),
+    ...fromGoalDraft(draft),
+    repeatCount: parseNumber(draft.repeat) ?? undefined,
   });
   if (parsed.success) return { ok: true, plan: parsed.data };
   const errors: PlanErrors = {};
@@ -118,32 +87,6 @@ export function readPlanDraft(draft: PlanDraft): ReadPlan {
   }
   return { ok: false, errors };
 }
-
-/** Every mode that may be asked for, with its instrument and telescope. */
-export function offeredModes(telescopes: readonly Telescope[], keptModeId?: string) {
-  return telescopes.flatMap((telescope) =>
-    telescope.instruments.flatMap((instrument) =>
-      instrument.modes
-        .filter((mode) => (instrument.isOffered && mode.isOffered) || mode.modeId === keptModeId)
-        .map((mode) => ({ telescope, instrument, mode })),
-    ),
-  );
-}
-export type OfferedMode = ReturnType<typeof offeredModes>[number];
-
-export const perWords = {
-  aperture: 'aperture',
-  arcsec2: 'square arcsecond',
-  pixel: 'pixel',
-  resolutionElement: 'resolution element',
-} as const;
-
-export const limitWords = {
-  source: 'the source',
-  sky: 'the sky',
-  dark: 'dark current',
-  readNoise: 'read-out',
-} as const;
 
 export function describeGoal(goal: Goal): string {
   const number = (value: number) => formatNumber(value, { significant: 3 });

@@ -16,20 +16,13 @@ import { useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { ApiError } from '../../../lib/api';
 import { counted, formatDuration, formatNumber } from '../../../lib/format';
+import { offeredModes } from '../../../lib/offeredModes';
 import { useDebounced } from '../../../lib/useDebounced';
 import { Note } from '../../../ui/Note';
 import { Panel } from '../../../ui/Panel';
 import { ProblemDisplay } from '../../../ui/ProblemDisplay';
 import { observationQueries, useObservationMutations } from '../api/observations';
-import {
-  firstPlan,
-  offeredModes,
-  planFieldOf,
-  readPlanDraft,
-  toPlanDraft,
-  type PlanDraft,
-  type PlanErrors,
-} from '../plan';
+import { firstPlan, planFieldOf, readPlanDraft, toPlanDraft, type PlanDraft, type PlanErrors } from '../plan';
 import { EstimateSummary } from './EstimateSummary';
 import { PlanForm } from './PlanForm';
 

@@ -8,7 +8,7 @@ import { useState } from 'react';
 import { formatDuration, formatNumber } from '../../../lib/format';
 import { LightBudget } from '../../../ui/LightBudget';
 import { Note } from '../../../ui/Note';
-import { limitWords, perWords } from '../plan';
+import { limitWords, perWords } from '../../../ui/estimate/estimateWords';
 
 /** The answer in three numbers, with the light budget a click away. */
 export function EstimateSummary({ estimate }: { estimate: Estimate }) {

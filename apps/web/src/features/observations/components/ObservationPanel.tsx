@@ -12,6 +12,7 @@ import { Link as RouterLink } from 'react-router-dom';
 import { paths } from '../../../app/paths';
 import { ApiError } from '../../../lib/api';
 import { formatDuration } from '../../../lib/format';
+import { offeredModes } from '../../../lib/offeredModes';
 import { ChangedMeanwhileDialog } from '../../../ui/ChangedMeanwhileDialog';
 import { Note } from '../../../ui/Note';
 import { useNotices } from '../../../ui/Notices';
@@ -20,15 +21,7 @@ import { RedshiftValue } from '../../../ui/RedshiftValue';
 import { EstimateView } from '../../../ui/estimate/EstimateView';
 import { LeaveGuard } from '../../../ui/form/LeaveGuard';
 import { useObservationMutations } from '../api/observations';
-import {
-  describeConditions,
-  describeGoal,
-  offeredModes,
-  planFieldOf,
-  readPlanDraft,
-  toPlanDraft,
-  type PlanErrors,
-} from '../plan';
+import { describeConditions, describeGoal, planFieldOf, readPlanDraft, toPlanDraft, type PlanErrors } from '../plan';
 import { PlanForm } from './PlanForm';
 
 export interface ObservationPanelProps {

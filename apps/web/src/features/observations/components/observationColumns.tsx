@@ -6,7 +6,8 @@ import { bySeverity } from '../../../lib/bySeverity';
 import { counted, formatDuration, formatNumber } from '../../../lib/format';
 import type { TableColumn } from '../../../ui/DataTable';
 import { RedshiftValue } from '../../../ui/RedshiftValue';
-import { describeConditions, describeGoal, limitWords, shortConditions } from '../plan';
+import { limitWords } from '../../../ui/estimate/estimateWords';
+import { describeConditions, describeGoal, shortConditions } from '../plan';
 
 export const observationColumns: TableColumn<Observation>[] = [
   {
