@@ -1,15 +1,15 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { parseLight } from './quantity.js';
+import { readLight } from './quantity.js';
 
-describe('parseLight reads', () => {
+describe('readLight reads', () => {
   it.each([
     ['22.5 mag', { kind: 'abMagnitude', magnitudeAb: 22.5 }],
     ['24.3 mag AB', { kind: 'abMagnitude', magnitudeAb: 24.3 }],
     ['-1.5 ABmag', { kind: 'abMagnitude', magnitudeAb: -1.5 }],
     ['25.1mag (AB)', { kind: 'abMagnitude', magnitudeAb: 25.1 }],
   ])('%s as a magnitude', (text, light) => {
-    expect(parseLight(text)).toEqual({ ok: true, light });
+    expect(readLight(text)).toEqual({ ok: true, light });
   });
 
   it.each([
@@ -27,7 +27,7 @@ describe('parseLight reads', () => {
     ['4e-19 erg/s/cm^2/Å', 'fluxPerAngstrom', 4e-19],
     ['4e-19 erg s-1 cm-2 AA-1', 'fluxPerAngstrom', 4e-19],
   ])('%s as %s', (text, kind, value) => {
-    const parsed = parseLight(text);
+    const parsed = readLight(text);
     expect(parsed.ok).toBe(true);
     if (!parsed.ok) return;
     expect(parsed.light.kind).toBe(kind);
@@ -36,7 +36,7 @@ describe('parseLight reads', () => {
   });
 });
 
-describe('parseLight refuses', () => {
+describe('readLight refuses', () => {
   it.each([
     ['', 'empty'],
     ['   ', 'empty'],
@@ -45,7 +45,6 @@ describe('parseLight refuses', () => {
     ['mag', 'notAQuantity'],
     ['NaN mag', 'notAQuantity'],
     ['1e300 mag', 'notAQuantity'],
-    ['22.5 mag Vega', 'unknownUnit'],
     ['3 parsnips', 'unknownUnit'],
     ['12 uJy + 3 uJy', 'unknownUnit'],
     ['22,5 mag', 'unknownUnit'],
@@ -58,12 +57,12 @@ describe('parseLight refuses', () => {
     ['1e999 Jy', 'notPositive'],
     ['x'.repeat(81), 'notAQuantity'],
   ])('%j: %s', (text, code) => {
-    expect(parseLight(text)).toMatchObject({ ok: false, code });
+    expect(readLight(text)).toMatchObject({ ok: false, code });
   });
 
   it('anything that would be run rather than read', () => {
     for (const text of ['1 import({})', '2 evaluate("1")', '1; createUnit("x")', '3 f(x)=x', '1 cos(0) Jy']) {
-      expect(parseLight(text).ok).toBe(false);
+      expect(readLight(text).ok).toBe(false);
     }
   });
 
@@ -94,10 +93,10 @@ describe('parseLight refuses', () => {
     );
     fc.assert(
       fc.property(text, (typed) => {
-        const parsed = parseLight(typed);
+        const parsed = readLight(typed);
         if (!parsed.ok) return parsed.message.length > 0;
         const number = Object.values(parsed.light)[1] as number;
-        return Number.isFinite(number) && (parsed.light.kind === 'abMagnitude' || number > 0);
+        return Number.isFinite(number) && (parsed.light.kind.endsWith('Magnitude') || number > 0);
       }),
       { numRuns: 2000 },
     );

@@ -4,9 +4,6 @@ import { fluxOf, nameOfDimension, readUnit, type TypedFlux } from './quantity-un
 /** What a person typed for the light of a source, in one unit per kind. */
 export type TypedLight = TypedMagnitude | TypedFlux;
 
-/** What can be read without knowing a band or a calibration. */
-export type ParsedLight = Exclude<TypedLight, { kind: 'vegaMagnitude' | 'absoluteMagnitude' | 'starFormationRate' }>;
-
 /** Why a text was not read. */
 export type LightRefusalCode =
   'empty' | 'notAQuantity' | 'unitMissing' | 'unknownUnit' | 'wrongDimension' | 'notPositive';
@@ -18,7 +15,6 @@ export interface LightRefusal {
   message: string;
 }
 export type TypedLightReading = { ok: true; light: TypedLight } | LightRefusal;
-export type LightParsing = { ok: true; light: ParsedLight } | LightRefusal;
 
 /** Longer than any sensible quantity; keeps a pasted page out of the unit parser. */
 const LONGEST_TEXT = 80;
@@ -57,30 +53,6 @@ export function readLight(text: string): TypedLightReading {
   const value = numberOf(flux);
   if (!(value > 0 && value < Infinity)) return refuse('notPositive', `${typed} is not a positive amount of light.`);
   return { ok: true, light: flux };
-}
-
-/**
- * The same, for callers that know neither band nor calibration: apparent AB magnitudes, flux densities, lines. Vega and absolute
- * magnitudes and star-formation rates are refused with the reason.
- */
-export function parseLight(text: string): LightParsing {
-  const reading = readLight(text);
-  if (!reading.ok) return reading;
-  const { light } = reading;
-  switch (light.kind) {
-    case 'vegaMagnitude':
-      return refuse('unknownUnit', 'Vega magnitudes depend on the band: convert to AB with the band first.');
-    case 'absoluteMagnitude':
-      return refuse('wrongDimension', `${text.trim()} is an absolute magnitude: an apparent one is wanted here.`);
-    case 'starFormationRate':
-      return refuse('wrongDimension', `${text.trim()} is a star-formation rate: its light depends on a calibration.`);
-    case 'abMagnitude':
-    case 'fluxDensityJy':
-    case 'fluxPerAngstrom':
-    case 'lineFluxErgSCm2':
-    case 'lineLuminosityErgS':
-      return { ok: true, light };
-  }
 }
 
 function normalise(typed: string): string {

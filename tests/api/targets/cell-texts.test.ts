@@ -99,6 +99,10 @@ describe('a brightness in a cell', () => {
     ['typical galaxy', { kind: 'typical', of: 'starFormingGalaxy' }, 'typical galaxy'],
     ['Typical SN Ia', { kind: 'typical', of: 'supernovaIa', spectrum: { kind: 'supernovaIa' } }, null],
     ['24.1 J', { kind: 'apparentMagnitude', magnitude: 24.1, bandId: 'J' }, '24.10 AB (J)'],
+    ['-21.3 mag absolute', { kind: 'absoluteMagnitude', magnitude: -21.3, system: 'AB', restWavelengthNm: 150 }, null],
+    ['m = 22.1 Vega', { kind: 'apparentMagnitude', magnitude: 22.1, system: 'Vega', bandId: 'V' }, '22.10 Vega (V)'],
+    ['22.5 mag Vega', { kind: 'apparentMagnitude', magnitude: 22.5, system: 'Vega', bandId: 'V' }, null],
+    ['12 Msun yr^-1', { kind: 'starFormationRate', solarMassesPerYear: 12, tracer: 'ultraviolet' }, '12 Msun/yr'],
     ['1e42 erg/s (656.46 nm)', { kind: 'lineLuminosity', luminosityErgS: 1e42, restWavelengthNm: 656.46 }, null],
   ])('is read from %s', (text, light, shown) => {
     const parsed = lightOf(text);
@@ -150,6 +154,7 @@ describe('a brightness in a cell', () => {
     ['-8 Msun/yr', null, {}, /solarMassesPerYear/],
     ['0 Msun/yr', null, {}, /solarMassesPerYear/],
     ['22 Vega (g)', null, {}, /only used with AB/],
+    ['m = 22 Vega (g)', null, {}, /only used with AB/],
     ['typical star', null, {}, /Write it like/],
     ['2e-17 erg/s/cm^2 (J)', null, {}, /rest wavelength/],
   ])('%s over %s is refused', (text, kind, value, message) => {

@@ -6,7 +6,7 @@ import {
   type MagnitudeSystem,
 } from '@faintward/contracts/light';
 import { abMagnitudeFromFluxDensityJy, abMagnitudeFromFluxPerAngstrom, LYMAN_ALPHA_NM } from '@faintward/photometry';
-import { parseLight } from '@faintward/photometry/quantity';
+import { readLight } from '@faintward/photometry/quantity';
 import { normaliseMinus } from '@faintward/tables';
 import { apparentMagnitudeAbOf, bandWavelengthNm } from '../../engine/light.js';
 import { formatBrightness } from './brightness-format.js';
@@ -102,27 +102,57 @@ function parseApparent(text: string, typed: string, defaults: BrightnessDefaults
 function parseAbsolute(text: string, present: Light | null): BrightnessParsing | undefined {
   const absolute = ABSOLUTE.exec(text)?.groups;
   if (absolute === undefined) return undefined;
-  const before = present?.kind === 'absoluteMagnitude' ? present : undefined;
-  const band = toBand(absolute['band'] ?? absolute['bandBefore']);
   const nm = absolute['nm'] ?? (absolute['uv'] === undefined ? undefined : String(ULTRAVIOLET_NM));
-  const saysWhere = band !== undefined || nm !== undefined;
+  return absoluteMagnitude(
+    present,
+    Number(absolute['value']),
+    toSystem(absolute['system']),
+    nm === undefined ? null : Number(nm),
+    toBand(absolute['band'] ?? absolute['bandBefore']) ?? null,
+  );
+}
+
+/** Where the text does not say at which wavelength or in which band, it is where it was. */
+function absoluteMagnitude(
+  present: Light | null,
+  magnitude: number,
+  system: MagnitudeSystem | undefined,
+  restWavelengthNm: number | null,
+  restBandId: BandId | null,
+): BrightnessParsing {
+  const before = present?.kind === 'absoluteMagnitude' ? present : undefined;
+  const saysWhere = restBandId !== null || restWavelengthNm !== null;
   return checked(present, {
     kind: 'absoluteMagnitude',
-    magnitude: Number(absolute['value']),
-    system: toSystem(absolute['system']) ?? (saysWhere ? 'AB' : (before?.system ?? 'AB')),
-    restWavelengthNm: nm === undefined ? (before?.restWavelengthNm ?? ULTRAVIOLET_NM) : Number(nm),
-    restBandId: saysWhere ? (band ?? null) : (before?.restBandId ?? null),
+    magnitude,
+    system: system ?? (saysWhere ? 'AB' : (before?.system ?? 'AB')),
+    restWavelengthNm: restWavelengthNm ?? before?.restWavelengthNm ?? ULTRAVIOLET_NM,
+    restBandId: saysWhere ? restBandId : (before?.restBandId ?? null),
   });
 }
 
 function parseStarFormation(text: string, present: Light | null): BrightnessParsing | undefined {
   const rate = STAR_FORMATION.exec(text)?.groups;
   if (rate === undefined) return undefined;
-  const before = present?.kind === 'starFormationRate' ? present.tracer : 'ultraviolet';
   const { value, uv, ha, lya } = rate;
   const tracer =
-    uv !== undefined ? 'ultraviolet' : ha !== undefined ? 'hydrogenAlpha' : lya !== undefined ? 'lymanAlpha' : before;
-  return checked(present, { kind: 'starFormationRate', solarMassesPerYear: Number(value), tracer });
+    uv !== undefined
+      ? 'ultraviolet'
+      : ha !== undefined
+        ? 'hydrogenAlpha'
+        : lya !== undefined
+          ? 'lymanAlpha'
+          : undefined;
+  return starFormationRate(present, Number(value), tracer);
+}
+
+function starFormationRate(
+  present: Light | null,
+  solarMassesPerYear: number,
+  tracer?: Extract<Light, { kind: 'starFormationRate' }>['tracer'],
+): BrightnessParsing {
+  const before = present?.kind === 'starFormationRate' ? present.tracer : 'ultraviolet';
+  return checked(present, { kind: 'starFormationRate', solarMassesPerYear, tracer: tracer ?? before });
 }
 
 function parseTypical(text: string, present: Light | null): BrightnessParsing | undefined {
@@ -155,20 +185,28 @@ function parseFlux(text: string, typed: string, defaults: BrightnessDefaults): B
   if (luminosity !== undefined && Number(luminosity) > 0) {
     return lightOfLine({ kind: 'lineLuminosity', luminosityErgS: Number(luminosity) });
   }
-  const quantity = parseLight(rest);
+  const quantity = readLight(rest);
   if (!quantity.ok) return refuse(`${quantity.message} Write it like ${EXAMPLES}.`);
-  const apparent = (magnitudeAb: number) =>
+  const apparent = (magnitude: number, system: MagnitudeSystem = 'AB') =>
     checked(present, {
       kind: 'apparentMagnitude',
       // A millionth of a magnitude is far below what is ever known; more digits would only fill the cell.
-      magnitude: Number(magnitudeAb.toFixed(6)),
-      system: 'AB',
+      magnitude: Number(magnitude.toFixed(6)),
+      system,
       bandId: band,
     });
   const { light } = quantity;
   switch (light.kind) {
     case 'abMagnitude':
       return apparent(light.magnitudeAb);
+    case 'vegaMagnitude':
+      return apparent(light.magnitudeVega, 'Vega');
+    case 'absoluteMagnitude': {
+      const { magnitude, system, restWavelengthNm, restBandId } = light;
+      return absoluteMagnitude(present, magnitude, system, restWavelengthNm, restBandId);
+    }
+    case 'starFormationRate':
+      return starFormationRate(present, asTyped(light.solarMassesPerYear));
     case 'fluxDensityJy':
       return apparent(abMagnitudeFromFluxDensityJy(light.fluxDensityJy));
     case 'fluxPerAngstrom':
