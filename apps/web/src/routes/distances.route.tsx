@@ -19,12 +19,12 @@ import { CalculatorForm } from '../features/distances/components/CalculatorForm'
 import { DistanceCurves } from '../features/distances/components/DistanceCurves';
 import { DistanceSheet } from '../features/distances/components/DistanceSheet';
 import { DistancesTable } from '../features/distances/components/DistancesTable';
-import { distanceQuantities } from '../features/distances/quantities';
 import { ApiError } from '../lib/api';
 import { downloadText, toCsv } from '../lib/csv';
 import { counted } from '../lib/format';
 import { useKeptInAddress } from '../lib/useKeptInAddress';
 import { CalculatorFrame } from '../ui/calculator/CalculatorFrame';
+import { distanceQuantities } from '../ui/distanceQuantities';
 import { Note } from '../ui/Note';
 import { Loaded } from '../ui/PageStates';
 import { Panel } from '../ui/Panel';

@@ -1,5 +1,5 @@
-import Box from '@mui/material/Box';
 import type { ReactNode } from 'react';
+import { PlainTable } from './PlainTable';
 
 export interface ComparisonTableProps {
   /** What stands in the two columns: "before" and "after". */
@@ -12,12 +12,8 @@ export interface ComparisonTableProps {
 /** Two versions of one thing, value beside value. */
 export function ComparisonTable({ heads, rows, secondStands = false }: ComparisonTableProps) {
   return (
-    <Box
-      component="table"
+    <PlainTable
       sx={{
-        width: '100%',
-        borderCollapse: 'collapse',
-        fontSize: '0.875rem',
         '& th, & td': { textAlign: 'left', verticalAlign: 'top', py: 0.75, pr: 2, overflowWrap: 'anywhere' },
         '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', borderBottom: 1, borderColor: 'divider' },
         '& tbody th': { fontWeight: 400, color: 'text.secondary' },
@@ -43,6 +39,6 @@ export function ComparisonTable({ heads, rows, secondStands = false }: Compariso
           </tr>
         ))}
       </tbody>
-    </Box>
+    </PlainTable>
   );
 }

@@ -7,6 +7,7 @@ import { CosmicTimeDiscs, type PlacedDisc } from './CosmicTimeDiscs';
 import { columnsOf, discRadius, roomForDiscs, spacedMarks, timeAxis, type TimeAxis } from './cosmicTime';
 import { PlotFigure, type PlotTable } from './plot/PlotFigure';
 import { useWidth } from './plot/useWidth';
+import { PlotText } from './plot/PlotText';
 
 export interface CosmicTimePoint {
   targetId: string;
@@ -174,18 +175,9 @@ function Columns({ points, axis, lineY }: { points: readonly CosmicTimePoint[]; 
         );
       })}
       {tallest && (
-        <text
-          x={tallest.x + columnWidth / 2}
-          y={lineY - columnHeight - 4}
-          textAnchor="middle"
-          fontSize="12"
-          fill={colour.ink}
-          stroke={colour.surface}
-          strokeWidth="3"
-          paintOrder="stroke"
-        >
+        <PlotText x={tallest.x + columnWidth / 2} y={lineY - columnHeight - 4} textAnchor="middle">
           {formatNumber(most, { decimals: 0 })}
-        </text>
+        </PlotText>
       )}
     </g>
   );

@@ -1,5 +1,5 @@
 import type { DistanceRow, DistancesResponse } from '@faintward/contracts/distances';
-import { distanceQuantities, type DistanceQuantity } from './quantities';
+import { distanceQuantities, type DistanceQuantity } from '../../ui/distanceQuantities';
 
 /** What may be drawn over redshift: one quantity, several of a kind, or the angle of a given length. */
 export interface CurveChoice {
@@ -23,11 +23,10 @@ export function angleArcsec(row: Pick<DistanceRow, 'kpcPerArcsec'>, sizeKpc: num
   return row.kpcPerArcsec > 0 && sizeKpc > 0 ? sizeKpc / row.kpcPerArcsec : null;
 }
 
-const together: readonly CurveChoice[] = [
+const together: readonly Omit<CurveChoice, 'group' | 'compares'>[] = [
   {
     id: 'distances',
     title: 'Three distances',
-    group: 'Together',
     label: 'distance',
     unit: 'Mpc',
     scale: 'log',
@@ -36,12 +35,10 @@ const together: readonly CurveChoice[] = [
       { name: 'comoving', value: of('comovingDistanceMpc') },
       { name: 'angular diameter', value: of('angularDiameterDistanceMpc') },
     ],
-    compares: 'ratio',
   },
   {
     id: 'time',
     title: 'Age and lookback',
-    group: 'Together',
     label: 'time',
     unit: 'Gyr',
     scale: 'linear',
@@ -49,12 +46,10 @@ const together: readonly CurveChoice[] = [
       { name: 'age', value: of('ageGyr') },
       { name: 'lookback', value: of('lookbackTimeGyr') },
     ],
-    compares: 'ratio',
   },
   {
     id: 'dimming',
     title: 'Dimming, four conventions',
-    group: 'Together',
     label: 'dimming',
     unit: 'mag/″²',
     scale: 'linear',
@@ -63,17 +58,14 @@ const together: readonly CurveChoice[] = [
       { name: 'in energy', value: of('bolometricDimmingMag') },
       { name: 'per frequency, and in photons', value: of('perFrequencyDimmingMag') },
     ],
-    compares: 'difference',
   },
   {
     id: 'angle',
     title: 'Angle of a given length',
-    group: 'Together',
     label: 'angle',
     unit: '″',
     scale: 'log',
     lines: [{ name: 'angle', value: angleArcsec }],
-    compares: 'ratio',
   },
 ];
 
@@ -95,7 +87,7 @@ const formerIds: Record<string, string> = {
 };
 
 export const curveChoices: readonly CurveChoice[] = [
-  ...together,
+  ...together.map((choice) => ({ ...choice, group: 'Together', compares: comparesBy(choice.unit) })),
   ...distanceQuantities.map<CurveChoice>((quantity) => ({
     id: quantity.field,
     title: quantity.label,
@@ -104,9 +96,13 @@ export const curveChoices: readonly CurveChoice[] = [
     unit: quantity.unit,
     scale: logFields.includes(quantity.field) ? 'log' : 'linear',
     lines: [{ name: quantity.symbol, value: of(quantity.field) }],
-    compares: quantity.unit.startsWith('mag') ? 'difference' : 'ratio',
+    compares: comparesBy(quantity.unit),
   })),
 ];
+
+function comparesBy(unit: string): CurveChoice['compares'] {
+  return unit.startsWith('mag') ? 'difference' : 'ratio';
+}
 
 export function curveOf(id: string): CurveChoice {
   return curveChoices.find((choice) => choice.id === (formerIds[id] ?? id)) ?? curveChoices[0]!;

@@ -7,6 +7,7 @@ import { colour } from '../../theme/theme';
 import { LightBudget } from '../LightBudget';
 import { Note } from '../Note';
 import { Panel } from '../Panel';
+import { PlainTable } from '../PlainTable';
 import { Quantity } from '../Quantity';
 
 const perWords = {
@@ -178,12 +179,8 @@ function Datum({
 
 function Ledger({ rows, total }: { rows: readonly (readonly [string, number])[]; total: number }) {
   return (
-    <Box
-      component="table"
+    <PlainTable
       sx={{
-        width: '100%',
-        borderCollapse: 'collapse',
-        fontSize: '0.875rem',
         '& th': { textAlign: 'left', fontWeight: 400, py: 0.5 },
         '& td': { textAlign: 'right', whiteSpace: 'nowrap' },
         '& tfoot th, & tfoot td': { borderTop: 1, borderColor: 'text.secondary', fontWeight: 600, pt: 0.75 },
@@ -203,7 +200,7 @@ function Ledger({ rows, total }: { rows: readonly (readonly [string, number])[];
           <td>{formatDuration(total)}</td>
         </tr>
       </tfoot>
-    </Box>
+    </PlainTable>
   );
 }
 

@@ -1,9 +1,13 @@
 import Box from '@mui/material/Box';
 import Typography from '@mui/material/Typography';
 import type { ReactNode } from 'react';
+import { Quantity, type QuantityProps } from '../Quantity';
+
+/** A quantity, or what else stands under its name. */
+export type Figure = { label: string } & (QuantityProps | { node: ReactNode });
 
 /** Numbers with their names, in as many columns as fit. */
-export function Figures({ figures }: { figures: readonly { label: string; node: ReactNode }[] }) {
+export function Figures({ figures }: { figures: readonly Figure[] }) {
   return (
     <Box
       component="dl"
@@ -15,12 +19,12 @@ export function Figures({ figures }: { figures: readonly { label: string; node: 
         gridTemplateColumns: 'repeat(auto-fill, minmax(150px, 1fr))',
       }}
     >
-      {figures.map((figure) => (
-        <div key={figure.label}>
+      {figures.map(({ label, ...figure }) => (
+        <div key={label}>
           <Typography variant="body2" color="textSecondary" component="dt">
-            {figure.label}
+            {label}
           </Typography>
-          <dd>{figure.node}</dd>
+          <dd>{'node' in figure ? figure.node : <Quantity {...figure} />}</dd>
         </div>
       ))}
     </Box>

@@ -71,6 +71,54 @@ export function ImageBlock({
   );
 }
 
+/** The surface brightnesses of a profile, before seeing. */
+const surfaces = [
+  {
+    label: 'Surface brightness, mean',
+    field: 'meanSurfaceBrightnessAbMagPerArcsec2',
+    strong: true,
+    explanation: {
+      title: 'Mean surface brightness',
+      meaning: 'Within the half-light radius, before seeing.',
+      formula: '⟨µ⟩ = m + 2.5 log₁₀(2π r²)',
+      source: sersic,
+    },
+  },
+  {
+    label: 'at the half-light radius',
+    field: 'effectiveSurfaceBrightnessAbMagPerArcsec2',
+    strong: false,
+    explanation: {
+      title: 'Surface brightness at the half-light radius',
+      meaning: 'From the profile’s Sérsic index n.',
+      formula: 'µ_e = ⟨µ⟩ + 2.5 log₁₀[n eᵇ b⁻²ⁿ Γ(2n)]',
+      source: sersic,
+    },
+  },
+  {
+    label: 'in the centre',
+    field: 'centralSurfaceBrightnessAbMagPerArcsec2',
+    strong: false,
+    explanation: {
+      title: 'Central surface brightness',
+      meaning: 'Of the profile before seeing, which flattens it.',
+      formula: 'µ₀ = µ_e − 2.5 b / ln 10',
+      source: sersic,
+    },
+  },
+  {
+    label: 'The same surface without expansion',
+    field: 'restSurfaceBrightnessAbMagPerArcsec2',
+    strong: false,
+    explanation: {
+      title: 'Without expansion',
+      meaning: 'What the mean surface brightness would be if redshift dimmed nothing.',
+      formula: '⟨µ⟩ − 7.5 log₁₀(1 + z)',
+      source: dimmingSource,
+    },
+  },
+] as const;
+
 /** Radii, surface brightnesses and what the seeing makes of them. */
 function SizeFigures({ image, distances }: { image: LightImage; distances: DistanceRow }) {
   const size: Explanation = {
@@ -80,13 +128,6 @@ function SizeFigures({ image, distances }: { image: LightImage; distances: Dista
     inputs: [{ label: 'scale', value: `${formatNumber(distances.kpcPerArcsec, { decimals: 3 })} kpc/″` }],
     ...(image.source ? { source: image.source } : {}),
   };
-  const surface = (title: string, meaning: string, formula: string): Explanation => ({
-    title,
-    meaning,
-    formula,
-    source: sersic,
-  });
-  const unit = 'AB/″²';
   return (
     <>
       <Typography sx={{ mb: 1.5 }}>{regimeWords[image.regime]}</Typography>
@@ -108,88 +149,30 @@ function SizeFigures({ image, distances }: { image: LightImage; distances: Dista
           },
           {
             label: 'After seeing',
-            node: (
-              <Quantity
-                value={image.halfLightRadiusAfterSeeingArcsec}
-                unit="″"
-                decimals={3}
-                strong
-                explanation={{
-                  title: 'Half-light radius in this seeing',
-                  formula: '√(r² + (FWHM/2)²)',
-                  inputs: [
-                    {
-                      label: 'seeing at this wavelength, FWHM',
-                      value: `${formatNumber(image.seeingFwhmArcsec, { decimals: 2 })}″`,
-                    },
-                  ],
-                  source: 'common practice; within 4 % for disks, 14 % for steep profiles',
-                }}
-              />
-            ),
+            value: image.halfLightRadiusAfterSeeingArcsec,
+            unit: '″',
+            decimals: 3,
+            strong: true,
+            explanation: {
+              title: 'Half-light radius in this seeing',
+              formula: '√(r² + (FWHM/2)²)',
+              inputs: [
+                {
+                  label: 'seeing at this wavelength, FWHM',
+                  value: `${formatNumber(image.seeingFwhmArcsec, { decimals: 2 })}″`,
+                },
+              ],
+              source: 'common practice; within 4 % for disks, 14 % for steep profiles',
+            },
           },
-          {
-            label: 'Surface brightness, mean',
-            node: (
-              <Quantity
-                value={image.meanSurfaceBrightnessAbMagPerArcsec2}
-                unit={unit}
-                decimals={2}
-                strong
-                explanation={surface(
-                  'Mean surface brightness',
-                  'Within the half-light radius, before seeing.',
-                  '⟨µ⟩ = m + 2.5 log₁₀(2π r²)',
-                )}
-              />
-            ),
-          },
-          {
-            label: 'at the half-light radius',
-            node: (
-              <Quantity
-                value={image.effectiveSurfaceBrightnessAbMagPerArcsec2}
-                unit={unit}
-                decimals={2}
-                explanation={surface(
-                  'Surface brightness at the half-light radius',
-                  'From the profile’s Sérsic index n.',
-                  'µ_e = ⟨µ⟩ + 2.5 log₁₀[n eᵇ b⁻²ⁿ Γ(2n)]',
-                )}
-              />
-            ),
-          },
-          {
-            label: 'in the centre',
-            node: (
-              <Quantity
-                value={image.centralSurfaceBrightnessAbMagPerArcsec2}
-                unit={unit}
-                decimals={2}
-                explanation={surface(
-                  'Central surface brightness',
-                  'Of the profile before seeing, which flattens it.',
-                  'µ₀ = µ_e − 2.5 b / ln 10',
-                )}
-              />
-            ),
-          },
-          {
-            label: 'The same surface without expansion',
-            node: (
-              <Quantity
-                value={image.restSurfaceBrightnessAbMagPerArcsec2}
-                unit={unit}
-                decimals={2}
-                explanation={{
-                  title: 'Without expansion',
-                  meaning: 'What the mean surface brightness would be if redshift dimmed nothing.',
-                  formula: '⟨µ⟩ − 7.5 log₁₀(1 + z)',
-                  source: dimmingSource,
-                }}
-              />
-            ),
-          },
+          ...surfaces.map(({ label, field, strong, explanation }) => ({
+            label,
+            value: image[field],
+            unit: 'AB/″²',
+            decimals: 2,
+            strong,
+            explanation,
+          })),
         ]}
       />
     </>

@@ -5,13 +5,54 @@ import { formatNumber } from '../../lib/format';
 import { Explained, Quantity } from '../Quantity';
 import { RedshiftValue } from '../RedshiftValue';
 import { keyExplanations } from './explanations';
-import { Figures } from './Figures';
+import { Figures, type Figure } from './Figures';
 
 /** The answer in one line of numbers: how bright, how far, how long ago. */
 export function KeyFigures({ report }: { report: LightReport }) {
   const explained = keyExplanations(report);
   const { ledger, distances, uncertainty } = report;
   const spread = uncertainty?.magnitudeAb;
+  const { absoluteMagnitudeAb: absolute, unlensedMagnitudeAb: unlensed } = report;
+  const magnitude = { unit: 'AB', decimals: 2 };
+  const figures: Figure[] = [
+    ...(absolute === null
+      ? []
+      : [{ label: 'Absolute magnitude', value: absolute, ...magnitude, explanation: explained.absolute }]),
+    ...(unlensed === null
+      ? []
+      : [{ label: 'Without the lens', value: unlensed, ...magnitude, explanation: explained.unlensed }]),
+    {
+      label: 'Distance modulus',
+      value: distances.distanceModulusMag,
+      unit: 'mag',
+      decimals: 4,
+      explanation: explained.modulus,
+      unknownReason: 'It has no value at z = 0.',
+    },
+    {
+      label: 'Luminosity distance',
+      value: distances.luminosityDistanceMpc / 1000,
+      unit: 'Gpc',
+      decimals: 3,
+      explanation: explained.luminosityDistance,
+    },
+    { label: 'Scale', value: distances.kpcPerArcsec, unit: 'kpc/″', decimals: 3, explanation: explained.scale },
+    {
+      label: 'Age then',
+      value: distances.ageGyr,
+      unit: 'Gyr',
+      decimals: 3,
+      explanation: explained.age,
+      unknownReason: 'This universe has no beginning.',
+    },
+    {
+      label: 'Lookback time',
+      value: distances.lookbackTimeGyr,
+      unit: 'Gyr',
+      decimals: 3,
+      explanation: explained.lookback,
+    },
+  ];
   return (
     <>
       {ledger && (
@@ -43,86 +84,7 @@ export function KeyFigures({ report }: { report: LightReport }) {
           )}
         </Box>
       )}
-      <Figures
-        figures={[
-          { label: 'Redshift', node: <RedshiftValue redshift={report.redshift} /> },
-          ...(report.absoluteMagnitudeAb === null
-            ? []
-            : [
-                {
-                  label: 'Absolute magnitude',
-                  node: (
-                    <Quantity
-                      value={report.absoluteMagnitudeAb}
-                      unit="AB"
-                      decimals={2}
-                      explanation={explained.absolute}
-                    />
-                  ),
-                },
-              ]),
-          ...(report.unlensedMagnitudeAb === null
-            ? []
-            : [
-                {
-                  label: 'Without the lens',
-                  node: (
-                    <Quantity
-                      value={report.unlensedMagnitudeAb}
-                      unit="AB"
-                      decimals={2}
-                      explanation={explained.unlensed}
-                    />
-                  ),
-                },
-              ]),
-          {
-            label: 'Distance modulus',
-            node: (
-              <Quantity
-                value={distances.distanceModulusMag}
-                unit="mag"
-                decimals={4}
-                explanation={explained.modulus}
-                unknownReason="It has no value at z = 0."
-              />
-            ),
-          },
-          {
-            label: 'Luminosity distance',
-            node: (
-              <Quantity
-                value={distances.luminosityDistanceMpc / 1000}
-                unit="Gpc"
-                decimals={3}
-                explanation={explained.luminosityDistance}
-              />
-            ),
-          },
-          {
-            label: 'Scale',
-            node: <Quantity value={distances.kpcPerArcsec} unit="kpc/″" decimals={3} explanation={explained.scale} />,
-          },
-          {
-            label: 'Age then',
-            node: (
-              <Quantity
-                value={distances.ageGyr}
-                unit="Gyr"
-                decimals={3}
-                explanation={explained.age}
-                unknownReason="This universe has no beginning."
-              />
-            ),
-          },
-          {
-            label: 'Lookback time',
-            node: (
-              <Quantity value={distances.lookbackTimeGyr} unit="Gyr" decimals={3} explanation={explained.lookback} />
-            ),
-          },
-        ]}
-      />
+      <Figures figures={[{ label: 'Redshift', node: <RedshiftValue redshift={report.redshift} /> }, ...figures]} />
     </>
   );
 }

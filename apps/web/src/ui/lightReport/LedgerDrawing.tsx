@@ -2,6 +2,7 @@ import { useId } from 'react';
 import { formatNumber } from '../../lib/format';
 import { colour } from '../../theme/theme';
 import type { LedgerLayout } from './ledger';
+import { PlotText } from '../plot/PlotText';
 
 /** Bars, axis and links of a ledger. Text of the rows stands over it, where it can be reached and wrapped. */
 export function LedgerDrawing({
@@ -88,17 +89,9 @@ export function LedgerDrawing({
               <BreakMark key={x} x={x} top={barTop - 3} height={barHeight + 6} />
             ))}
             {!isNarrow && row.kind !== 'start' && (
-              <text
-                x={left + size + 7}
-                y={barTop + barHeight / 2 + 4}
-                fontSize="12.5"
-                fill={colour.ink}
-                stroke={colour.surface}
-                strokeWidth="3"
-                paintOrder="stroke"
-              >
+              <PlotText x={left + size + 7} y={barTop + barHeight / 2 + 4} fontSize="12.5">
                 {formatNumber(row.deltaMag, { decimals: 2, signed: true })}
-              </text>
+              </PlotText>
             )}
           </g>
         );

@@ -7,6 +7,7 @@ import { AxisBelow, AxisBeside } from '../plot/Axes';
 import { intoLanes, textWidth } from '../plot/labels';
 import { makeScale, type Scale } from '../plot/scale';
 import { abMagnitude, fluxUnit, largestDifference, magnitudeDomain, wavelengthTicks } from './spectrum';
+import { PlotText } from '../plot/PlotText';
 
 export const spectrumMargin = { left: 62, right: 10 } as const;
 const plotHeight = 230;
@@ -226,18 +227,9 @@ function clampLabel(x: number, text: string, left: number, right: number): numbe
 
 function CurveLabel({ text, x, y, anchor }: { text: string; x: number; y: number; anchor: 'middle' | 'end' }) {
   return (
-    <text
-      x={x}
-      y={y}
-      textAnchor={anchor}
-      fontSize="12"
-      fill={colour.ink}
-      stroke={colour.surface}
-      strokeWidth="3"
-      paintOrder="stroke"
-    >
+    <PlotText x={x} y={y} textAnchor={anchor}>
       {text}
-    </text>
+    </PlotText>
   );
 }
 
@@ -270,16 +262,12 @@ function LineMark({
           {...(line.place === 'window' ? {} : { strokeDasharray: '1 4' })}
         />
       ))}
-      <text
+      <PlotText
         x={labelX}
         y={labelY}
         textAnchor="middle"
-        fontSize="12"
         fill={comesThrough ? colour.ink : colour.inkSoft}
         fontStyle={comesThrough ? 'normal' : 'italic'}
-        stroke={colour.surface}
-        strokeWidth="3"
-        paintOrder="stroke"
       >
         {label}
         <title>
@@ -290,7 +278,7 @@ function LineMark({
             )
             .join('; ')}
         </title>
-      </text>
+      </PlotText>
     </g>
   );
 }

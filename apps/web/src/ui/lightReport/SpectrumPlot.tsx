@@ -1,12 +1,11 @@
 import type { BandId } from '@faintward/contracts/light';
 import type { BandLight, LightReport, LightSpectrum, ObservedLine } from '@faintward/contracts/light-report';
 import Box from '@mui/material/Box';
-import ToggleButton from '@mui/material/ToggleButton';
-import ToggleButtonGroup from '@mui/material/ToggleButtonGroup';
 import { useMemo, useState } from 'react';
 import { formatNumber } from '../../lib/format';
 import { PlotFigure, type PlotTable } from '../plot/PlotFigure';
 import { makeScale } from '../plot/scale';
+import { Switch, type SwitchOptions } from '../plot/Switch';
 import { useWidth } from '../plot/useWidth';
 import { BandSpans } from './BandSpans';
 import { bandState } from './darkness';
@@ -22,6 +21,21 @@ export interface SpectrumPlotProps {
   bandId: BandId | null;
   onBandChange: (bandId: BandId) => void;
 }
+
+const rangeOptions: SwitchOptions<RangeId> = [
+  ['bands', 'Bands'],
+  ['optical', 'Optical'],
+  ['nearInfrared', 'Near infrared'],
+  ['all', 'All'],
+];
+const quantityOptions = [
+  ['flux', 'flux'],
+  ['magnitude', 'AB'],
+] as const;
+const kindOptions = [
+  ['log', 'log λ'],
+  ['linear', 'linear λ'],
+] as const;
 
 /** The light as it arrives above the atmosphere, with bands, lines and what the atmosphere lets through. */
 export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBandChange }: SpectrumPlotProps) {
@@ -66,32 +80,10 @@ export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBan
             label="Wavelengths shown"
             value={shownRange}
             onChange={setRangeId}
-            options={[
-              ['bands', 'Bands'],
-              ['optical', 'Optical'],
-              ['nearInfrared', 'Near infrared'],
-              ['all', 'All'],
-              ...(bandId ? [['band', `Around ${bandId}`] as const] : []),
-            ]}
+            options={bandId ? [...rangeOptions, ['band', `Around ${bandId}`]] : rangeOptions}
           />
-          <Switch
-            label="Flux axis"
-            value={quantity}
-            onChange={setQuantity}
-            options={[
-              ['flux', 'flux'],
-              ['magnitude', 'AB'],
-            ]}
-          />
-          <Switch
-            label="Wavelength axis"
-            value={kind}
-            onChange={setKind}
-            options={[
-              ['log', 'log λ'],
-              ['linear', 'linear λ'],
-            ]}
-          />
+          <Switch label="Flux axis" value={quantity} onChange={setQuantity} options={quantityOptions} />
+          <Switch label="Wavelength axis" value={kind} onChange={setKind} options={kindOptions} />
         </>
       }
     >
@@ -119,39 +111,6 @@ export function SpectrumPlot({ spectrum, bands, lines, atmosphere, bandId, onBan
         />
       </Box>
     </PlotFigure>
-  );
-}
-
-/** A choice of one among few, beside a picture. */
-export function Switch<Value extends string>({
-  label,
-  value,
-  options,
-  onChange,
-}: {
-  label: string;
-  value: Value;
-  options: readonly (readonly [Value, string])[];
-  onChange: (value: Value) => void;
-}) {
-  return (
-    <ToggleButtonGroup
-      exclusive
-      size="small"
-      aria-label={label}
-      value={value}
-      onChange={(_event, next: Value | null) => next !== null && onChange(next)}
-      sx={{
-        flexWrap: 'wrap',
-        '& .MuiToggleButton-root': { textTransform: 'none', py: 0.25, px: 1.25, fontSize: '0.8125rem' },
-      }}
-    >
-      {options.map(([option, text]) => (
-        <ToggleButton key={option} value={option}>
-          {text}
-        </ToggleButton>
-      ))}
-    </ToggleButtonGroup>
   );
 }
 

@@ -15,6 +15,7 @@ import {
   shownRange,
   uncertaintySentences,
 } from './uncertainty';
+import { PlotText } from '../plot/PlotText';
 
 /** How well the redshift is known, and what that makes of lines and magnitudes. */
 export function UncertaintyBlock({
@@ -91,19 +92,14 @@ export function UncertaintyBlock({
                 />
                 {peaks.length > 1 &&
                   peaks.map((peak) => (
-                    <text
+                    <PlotText
                       key={peak.redshift}
                       x={x(peak.redshift)}
                       y={y(densityAt(shown, peak.redshift)) - 8}
                       textAnchor="middle"
-                      fontSize="12"
-                      fill={colour.ink}
-                      stroke={colour.surface}
-                      strokeWidth="3"
-                      paintOrder="stroke"
                     >
                       {percentText(peak.probability)}
-                    </text>
+                    </PlotText>
                   ))}
               </>
             );
@@ -141,13 +137,13 @@ function PercentileLabels({ labels, y }: { labels: readonly { at: number; text: 
     ...(high.at - middle.at > room ? [{ ...high, anchor: 'start' as const, shift: 4 }] : []),
   ];
   return (
-    <g fontSize="12" fill={colour.ink} stroke={colour.surface} strokeWidth="3" paintOrder="stroke">
+    <>
       {shown.map((label) => (
-        <text key={label.text} x={label.at + label.shift} y={y} textAnchor={label.anchor}>
+        <PlotText key={label.text} x={label.at + label.shift} y={y} textAnchor={label.anchor}>
           {label.text}
-        </text>
+        </PlotText>
       ))}
-    </g>
+    </>
   );
 }
 

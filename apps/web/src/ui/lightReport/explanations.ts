@@ -1,8 +1,7 @@
 import type { LightReport } from '@faintward/contracts/light-report';
 import { formatNumber } from '../../lib/format';
 import type { Explanation } from '../Quantity';
-
-const hogg = (section: number) => `Hogg 1999, arXiv:astro-ph/9905116, section ${section}`;
+import { distanceQuantity, explainDistance, type DistanceQuantity } from '../distanceQuantities';
 
 /** What the key figures of a report are, with the inputs of this report. */
 export function keyExplanations(
@@ -11,10 +10,13 @@ export function keyExplanations(
   'apparent' | 'unlensed' | 'absolute' | 'modulus' | 'luminosityDistance' | 'scale' | 'age' | 'lookback',
   Explanation
 > {
+  const redshift = formatNumber(report.redshift, { decimals: 4 });
   const inputs = [
-    { label: 'redshift z', value: formatNumber(report.redshift, { decimals: 4 }) },
+    { label: 'redshift z', value: redshift },
     { label: 'cosmology', value: report.cosmologyTitle },
   ];
+  const distance = (field: DistanceQuantity['field']) =>
+    explainDistance(distanceQuantity(field), redshift, report.cosmologyTitle);
   const band = report.ledger?.label ?? '';
   return {
     apparent: {
@@ -39,39 +41,11 @@ export function keyExplanations(
       inputs,
       source: 'Hogg, Baldry, Blanton & Eisenstein 2002, astro-ph/0210394',
     },
-    modulus: {
-      title: 'Distance modulus',
-      formula: 'DM = 5 log₁₀(D_L / 10 pc)',
-      inputs,
-      source: hogg(8),
-    },
-    luminosityDistance: {
-      title: 'Luminosity distance',
-      meaning: 'The distance that makes bolometric flux fall as the inverse square.',
-      formula: 'D_L = (1 + z) D_M',
-      inputs,
-      source: hogg(7),
-    },
-    scale: {
-      title: 'Scale',
-      meaning: 'Proper kiloparsec that one arcsecond spans at the source.',
-      formula: 's = D_A · π / 648 000',
-      inputs,
-      source: hogg(6),
-    },
-    age: {
-      title: 'Age of the Universe then',
-      formula: 't = (1 / H₀) ∫ dz′ / [(1 + z′) E(z′)], from z to infinity',
-      inputs,
-      source: hogg(10),
-    },
-    lookback: {
-      title: 'Lookback time',
-      meaning: 'How long the light has travelled.',
-      formula: 't_L = (1 / H₀) ∫₀ᶻ dz′ / [(1 + z′) E(z′)]',
-      inputs,
-      source: hogg(10),
-    },
+    modulus: distance('distanceModulusMag'),
+    luminosityDistance: distance('luminosityDistanceMpc'),
+    scale: distance('kpcPerArcsec'),
+    age: distance('ageGyr'),
+    lookback: distance('lookbackTimeGyr'),
   };
 }
 

@@ -5,6 +5,7 @@ import { spreadLabels, textWidth } from './labels';
 import { PlotFigure, type PlotTable } from './PlotFigure';
 import { extent, makeScale, type Scale } from './scale';
 import { useWidth } from './useWidth';
+import { PlotText } from './PlotText';
 
 export type { PlotAxis } from './Axes';
 
@@ -128,17 +129,9 @@ export function PlotFrame({
                 {...stroke}
               />
             )}
-            <text
-              x={end.x + leader}
-              y={labelY}
-              fontSize="12"
-              fill={colour.ink}
-              stroke={colour.surface}
-              strokeWidth="3"
-              paintOrder="stroke"
-            >
+            <PlotText x={end.x + leader} y={labelY}>
               {text}
-            </text>
+            </PlotText>
           </g>
         ))}
         {children?.({ x: xScale, y: yScale, width, height })}

@@ -4,6 +4,7 @@ import Typography from '@mui/material/Typography';
 import type { ReactNode } from 'react';
 import { formatNumber } from '../../../lib/format';
 import { colour } from '../../../theme/theme';
+import { PlainTable } from '../../../ui/PlainTable';
 import { PlainText } from '../../../ui/PlainText';
 import { Countdown, TimeDisplay } from '../../../ui/TimeDisplay';
 
@@ -45,13 +46,9 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
           <PlainText text={call.callText} />
         </Box>
       )}
-      <Box
-        component="table"
+      <PlainTable
         sx={{
-          width: '100%',
           mt: 2,
-          borderCollapse: 'collapse',
-          fontSize: '0.875rem',
           '& th, & td': { borderBottom: 1, borderColor: 'divider', py: 0.9, px: 1.25, textAlign: 'right' },
           '& thead th:first-of-type, & tbody th': { pl: 0, textAlign: 'left' },
           '& thead th': { color: 'text.secondary', fontSize: '0.8125rem' },
@@ -98,7 +95,7 @@ export function CallSheet({ call, action }: { call: Semester; action?: ReactNode
             </tr>
           ))}
         </tbody>
-      </Box>
+      </PlainTable>
       {action && <Box sx={{ mt: 2, display: 'flex', gap: 1.25, flexWrap: 'wrap' }}>{action}</Box>}
     </Box>
   );

@@ -2,8 +2,9 @@ import type { DistanceRow } from '@faintward/contracts/distances';
 import Box from '@mui/material/Box';
 import { Fragment } from 'react';
 import { formatNumber } from '../../../lib/format';
+import { distanceQuantities, explainDistance } from '../../../ui/distanceQuantities';
+import { PlainTable } from '../../../ui/PlainTable';
 import { Explained, Quantity } from '../../../ui/Quantity';
-import { distanceQuantities } from '../quantities';
 
 /** Everything about one redshift, in the chosen model and in the one beside it. */
 export function DistanceSheet({
@@ -19,12 +20,8 @@ export function DistanceSheet({
 }) {
   const groups = [...new Set(distanceQuantities.map((quantity) => quantity.group))];
   return (
-    <Box
-      component="table"
+    <PlainTable
       sx={{
-        width: '100%',
-        borderCollapse: 'collapse',
-        fontSize: '0.875rem',
         '& td, & th': { borderBottom: 1, borderColor: 'divider', py: 0.7, px: 1, textAlign: 'right' },
         '& th:first-of-type': { textAlign: 'left', pl: 0, fontWeight: 400 },
         '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', fontWeight: 600, verticalAlign: 'bottom' },
@@ -68,16 +65,7 @@ export function DistanceSheet({
                   <tr key={quantity.field}>
                     <th scope="row">
                       <Explained
-                        explanation={{
-                          title: quantity.label,
-                          meaning: quantity.meaning,
-                          formula: quantity.formula,
-                          inputs: [
-                            { label: 'redshift z', value: String(row.redshift).replace('-', '−') },
-                            { label: 'cosmology', value: modelTitle },
-                          ],
-                          source: quantity.source,
-                        }}
+                        explanation={explainDistance(quantity, String(row.redshift).replace('-', '−'), modelTitle)}
                       >
                         {quantity.label}
                       </Explained>
@@ -101,7 +89,7 @@ export function DistanceSheet({
           </Fragment>
         ))}
       </tbody>
-    </Box>
+    </PlainTable>
   );
 }
 

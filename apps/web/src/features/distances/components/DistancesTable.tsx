@@ -3,7 +3,7 @@ import { formatNumber } from '../../../lib/format';
 import { DataTable, type TableColumn } from '../../../ui/DataTable';
 import { EmptyState } from '../../../ui/EmptyState';
 import { RedshiftValue } from '../../../ui/RedshiftValue';
-import { distanceQuantities } from '../quantities';
+import { distanceQuantities } from '../../../ui/distanceQuantities';
 
 interface NumberedRow extends DistanceRow {
   number: number;

@@ -1,45 +1,38 @@
 import type { DistancesResponse } from '@faintward/contracts/distances';
 import type { Target } from '@faintward/contracts/targets';
 import Box from '@mui/material/Box';
-import type { ReactNode } from 'react';
 import { formatNumber } from '../../../lib/format';
 import type { QueryState } from '../../../ui/PageStates';
+import { PlainTable } from '../../../ui/PlainTable';
+import { distanceQuantity, explainDistance } from '../../../ui/distanceQuantities';
 import { Explained, Quantity } from '../../../ui/Quantity';
-import { targetQuantities } from '../quantities';
 
-/** A quiet table: a name on the left, its values on the right. */
-function Values({ children }: { children: ReactNode }) {
-  return (
-    <Box
-      component="table"
-      sx={{
-        width: '100%',
-        borderCollapse: 'collapse',
-        fontSize: '0.875rem',
-        '& td, & th': { borderBottom: 1, borderColor: 'divider', py: 0.6, px: 1, textAlign: 'right' },
-        '& tr:last-of-type td, & tbody tr:last-of-type th': { borderBottom: 0 },
-        '& tbody th': { textAlign: 'left', pl: 0, fontWeight: 400 },
-        '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', fontWeight: 600 },
-        '& .beside': { bgcolor: 'faintward.raised' },
-        '& .soft': { color: 'text.secondary' },
-      }}
-    >
-      {children}
-    </Box>
-  );
-}
-
-const redshiftInput = (target: Target) => ({
-  label: 'redshift z',
-  value: formatNumber(target.redshift, { significant: 6 }),
-});
+/** Of all that follows from a redshift, what a target's sheet shows. */
+const shown = (
+  [
+    'luminosityDistanceMpc',
+    'distanceModulusMag',
+    'angularDiameterDistanceMpc',
+    'kpcPerArcsec',
+    'ageGyr',
+    'lookbackTimeGyr',
+  ] as const
+).map((field) => ({ ...distanceQuantity(field), field }));
 
 /** Distances, scale and times in the proposal's cosmology, beside the conventional one. */
 export function DistanceFigures({ target, beside }: { target: Target; beside: QueryState<DistancesResponse> }) {
   const { computed } = target;
   const conventional = beside.data?.rows[0];
   return (
-    <Values>
+    <PlainTable
+      sx={{
+        '& td, & th': { borderBottom: 1, borderColor: 'divider', py: 0.6, px: 1, textAlign: 'right' },
+        '& tr:last-of-type td, & tbody tr:last-of-type th': { borderBottom: 0 },
+        '& tbody th': { textAlign: 'left', pl: 0, fontWeight: 400 },
+        '& thead th': { color: 'text.secondary', fontSize: '0.8125rem', fontWeight: 600 },
+        '& .beside': { bgcolor: 'faintward.raised' },
+      }}
+    >
       <thead>
         <tr>
           <td />
@@ -50,7 +43,7 @@ export function DistanceFigures({ target, beside }: { target: Target; beside: Qu
         </tr>
       </thead>
       <tbody>
-        {targetQuantities.map((quantity) => (
+        {shown.map((quantity) => (
           <tr key={quantity.field}>
             <th scope="row">{quantity.label}</th>
             <td>
@@ -59,13 +52,11 @@ export function DistanceFigures({ target, beside }: { target: Target; beside: Qu
                 unit={quantity.unit}
                 strong
                 {...quantity.format}
-                explanation={{
-                  title: quantity.label,
-                  meaning: quantity.meaning,
-                  formula: quantity.formula,
-                  inputs: [redshiftInput(target), { label: 'cosmology', value: computed.cosmologyId }],
-                  source: quantity.source,
-                }}
+                explanation={explainDistance(
+                  quantity,
+                  formatNumber(target.redshift, { significant: 6 }),
+                  computed.cosmologyId,
+                )}
               />
             </td>
             <td className="beside">
@@ -74,7 +65,7 @@ export function DistanceFigures({ target, beside }: { target: Target; beside: Qu
           </tr>
         ))}
       </tbody>
-    </Values>
+    </PlainTable>
   );
 }
 
@@ -83,12 +74,8 @@ export function HoursUp({ target }: { target: Target }) {
   const { upHoursByMonth } = target.computed;
   const longest = Math.max(...upHoursByMonth.map((month) => month.hoursPerNight), 1);
   return (
-    <Box
-      component="table"
+    <PlainTable
       sx={{
-        width: '100%',
-        borderCollapse: 'collapse',
-        fontSize: '0.875rem',
         '& th': { textAlign: 'left', fontWeight: 400, width: 90, py: 0.25 },
         '& .hours': { textAlign: 'right', width: 96, whiteSpace: 'nowrap' },
       }}
@@ -130,6 +117,6 @@ export function HoursUp({ target }: { target: Target }) {
           </tr>
         ))}
       </tbody>
-    </Box>
+    </PlainTable>
   );
 }

@@ -1,7 +1,8 @@
 import type { DistanceRow } from '@faintward/contracts/distances';
-import type { NumberFormat } from '../../lib/format';
+import type { NumberFormat } from '../lib/format';
+import type { Explanation } from './Quantity';
 
-/** One quantity of the calculator: how it is named, shown and explained. */
+/** One quantity that follows from redshift and cosmology: how it is named, shown and explained. */
 export interface DistanceQuantity {
   field: Exclude<keyof DistanceRow, 'redshift'>;
   label: string;
@@ -184,3 +185,25 @@ export const distanceQuantities: readonly DistanceQuantity[] = [
     source: tolman,
   },
 ];
+
+export function distanceQuantity(field: DistanceQuantity['field']): DistanceQuantity {
+  return distanceQuantities.find((quantity) => quantity.field === field)!;
+}
+
+/** What a quantity is, at this redshift in this cosmology. */
+export function explainDistance(
+  { label, meaning, formula, source }: DistanceQuantity,
+  redshift: string,
+  cosmology: string,
+): Explanation {
+  return {
+    title: label,
+    meaning,
+    formula,
+    inputs: [
+      { label: 'redshift z', value: redshift },
+      { label: 'cosmology', value: cosmology },
+    ],
+    source,
+  };
+}
