@@ -142,6 +142,23 @@ describe('what the choice of cosmology changes in a proposal', () => {
     ).toBeVisible();
     expect(screen.getByText(/a cosmology changes no exposure time/)).toBeVisible();
   });
+  it('says why it takes some seconds, and then what failed', async () => {
+    let refuse = () => {};
+    const refused = new Promise<void>((resolve) => (refuse = resolve));
+    answerWith({
+      ...server,
+      [`GET ${base}/cosmologies`]: async () => {
+        await refused;
+        return problem(500, 'internal', { errorId: 'e-9' });
+      },
+    });
+    renderRoute(`${base}/cosmologies`);
+    expect(await screen.findByText(/which takes some seconds/, {}, wait)).toBeVisible();
+    refuse();
+    expect(await screen.findByText(/The comparison of cosmologies could not be loaded/, {}, wait)).toHaveTextContent(
+      'e-9',
+    );
+  });
   it('leads to the targets while there are none', async () => {
     answerWith({
       ...server,

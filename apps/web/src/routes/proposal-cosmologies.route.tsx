@@ -7,14 +7,23 @@ import { cosmologyQueries } from '../features/cosmologies/api/cosmologies';
 import { CosmologiesView } from '../features/cosmologies/components/CosmologiesView';
 import { useProposal } from '../features/proposals/components/useProposal';
 import { EmptyState } from '../ui/EmptyState';
-import { Loaded } from '../ui/PageStates';
+import { Loaded, SkeletonBlock } from '../ui/PageStates';
 
 /** How much of a proposal hangs on its cosmology. */
 export function Component() {
   const { proposalId } = useProposal();
   const query = useQuery(cosmologyQueries.ofProposal(proposalId));
   return (
-    <Loaded query={query} what="The comparison of cosmologies">
+    <Loaded
+      query={query}
+      what="The comparison of cosmologies"
+      skeleton={
+        <SkeletonBlock
+          label="The comparison of cosmologies: loading"
+          note="Comparing: every target and observation is computed in each cosmology, which takes some seconds."
+        />
+      }
+    >
       {(comparison) =>
         comparison.targetCount === 0 ? (
           <EmptyState

@@ -2,6 +2,7 @@ import Box from '@mui/material/Box';
 import Button from '@mui/material/Button';
 import LinearProgress from '@mui/material/LinearProgress';
 import Skeleton from '@mui/material/Skeleton';
+import Typography from '@mui/material/Typography';
 import type { ReactNode } from 'react';
 import { Link as RouterLink } from 'react-router-dom';
 import { ApiError } from '../lib/api';
@@ -64,9 +65,19 @@ export function isMissing(error: unknown): boolean {
   return error instanceof ApiError && (error.status === 404 || error.status === 403);
 }
 
-export function SkeletonBlock({ label, lines = 6 }: { label: string; lines?: number }) {
+export function SkeletonBlock({
+  label,
+  lines = 6,
+  note,
+}: {
+  label: string;
+  lines?: number;
+  /** Why it may take seconds. */
+  note?: string;
+}) {
   return (
     <Box role="status" aria-label={label}>
+      {note && <Typography color="textSecondary">{note}</Typography>}
       {Array.from({ length: lines }, (_, index) => (
         <Skeleton
           key={index}

@@ -157,11 +157,23 @@ describe('the form that describes light', () => {
     });
     renderPart(<Holder first={{ light: 'lineFlux', flux: '2e-17' }} />);
     const line = await screen.findByRole('combobox', { name: 'Line' });
-    expect(line).toHaveTextContent('Lyα, 121.567 nm');
+    expect(screen.getByText('Loading the lines…')).toBeVisible();
+    await waitFor(() => expect(line).toHaveTextContent('Lyα, 121.567 nm'));
     expect(screen.getByText('observed at 987.12 nm')).toBeVisible();
     await userEvent.click(line);
     await userEvent.click(await screen.findByRole('option', { name: 'Hα, 656.460 nm' }));
     expect(light()).toMatchObject({ restWavelengthNm: 656.46 });
+  });
+
+  it('takes a wavelength where the lines could not be loaded, and says that they could not', async () => {
+    answerWith({ 'POST /light': problem(422, 'refused') });
+    renderPart(<Holder first={{ light: 'lineFlux', flux: '2e-17' }} />);
+    expect(await screen.findByText('The lines could not be loaded: give the wavelength.')).toBeVisible();
+    expect(screen.getByRole('combobox', { name: 'Line' })).toHaveAttribute('aria-disabled', 'true');
+    const field = quantity('Rest wavelength');
+    await userEvent.clear(field);
+    await userEvent.type(field, '500.824');
+    expect(light()).toMatchObject({ restWavelengthNm: 500.824 });
   });
 
   it('fills in a suggestion only when asked, says that it is one, and puts back what stood there', async () => {

@@ -20,36 +20,39 @@ export function LineFields({ redshift, ...props }: DraftProps<LightDraft> & { re
   const chosen = lines.data?.find(
     (line) => typeof wavelengthNm === 'number' && Math.abs(line.restWavelengthNm - wavelengthNm) < sameLineNm,
   );
+  const observedText =
+    chosen && redshift !== undefined && !lines.isPlaceholderData
+      ? `observed at ${formatNumber(chosen.observedWavelengthNm, { significant: 5 })} nm`
+      : undefined;
+  const helperText = lines.error
+    ? 'The lines could not be loaded: give the wavelength.'
+    : lines.data
+      ? observedText
+      : 'Loading the lines…';
   return (
     <>
-      {lines.data && (
-        <TextField
-          select
-          label="Line"
-          value={chosen?.lineId ?? ''}
-          disabled={disabled}
-          onChange={(event) => {
-            const line = lines.data.find((one) => one.lineId === event.target.value);
-            if (line) onChange({ restLine: numberText(line.restWavelengthNm) });
-          }}
-          helperText={
-            chosen && redshift !== undefined
-              ? `observed at ${formatNumber(chosen.observedWavelengthNm, { significant: 5 })} nm`
-              : undefined
-          }
-          sx={{ gridColumn: '1 / -1' }}
-          slotProps={{ select: { displayEmpty: true }, inputLabel: { shrink: true } }}
-        >
-          <MenuItem value="" disabled={chosen !== undefined}>
-            another, by its wavelength
+      <TextField
+        select
+        label="Line"
+        value={chosen?.lineId ?? ''}
+        disabled={disabled || !lines.data}
+        onChange={(event) => {
+          const line = lines.data?.find((one) => one.lineId === event.target.value);
+          if (line) onChange({ restLine: numberText(line.restWavelengthNm) });
+        }}
+        helperText={helperText}
+        sx={{ gridColumn: '1 / -1' }}
+        slotProps={{ select: { displayEmpty: true }, inputLabel: { shrink: true } }}
+      >
+        <MenuItem value="" disabled={chosen !== undefined}>
+          another, by its wavelength
+        </MenuItem>
+        {lines.data?.map((line) => (
+          <MenuItem key={line.lineId} value={line.lineId}>
+            {line.label}, {formatNumber(line.restWavelengthNm, { significant: 6 })} nm
           </MenuItem>
-          {lines.data.map((line) => (
-            <MenuItem key={line.lineId} value={line.lineId}>
-              {line.label}, {formatNumber(line.restWavelengthNm, { significant: 6 })} nm
-            </MenuItem>
-          ))}
-        </TextField>
-      )}
+        ))}
+      </TextField>
       <DraftField {...props} name="restLine" label="Rest wavelength" unit="nm" hint="in vacuum" />
       <DraftField {...props} name="width" label="Velocity width" unit="km/s" hint="full width at half maximum" />
       <DraftChoice

@@ -115,9 +115,11 @@ function Uploaded(props: SpectrumFieldsProps) {
         hint={
           spectra.error
             ? 'The spectra of this proposal could not be loaded.'
-            : spectra.data && rows.length === 0
-              ? 'This proposal has none yet.'
-              : undefined
+            : !spectra.data
+              ? 'Loading the spectra of this proposal…'
+              : rows.length === 0
+                ? 'This proposal has none yet.'
+                : undefined
         }
         options={[['', 'choose one'], ...chosen, ...options]}
       />

@@ -28,13 +28,17 @@ export function TableTextField({
   const [fileName, setFileName] = useState<string>();
   const [fileProblem, setFileProblem] = useState<string>();
   const isLong = value.length > longestShown;
+  const [isReading, setIsReading] = useState(false);
   const choose = async (file: File) => {
+    setIsReading(true);
     try {
       onChange(await file.text(), file.name);
       setFileName(file.name);
       setFileProblem(undefined);
     } catch (problem) {
       setFileProblem(`${file.name} could not be read${problem instanceof Error ? `: ${problem.message}` : '.'}`);
+    } finally {
+      setIsReading(false);
     }
   };
   return (
@@ -58,7 +62,7 @@ export function TableTextField({
           inputLabel: { shrink: true },
         }}
       />
-      <Button disabled={disabled} onClick={() => input.current?.click()}>
+      <Button disabled={disabled} loading={isReading} onClick={() => input.current?.click()}>
         Choose a file
       </Button>
       {isLong && (

@@ -9,7 +9,7 @@ import {
   type LightReadingRequest,
   type NewSpectrum,
 } from '@faintward/contracts/light-report';
-import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+import { keepPreviousData, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
 import { api } from '../../lib/api';
 
@@ -44,6 +44,8 @@ export const lightQueries = {
         return report.lines;
       },
       staleTime: Infinity,
+      // The choice stays while only where its lines arrive is asked anew.
+      placeholderData: keepPreviousData,
     }),
   /** Under the proposal's key, because a changed target changes which spectra are used. */
   spectra: (proposalId: string) =>
