@@ -26,7 +26,7 @@ export function describeInstant(instant: Date, siteTimeZone?: string, localTimeZ
   return `${utc} UTC${siteTimeZone ? beside(siteTimeZone, 'site') : ''}${beside(localTimeZone, 'your time')}`;
 }
 
-export function browserTimeZone(): string {
+function browserTimeZone(): string {
   return Intl.DateTimeFormat().resolvedOptions().timeZone || 'UTC';
 }
 

@@ -6,7 +6,7 @@ export function channels(hex: string): [red: number, green: number, blue: number
 }
 
 /** Relative luminance as WCAG 2.2 defines it, 0 (black) to 1 (white). */
-export function relativeLuminance(hex: string): number {
+function relativeLuminance(hex: string): number {
   const [red, green, blue] = channels(hex).map((channel) => {
     const value = channel / 255;
     return value <= 0.04045 ? value / 12.92 : ((value + 0.055) / 1.055) ** 2.4;

@@ -2,7 +2,7 @@ import { CosmologyParameters, CosmologyPresetId, type CosmologyChoice } from '@f
 import { MAX_REDSHIFT_COUNT } from '@faintward/contracts/distances';
 import { parseNumber } from '../../ui/form/parseNumber';
 
-export const parameterNames = [
+const parameterNames = [
   'hubbleConstantKmSMpc',
   'omegaMatter',
   'omegaDarkEnergy',

@@ -1,7 +1,7 @@
 import { MAX_IMPORT_CHARACTERS } from '@faintward/contracts/targets';
 
 /** Largest file that is read at all: what the server accepts as a table. */
-export const maxTableBytes = MAX_IMPORT_CHARACTERS;
+const maxTableBytes = MAX_IMPORT_CHARACTERS;
 
 export type TableFile = { ok: true; text: string } | { ok: false; message: string };
 

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 
 /** What a field says when its schema has no words of its own. */
-export function wordsForIssue(issue: z.core.$ZodRawIssue): string | undefined {
+function wordsForIssue(issue: z.core.$ZodRawIssue): string | undefined {
   if (issue.code === 'invalid_type') {
     if (issue.input === null || issue.input === undefined || issue.input === '') return 'Please fill this in.';
     return issue.expected === 'number' || issue.expected === 'int' ? 'A number is needed here.' : undefined;

@@ -100,7 +100,7 @@ const containedWords: Record<Contained, string> = {
 };
 
 /** What a tick, or its absence, does to this value. */
-export function consequenceOf(draft: LightDraft, what: Contained): string {
+function consequenceOf(draft: LightDraft, what: Contained): string {
   const isIn = contains(draft, what);
   if (what === 'lensing') {
     const factor = draft.magnification.trim();

@@ -14,7 +14,7 @@ import { lightQueries } from './lightQueries';
 import { provenanceWords } from './lightWords';
 
 /** What a suggestion would set of a draft. Empty: it is only for reading. */
-export function suggestedChange(row: LightSuggestion): Partial<LightDraft> {
+function suggestedChange(row: LightSuggestion): Partial<LightDraft> {
   return {
     ...(row.light ? lightPart(row.light) : {}),
     ...(row.extent ? extentPart(row.extent) : {}),

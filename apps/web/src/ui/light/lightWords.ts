@@ -27,7 +27,7 @@ export const spectrumOptions: Options<LightDraft['spectrum']> = [
   ['uploaded', 'a spectrum of ours…'],
 ];
 
-export const cosmologyTitles: Record<CosmologyPresetId, string> = {
+const cosmologyTitles: Record<CosmologyPresetId, string> = {
   planck18: 'Planck 2018',
   planck15: 'Planck 2015',
   wmap9: 'WMAP nine-year',

@@ -34,11 +34,6 @@ export function abMagnitude(fluxJy: number): number | null {
   return fluxJy > 0 ? -2.5 * Math.log10(fluxJy / 3631) : null;
 }
 
-export interface CurvePoint {
-  x: number;
-  y: number | null;
-}
-
 /**
  * The part of a curve between two wavelengths, with its ends interpolated so that it reaches the edges of the plot. Nothing
  * is made up beyond the first and last wavelength given.

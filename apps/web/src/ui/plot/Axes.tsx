@@ -13,7 +13,7 @@ export interface PlotAxis {
   ticks?: readonly number[];
 }
 
-export function tickText(value: number): string {
+function tickText(value: number): string {
   if (value !== 0 && (Math.abs(value) >= 1e5 || Math.abs(value) < 1e-3)) return formatNumber(value, { significant: 1 });
   return String(value).replace('-', '−');
 }

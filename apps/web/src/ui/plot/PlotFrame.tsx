@@ -32,8 +32,6 @@ export interface PlotFrameProps {
   fileName: string;
   /** One quiet line under the title. */
   note?: ReactNode;
-  /** Switches of the picture. */
-  actions?: ReactNode;
   /** Further marks, drawn with the plot's scales. */
   children?: (scales: { x: Scale; y: Scale; width: number; height: number }) => ReactNode;
 }
@@ -44,7 +42,6 @@ const margin = { top: 12, right: 16, bottom: 46, left: 62 };
 export function PlotFrame({
   title,
   note,
-  actions,
   description,
   x,
   y,
@@ -98,15 +95,7 @@ export function PlotFrame({
   const table = toTable(x, y, series);
 
   return (
-    <PlotFigure
-      title={title}
-      note={note}
-      description={description}
-      table={table}
-      fileName={fileName}
-      actions={actions}
-      box={box}
-    >
+    <PlotFigure title={title} note={note} description={description} table={table} fileName={fileName} box={box}>
       <svg
         width={width}
         height={height}

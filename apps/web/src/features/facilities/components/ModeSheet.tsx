@@ -5,7 +5,7 @@ import { formatDuration, formatNumber } from '../../../lib/format';
 type Line = readonly [label: string, value: string];
 
 /** A mode's configuration as lines of label and value with unit. */
-export function configurationLines(configuration: ModeConfiguration): Line[] {
+function configurationLines(configuration: ModeConfiguration): Line[] {
   const { detector, exposureLimits: limits, overheads, skyAbMagPerArcsec2: sky } = configuration;
   const number = (value: number, significant = 4) =>
     formatNumber(Number(value.toPrecision(significant)), { significant });

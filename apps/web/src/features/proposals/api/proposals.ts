@@ -18,10 +18,8 @@ import type { TeamAccess } from '@faintward/contracts/permissions';
 import { PeopleSearchResult } from '@faintward/contracts/people';
 import { CheckReport, SubmissionList, SubmissionSummary } from '@faintward/contracts/submissions';
 import { keepPreviousData, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
-import { z } from 'zod';
+import type { z } from 'zod';
 import { api } from '../../../lib/api';
-
-const nothing = z.unknown();
 
 /** Everything about one proposal hangs below `one(id)`, so that a change can make all of it fresh again. */
 export const proposalQueries = {
@@ -116,18 +114,6 @@ export function usePatchProposal(proposalId: string) {
     },
     // Somebody was faster: the next try must start from what is stored now.
     onError: () => client.invalidateQueries({ queryKey: proposalQueries.detail(proposalId).queryKey }),
-  });
-}
-
-export function useDeleteProposal(proposalId: string) {
-  const client = useQueryClient();
-  return useMutation({
-    mutationFn: (version: number) =>
-      api({ method: 'DELETE', path: `/proposals/${proposalId}`, ifMatch: version, schema: nothing }),
-    onSuccess: () => {
-      client.removeQueries({ queryKey: proposalQueries.one(proposalId) });
-      return client.invalidateQueries({ queryKey: [...proposalQueries.all(), 'list'] });
-    },
   });
 }
 

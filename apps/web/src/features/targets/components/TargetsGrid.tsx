@@ -34,7 +34,7 @@ export interface TargetsGridProps {
 }
 
 /** Rows and columns, not one value. */
-export function isBlock(text: string): boolean {
+function isBlock(text: string): boolean {
   return /[\t\n\r]/.test(text.trim());
 }
 

@@ -19,7 +19,7 @@ export interface SourceDraft {
   redshift: RedshiftDraft;
 }
 
-export function toSourceDraft(target: Target): SourceDraft {
+function toSourceDraft(target: Target): SourceDraft {
   return {
     light: toLightDraft(target.light, target.extent),
     redshift: toRedshiftDraft(target.redshift, target.redshiftKind, target.redshiftUncertainty),
@@ -27,7 +27,7 @@ export function toSourceDraft(target: Target): SourceDraft {
 }
 
 /** What a draft changes of a target, in the contract's terms; undefined while something in it cannot be read. */
-export function toSourcePatch(draft: SourceDraft, target: Target): TargetPatch | undefined {
+function toSourcePatch(draft: SourceDraft, target: Target): TargetPatch | undefined {
   const light = readLightDraft(draft.light);
   const redshift = readRedshiftDraft(draft.redshift);
   if (!light.ok || !redshift.ok) return undefined;
